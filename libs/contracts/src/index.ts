@@ -1,1 +1,13 @@
-export {};
+export * from './errors';
+export * from './roles';
+export * from './states';
+export * from './jobs';
+export * from './format';
+export * from './wording';
+export * from './api/common';
+export * from './api/people';
+export * from './api/lines';
+export * from './api/intakes';
+export * from './api/lots';
+export * from './api/holds';
+export * from './api/plans';

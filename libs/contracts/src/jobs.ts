@@ -1,0 +1,53 @@
+/**
+ * The queues, their jobs and payloads. Payloads carry ids only; what is owed stands in the database (`owed_jobs`, `outbox`),
+ * so that a queue may be lost with its process and is filled again from there.
+ */
+export const WORK_QUEUE = 'work';
+export const MAIL_QUEUE = 'mail';
+
+export const JOBS = {
+  /** Read a stored workbook, stage its readings and report what was recognised. */
+  readIntake: 'read-intake',
+  /** Store a confirmed intake's readings, judge its channels, hold and mail. */
+  scoreIntake: 'score-intake',
+  /** Judge channels again after a break, an approval, a decision or an exclusion. */
+  scoreChannels: 'score-channels',
+  /** Work out the default plan of a channel from its readings and propose it. */
+  proposePlan: 'propose-plan',
+} as const;
+export type JobName = (typeof JOBS)[keyof typeof JOBS];
+
+/** Payload of a job on WORK_QUEUE: the row of `owed_jobs` that it does. */
+export interface OwedJobPayload {
+  owedJobId: number;
+}
+
+/** What a row of `owed_jobs` is about, by its name. */
+export interface OwedJobSubject {
+  'read-intake': { intakeId: number };
+  'score-intake': { intakeId: number };
+  'score-channels': { channelIds: number[]; reason: string };
+  'propose-plan': { planId: number };
+}
+
+/** Payload of the one job on MAIL_QUEUE. */
+export interface MailJobPayload {
+  outboxId: number;
+}
+export const SEND_MAIL_JOB = 'send-mail';
+
+/** Attempts by the queue itself; beyond them the timer queues the owed row again. Job ids are `owed-<id>` and `mail-<id>`. */
+export const JOB_OPTIONS = { attempts: 3, backoff: { type: 'exponential', delay: 2_000 } } as const;
+
+export const PROGRESS_STAGES = ['reading', 'storing', 'judging', 'recording', 'done', 'failed'] as const;
+
+/** One line of GET intakes/:id/events. */
+export interface IntakeProgress {
+  intakeId: number;
+  stage: (typeof PROGRESS_STAGES)[number];
+  rowsRead: number;
+  channelsScored: number;
+  channelsTotal: number;
+  /** Whole sentence for the person who waits. */
+  sentence: string;
+}
