@@ -1,0 +1,25 @@
+import type { Knex } from 'knex';
+import * as plantsAndPeople from './migrations/20261201090000_create_plants_and_people';
+import * as channelsAndSpecifications from './migrations/20261201090100_create_channels_and_specifications';
+import * as intakesAndReadings from './migrations/20261201090200_create_intakes_and_readings';
+import * as plansAndVerdicts from './migrations/20261201090300_create_plans_and_verdicts';
+import * as holdsAndDecisions from './migrations/20261201090400_create_holds_and_decisions';
+import * as outboxAndAudit from './migrations/20261201090500_create_outbox_and_audit';
+
+/** Every migration by name, oldest first. They are listed here, not read from a folder, so that they go into the bundle. */
+const MIGRATIONS: Record<string, Knex.Migration> = {
+  '20261201090000_create_plants_and_people': plantsAndPeople,
+  '20261201090100_create_channels_and_specifications': channelsAndSpecifications,
+  '20261201090200_create_intakes_and_readings': intakesAndReadings,
+  '20261201090300_create_plans_and_verdicts': plansAndVerdicts,
+  '20261201090400_create_holds_and_decisions': holdsAndDecisions,
+  '20261201090500_create_outbox_and_audit': outboxAndAudit,
+};
+
+export const migrationNames = Object.keys(MIGRATIONS);
+
+export const migrationSource: Knex.MigrationSource<string> = {
+  getMigrations: () => Promise.resolve(migrationNames),
+  getMigrationName: (name) => name,
+  getMigration: (name) => Promise.resolve(MIGRATIONS[name]),
+};
