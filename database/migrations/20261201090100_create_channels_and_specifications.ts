@@ -45,6 +45,7 @@ export async function up(knex: Knex): Promise<void> {
       approved_at timestamptz not null,
       constraint specifications_product_fkey foreign key (plant_id, product_id) references products (plant_id, id),
       constraint specifications_characteristic_fkey foreign key (plant_id, characteristic_id) references characteristics (plant_id, id),
+      constraint specifications_plant_id_key unique (plant_id, id),
       constraint specifications_version_key unique (product_id, characteristic_id, version),
       constraint specifications_limits_check check (lower < upper and (lower is not null or upper is not null)),
       constraint specifications_second_person check (approved_by <> proposed_by),

@@ -134,10 +134,11 @@ export async function up(knex: Knex): Promise<void> {
       maximum double precision,
       count_below integer not null default 0,
       count_above integer not null default 0,
-      specification_id bigint constraint lot_channels_specification_fkey references specifications,
+      specification_id bigint,
       blocks jsonb,
       primary key (channel_id, lot_id),
       constraint lot_channels_key unique (plant_id, channel_id, lot_id),
+      constraint lot_channels_specification_fkey foreign key (plant_id, specification_id) references specifications (plant_id, id),
       constraint lot_channels_channel_fkey foreign key (plant_id, line_id, channel_id) references channels (plant_id, line_id, id),
       constraint lot_channels_lot_fkey foreign key (plant_id, line_id, lot_id) references lots (plant_id, line_id, id)
     );

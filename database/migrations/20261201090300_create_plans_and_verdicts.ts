@@ -74,8 +74,8 @@ export async function up(knex: Knex): Promise<void> {
       constraint plan_revisions_second_person check (approved_by <> proposed_by),
       constraint plan_revisions_frozen_check check (state in ('draft', 'retired') or (parameters is not null and proposed_by is not null and proposed_at is not null)),
       constraint plan_revisions_approved_check check (state <> 'in_force' or (approved_by is not null and approved_at is not null)),
-      constraint plan_revisions_parameters_check check (parameters is null or parameters ?&
-        array['shortestPeriodSeconds', 'effectivePeriodSeconds', 'windowSeconds', 'components', 'centre', 'scale', 'limit', 'referenceLotCount', 'constant', 'signals'])
+      constraint plan_revisions_parameters_check check (parameters is null or jsonb_exists_all(parameters,
+        array['shortestPeriodSeconds', 'effectivePeriodSeconds', 'windowSeconds', 'components', 'centre', 'scale', 'limit', 'referenceLotCount', 'constant', 'signals']))
     );
     create unique index plan_revisions_one_in_force on plan_revisions (channel_id) where state = 'in_force';
     create unique index plan_revisions_one_pending on plan_revisions (channel_id) where state in ('draft', 'proposed');
@@ -155,7 +155,7 @@ export async function up(knex: Knex): Promise<void> {
       baseline double precision,
       control_low double precision,
       control_high double precision,
-      specification_id bigint constraint verdicts_specification_fkey references specifications,
+      specification_id bigint,
       specification_state text not null constraint verdicts_specification_state_check
         check (specification_state in ('inside_specification', 'inside_within_guard_band', 'outside_specification', 'no_specification')),
       constant_state text not null constraint verdicts_constant_state_check
@@ -165,6 +165,7 @@ export async function up(knex: Knex): Promise<void> {
       constant_score double precision,
       judged_at timestamptz not null,
       constraint verdicts_lot_channel_fkey foreign key (plant_id, channel_id, lot_id) references lot_channels (plant_id, channel_id, lot_id),
+      constraint verdicts_specification_fkey foreign key (plant_id, specification_id) references specifications (plant_id, id),
       constraint verdicts_fit_fkey foreign key (plant_id, channel_id, fit_id) references fits (plant_id, channel_id, id),
       constraint verdicts_key unique (plant_id, channel_id, lot_id, id),
       constraint verdicts_plant_id_key unique (plant_id, id),
