@@ -4,7 +4,7 @@ import reactHooks from 'eslint-plugin-react-hooks';
 import tseslint from 'typescript-eslint';
 
 // Direction: baseline <- control <- scoring <- data <- api, worker. contracts imports nothing of ours.
-const ALL_LIBS = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail'];
+const ALL_LIBS = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail', 'platform'];
 const FRAMEWORKS = ['@nestjs/*', 'react', 'react-*', 'bull', 'ioredis', 'ioredis-mock', 'express'];
 const SQL = ['knex', 'pg', 'pg-copy-streams'];
 
@@ -14,7 +14,10 @@ function layer(files, allowed, outside, { isPure = false } = {}) {
   return {
     files,
     rules: {
-      'no-restricted-imports': ['error', { patterns: [{ group, message: 'This layer may not import that (see DEVELOPERS.md, Layers).' }] }],
+      'no-restricted-imports': [
+        'error',
+        { patterns: [{ group, message: 'This layer may not import that (see DEVELOPERS.md, Layers).' }] },
+      ],
       ...(isPure && {
         'no-restricted-properties': [
           'error',
@@ -35,7 +38,9 @@ export default tseslint.config(
     plugins: { 'import-x': importX },
     languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname } },
     settings: {
-      'import-x/resolver-next': [createTypeScriptImportResolver({ project: ['tsconfig.json', 'apps/web/tsconfig.json'] })],
+      'import-x/resolver-next': [
+        createTypeScriptImportResolver({ project: ['tsconfig.json', 'apps/web/tsconfig.json'] }),
+      ],
     },
     rules: {
       'import-x/no-cycle': 'error',
@@ -45,15 +50,28 @@ export default tseslint.config(
     },
   },
   layer(['libs/baseline/**'], ['baseline'], [...FRAMEWORKS, ...SQL, 'exceljs', 'nodemailer'], { isPure: true }),
-  layer(['libs/control/**'], ['baseline', 'control'], [...FRAMEWORKS, ...SQL, 'exceljs', 'nodemailer'], { isPure: true }),
-  layer(['libs/scoring/**'], ['baseline', 'control', 'scoring'], [...FRAMEWORKS, ...SQL, 'exceljs', 'nodemailer'], { isPure: true }),
+  layer(['libs/control/**'], ['baseline', 'control'], [...FRAMEWORKS, ...SQL, 'exceljs', 'nodemailer'], {
+    isPure: true,
+  }),
+  layer(['libs/scoring/**'], ['baseline', 'control', 'scoring'], [...FRAMEWORKS, ...SQL, 'exceljs', 'nodemailer'], {
+    isPure: true,
+  }),
   layer(['libs/workbook/**'], ['workbook', 'contracts'], [...FRAMEWORKS, ...SQL, 'nodemailer'], { isPure: true }),
   layer(['libs/contracts/**'], ['contracts'], [...FRAMEWORKS, ...SQL, 'exceljs', 'nodemailer'], { isPure: true }),
   layer(['libs/mail/**'], ['mail', 'contracts'], [...FRAMEWORKS, ...SQL, 'exceljs']),
-  layer(['libs/data/**'], ['data', 'contracts', 'scoring', 'control', 'baseline'], [...FRAMEWORKS, 'exceljs', 'nodemailer']),
+  layer(
+    ['libs/data/**'],
+    ['data', 'contracts', 'scoring', 'control', 'baseline'],
+    [...FRAMEWORKS, 'exceljs', 'nodemailer'],
+  ),
+  layer(['libs/platform/**'], ['contracts', 'data', 'mail', 'platform'], ['exceljs']),
   layer(['apps/api/**', 'apps/worker/**', 'apps/mail-catcher/**'], ALL_LIBS, SQL),
   layer(['apps/web/**'], ['contracts', 'baseline', 'control'], [...SQL, '@nestjs/*', 'bull', 'exceljs', 'nodemailer']),
-  { files: ['apps/web/**/*.{ts,tsx}'], plugins: { 'react-hooks': reactHooks }, rules: reactHooks.configs.recommended.rules },
+  {
+    files: ['apps/web/**/*.{ts,tsx}'],
+    plugins: { 'react-hooks': reactHooks },
+    rules: reactHooks.configs.recommended.rules,
+  },
   {
     files: ['**/*.spec.ts', 'test/**'],
     rules: {

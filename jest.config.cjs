@@ -1,6 +1,6 @@
 /** Five projects, one a tier: unit beside the code, data on real PostgreSQL, api over HTTP, reliability, browser. */
 const swc = {
-  '^.+\\.(t|j)sx?$': [
+  '^.+\\.(t|j|mj)sx?$': [
     '@swc/jest',
     {
       jsc: {
@@ -13,21 +13,29 @@ const swc = {
     },
   ],
 };
-const libs = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail'];
+const libs = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail', 'platform'];
 const base = {
   rootDir: __dirname,
+  roots: ['apps', 'database', 'libs', 'test', 'tools'].map((folder) => `<rootDir>/${folder}`),
   testEnvironment: 'node',
   transform: swc,
   moduleNameMapper: Object.fromEntries(libs.map((name) => [`^@app/${name}$`, `<rootDir>/libs/${name}/src/index.ts`])),
 };
 const project = (displayName, testMatch, extra = {}) => ({ ...base, displayName, testMatch, ...extra });
-const database = { globalSetup: '<rootDir>/test/support/global-setup.cjs', globalTeardown: '<rootDir>/test/support/global-teardown.cjs' };
+const database = {
+  globalSetup: '<rootDir>/test/support/global-setup.cjs',
+  globalTeardown: '<rootDir>/test/support/global-teardown.cjs',
+};
 
 module.exports = {
   projects: [
-    project('unit', ['<rootDir>/libs/**/*.spec.ts', '<rootDir>/apps/**/*.spec.{ts,tsx}', '<rootDir>/tools/**/*.spec.ts'], {
-      testPathIgnorePatterns: ['/node_modules/', '<rootDir>/libs/data/'],
-    }),
+    project(
+      'unit',
+      ['<rootDir>/libs/**/*.spec.ts', '<rootDir>/apps/**/*.spec.{ts,tsx}', '<rootDir>/tools/**/*.spec.ts'],
+      {
+        testPathIgnorePatterns: ['/node_modules/', '<rootDir>/libs/data/'],
+      },
+    ),
     project('data', ['<rootDir>/libs/data/**/*.spec.ts', '<rootDir>/test/migrations/**/*.spec.ts'], database),
     project('api', ['<rootDir>/test/api/**/*.spec.ts'], database),
     project('reliability', ['<rootDir>/test/reliability/**/*.spec.ts'], database),

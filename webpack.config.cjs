@@ -6,7 +6,7 @@ const fs = require('node:fs');
 const path = require('node:path');
 const nodeExternals = require('webpack-node-externals');
 
-const libs = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail'];
+const libs = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail', 'platform'];
 
 /** Every apps/<app>/src/main.ts, every *.thread.ts and every tools/<tool>/main.ts is an entry. */
 function entries() {
@@ -34,12 +34,18 @@ module.exports = {
   target: 'node20',
   devtool: 'source-map',
   entry: entries(),
-  output: { path: path.join(__dirname, 'dist'), filename: '[name].js', libraryTarget: 'commonjs2' },
+  output: {
+    path: path.resolve(__dirname, process.env.EBBLINE_DIST || 'dist'),
+    filename: '[name].js',
+    libraryTarget: 'commonjs2',
+  },
   externals: [nodeExternals()],
   node: { __dirname: false, __filename: false },
   resolve: {
     extensions: ['.ts', '.js', '.json'],
-    alias: Object.fromEntries(libs.map((name) => [`@app/${name}$`, path.join(__dirname, 'libs', name, 'src', 'index.ts')])),
+    alias: Object.fromEntries(
+      libs.map((name) => [`@app/${name}$`, path.join(__dirname, 'libs', name, 'src', 'index.ts')]),
+    ),
   },
   module: {
     rules: [
@@ -59,6 +65,10 @@ module.exports = {
       },
     ],
   },
-  cache: { type: 'filesystem', cacheDirectory: path.join(__dirname, 'node_modules', '.cache', 'webpack') },
+  cache: {
+    type: 'filesystem',
+    cacheDirectory: path.join(__dirname, 'node_modules', '.cache', 'webpack'),
+    buildDependencies: { config: [__filename] },
+  },
   stats: 'errors-warnings',
 };

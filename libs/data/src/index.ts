@@ -1,1 +1,3 @@
-export {};
+export { createDatabase, type Database, type Queryable, type Transaction } from './database';
+export * from './audit';
+export * from './owed-jobs';

@@ -1,0 +1,5 @@
+export * from './config';
+export * from './tokens';
+export * from './platform.module';
+export * from './project-root';
+export * from './queue/queue.module';
