@@ -79,5 +79,5 @@ function toCell(value: unknown, column: TableColumn, zone: IANAZone): string | n
     const at = value instanceof Date ? value.getTime() : Number(value);
     return Number.isFinite(at) ? new Date(at + zone.offset(at) * 60_000) : null;
   }
-  return escapeFormula(typeof value === 'string' ? value : String(value as number));
+  return escapeFormula(typeof value === 'string' ? value : JSON.stringify(value));
 }

@@ -1,0 +1,112 @@
+import { crc32, createInflateRaw } from 'node:zlib';
+import { fromBufferPromise, type Entry, type ZipFile } from 'yauzl';
+import type { ReadLimits } from '../limits';
+import { WorkbookRefusedError } from '../refused';
+import { PASSWORD } from './identify';
+
+const CHUNK = 64 * 1024;
+/** Below this a part may be as compressible as it likes. */
+const RATIO_COUNTS_FROM = 8 * 1024 * 1024;
+const MAX_ENTRIES = 10_000;
+const mebibytes = (bytes: number): string => `${Math.round(bytes / 1024 / 1024)} MB`;
+
+export const corrupt = (cause?: unknown): WorkbookRefusedError =>
+  new WorkbookRefusedError(
+    'corrupt',
+    'The file is damaged: it begins like an Excel workbook but cannot be read to its end. Open it in Excel, save it under a new name and upload that.',
+    { cause },
+  );
+
+/** A zip archive in memory whose parts are inflated in pieces, each part at most once, all of them counted. */
+export class Archive {
+  private inflated = 0;
+
+  private constructor(
+    private readonly bytes: Buffer,
+    private readonly zip: ZipFile,
+    private readonly entries: Map<string, Entry>,
+    private readonly limits: ReadLimits,
+  ) {}
+
+  /** @throws WorkbookRefusedError too-large, corrupt, password-protected */
+  static async open(bytes: Buffer, limits: ReadLimits): Promise<Archive> {
+    if (bytes.length > limits.maxBytes) {
+      throw new WorkbookRefusedError(
+        'too-large',
+        `The file has ${mebibytes(bytes.length)}; at most ${mebibytes(limits.maxBytes)} can be read. Split it, for example into a workbook a week.`,
+      );
+    }
+    const entries = new Map<string, Entry>();
+    let zip: ZipFile;
+    try {
+      zip = await fromBufferPromise(bytes);
+      for await (const entry of zip.eachEntry()) {
+        if (entries.size >= MAX_ENTRIES) throw new Error('too many entries');
+        entries.set(entry.fileName.toLowerCase(), entry);
+      }
+    } catch (error) {
+      throw corrupt(error);
+    }
+    if ([...entries.values()].some((entry) => entry.isEncrypted())) {
+      throw new WorkbookRefusedError('password-protected', PASSWORD);
+    }
+    return new Archive(bytes, zip, entries, limits);
+  }
+
+  has(name: string): boolean {
+    return this.entries.has(name.toLowerCase());
+  }
+
+  names(): string[] {
+    return [...this.entries.keys()];
+  }
+
+  /**
+   * The part's bytes, inflated piece by piece as they are asked for.
+   *
+   * @throws WorkbookRefusedError corrupt (missing, broken, wrong CRC-32), decompression-bomb
+   */
+  async *read(name: string): AsyncGenerator<Buffer> {
+    const entry = this.entries.get(name.toLowerCase());
+    if (!entry) throw corrupt(new Error(`part ${name} is missing`));
+    let size = 0;
+    let sum = 0;
+    try {
+      for await (const piece of this.pieces(entry)) {
+        size += piece.length;
+        this.count(size, piece.length, entry);
+        sum = crc32(piece, sum);
+        yield piece;
+      }
+    } catch (error) {
+      throw error instanceof WorkbookRefusedError ? error : corrupt(error);
+    }
+    if (sum !== entry.crc32 || size !== entry.uncompressedSize) throw corrupt(new Error(`part ${name} is damaged`));
+  }
+
+  private async *pieces(entry: Entry): AsyncGenerator<Buffer> {
+    const { fileDataStart } = await this.zip.readLocalFileHeaderPromise(entry, { minimal: true });
+    const packed = this.bytes.subarray(fileDataStart, fileDataStart + entry.compressedSize);
+    if (entry.compressionMethod === 0) {
+      for (let at = 0; at < packed.length; at += CHUNK) yield packed.subarray(at, at + CHUNK);
+    } else if (entry.compressionMethod === 8) {
+      const inflate = createInflateRaw({ chunkSize: CHUNK });
+      inflate.end(packed);
+      yield* inflate as AsyncIterable<Buffer>;
+    } else {
+      throw new Error(`compression method ${entry.compressionMethod}`);
+    }
+  }
+
+  private count(size: number, added: number, entry: Entry): void {
+    this.inflated += added;
+    const ratio = size / Math.max(1, entry.compressedSize);
+    const isBomb = size > RATIO_COUNTS_FROM && ratio > this.limits.maxCompressionRatio;
+    if (isBomb || this.inflated > this.limits.maxInflatedBytes) {
+      throw new WorkbookRefusedError(
+        'decompression-bomb',
+        `The file has ${mebibytes(this.bytes.length) === '0 MB' ? 'under 1 MB' : mebibytes(this.bytes.length)} but unpacks to more than ${mebibytes(size)}, which no ordinary workbook does, so reading stopped. Delete unused rows and columns, save it and upload it again.`,
+      );
+    }
+  }
+}
