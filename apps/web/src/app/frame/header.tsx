@@ -1,0 +1,30 @@
+import { Link } from 'react-router-dom';
+import { useSession } from '../../shared/session/session';
+import { Action } from '../../shared/ui/action';
+import { urls } from '../urls';
+import { PlantChoice } from './plant-choice';
+import { ThemeChoice } from './theme-choice';
+
+export function Header() {
+  const { me, signOut } = useSession();
+  return (
+    <header className="header">
+      <Link className="header__name" to={urls.desk()} aria-label="Ebbline, to the desk">
+        Ebbline
+      </Link>
+      <div className="header__right">
+        {me.mailCatcherUrl !== null && (
+          <a className="header__mail" href={me.mailCatcherUrl} target="_blank" rel="noreferrer">
+            Read caught mail
+          </a>
+        )}
+        <PlantChoice />
+        <span className="header__person">{me.name}</span>
+        <ThemeChoice />
+        <Action kind="plain" onPress={() => void signOut()}>
+          Sign out
+        </Action>
+      </div>
+    </header>
+  );
+}

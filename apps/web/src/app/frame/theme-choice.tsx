@@ -1,0 +1,17 @@
+import { useTheme } from '../../shared/theme/theme';
+
+/** Day or night. Until somebody chooses, the system does. */
+export function ThemeChoice() {
+  const { shown, choose } = useTheme();
+  const next = shown === 'dark' ? 'light' : 'dark';
+  return (
+    <button
+      type="button"
+      className="action action--plain"
+      onClick={() => choose(next)}
+      aria-label={`Switch to the ${next} theme`}
+    >
+      {next === 'dark' ? 'Night' : 'Day'}
+    </button>
+  );
+}

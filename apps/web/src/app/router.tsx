@@ -1,0 +1,39 @@
+import { createBrowserRouter, type RouteObject } from 'react-router-dom';
+import { DeskPage } from '../features/desk/pages/desk-page';
+import { SignInPage } from '../features/sign-in/pages/sign-in-page';
+import { ErrorPage } from './error-page';
+import { NotFoundPage } from './not-found-page';
+import { PlanRedirect } from './plan-redirect';
+import { SignedIn } from './signed-in';
+import { routes } from './urls';
+
+const page = (path: string, lazy: RouteObject['lazy']): RouteObject => ({ path, lazy, errorElement: <ErrorPage /> });
+
+export const router = createBrowserRouter([
+  { path: routes.signIn, element: <SignInPage />, errorElement: <ErrorPage /> },
+  {
+    element: <SignedIn />,
+    errorElement: <ErrorPage />,
+    children: [
+      { path: routes.desk, element: <DeskPage />, errorElement: <ErrorPage /> },
+      page(routes.lots, async () => ({ Component: (await import('../features/lots/pages/lots-page')).LotsPage })),
+      page(routes.lot, async () => ({ Component: (await import('../features/lots/pages/lot-page')).LotPage })),
+      page(routes.channels, async () => ({
+        Component: (await import('../features/channels/pages/channels-page')).ChannelsPage,
+      })),
+      page(routes.channel, async () => ({
+        Component: (await import('../features/channel-record/pages/channel-record-page')).ChannelRecordPage,
+      })),
+      page(routes.hold, async () => ({ Component: (await import('../features/hold/pages/hold-page')).HoldPage })),
+      page(routes.intakes, async () => ({
+        Component: (await import('../features/intake/pages/intakes-page')).IntakesPage,
+      })),
+      page(routes.intake, async () => ({
+        Component: (await import('../features/intake/pages/intake-page')).IntakePage,
+      })),
+      page(routes.plans, async () => ({ Component: (await import('../features/plan/pages/plan-page')).PlanPage })),
+      { path: routes.plan, element: <PlanRedirect /> },
+      { path: '*', element: <NotFoundPage /> },
+    ],
+  },
+]);

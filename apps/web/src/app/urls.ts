@@ -1,0 +1,52 @@
+/** The one source of the pages' addresses. `routes` are the router's patterns, `urls` fill them in. */
+export const routes = {
+  signIn: '/sign-in',
+  desk: '/',
+  lots: '/lots',
+  lot: '/lots/:lotId',
+  channels: '/lines/:lineId/channels',
+  channel: '/channels/:channelId',
+  plans: '/channels/:channelId/plans',
+  plan: '/plans/:planId',
+  intakes: '/lines/:lineId/intakes',
+  intake: '/intakes/:intakeId',
+  hold: '/holds/:holdId',
+} as const;
+
+export interface LotFilters {
+  line?: number | null;
+  state?: string | null;
+  held?: string | null;
+  from?: string | null;
+  to?: string | null;
+  text?: string | null;
+  sort?: string | null;
+  page?: number | null;
+}
+
+export const urls = {
+  signIn: (next?: string) => withQuery(routes.signIn, { next: next === routes.desk ? undefined : next }),
+  desk: (lineId?: number | null) => withQuery(routes.desk, { line: lineId }),
+  lots: (filters: LotFilters = {}) => withQuery(routes.lots, { ...filters }),
+  lot: (lotId: number) => `/lots/${lotId}`,
+  channels: (lineId: number) => `/lines/${lineId}/channels`,
+  channel: (channelId: number, span: { from?: number; to?: number } = {}) =>
+    withQuery(`/channels/${channelId}`, { ...span }),
+  plans: (channelId: number) => `/channels/${channelId}/plans`,
+  plan: (planId: number) => `/plans/${planId}`,
+  intakes: (lineId: number) => `/lines/${lineId}/intakes`,
+  intake: (intakeId: number) => `/intakes/${intakeId}`,
+  hold: (holdId: number) => `/holds/${holdId}`,
+};
+
+type QueryValue = string | number | boolean | null | undefined;
+
+/** The path with those of the query's values that are set. */
+export function withQuery(path: string, query: Record<string, QueryValue>): string {
+  const parameters = new URLSearchParams();
+  for (const [name, value] of Object.entries(query)) {
+    if (value !== null && value !== undefined && value !== '') parameters.set(name, String(value));
+  }
+  const text = parameters.toString();
+  return text === '' ? path : `${path}?${text}`;
+}

@@ -1,0 +1,42 @@
+import type { SignInAnswer } from '@app/contracts';
+
+/** The access token lives in memory only; the refresh cookie, which no script can read, brings a new one. */
+let accessToken: string | null = null;
+let refreshing: Promise<boolean> | null = null;
+const listeners = new Set<() => void>();
+
+export const currentToken = () => accessToken;
+
+export function keepToken(token: string | null): void {
+  accessToken = token;
+}
+
+/** Called when the session has ended while somebody was at work. */
+export function onSessionEnd(listener: () => void): () => void {
+  listeners.add(listener);
+  return () => listeners.delete(listener);
+}
+
+export function endSession(): void {
+  accessToken = null;
+  listeners.forEach((listener) => listener());
+}
+
+/** Asks for a new access token; calls at the same time share one request. False: nobody is signed in. Throws when unreachable. */
+export function refreshToken(): Promise<boolean> {
+  refreshing ??= requestToken().finally(() => {
+    refreshing = null;
+  });
+  return refreshing;
+}
+
+async function requestToken(): Promise<boolean> {
+  const response = await fetch('/api/auth/refresh', { method: 'POST', credentials: 'same-origin' });
+  if (response.status >= 500 || response.status === 429) throw new Error(`refresh answered ${response.status}`);
+  if (!response.ok) {
+    accessToken = null;
+    return false;
+  }
+  accessToken = ((await response.json()) as SignInAnswer).accessToken;
+  return true;
+}

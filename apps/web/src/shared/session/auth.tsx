@@ -1,0 +1,77 @@
+import type { Me, SignInAnswer } from '@app/contracts';
+import { createContext, useCallback, useContext, useEffect, useMemo, useState, type ReactNode } from 'react';
+import { apiGet, apiSend } from '../api/client';
+import { queryClient } from '../api/query-client';
+import { endSession, keepToken, onSessionEnd, refreshToken } from '../api/token';
+
+export type AuthState =
+  | { kind: 'checking' }
+  | { kind: 'unreachable'; error: unknown }
+  | { kind: 'signed_out'; hasExpired: boolean }
+  | { kind: 'signed_in'; me: Me };
+
+interface Auth {
+  state: AuthState;
+  signIn(email: string, password: string): Promise<void>;
+  signOut(): Promise<void>;
+  checkAgain(): void;
+}
+
+const AuthContext = createContext<Auth | null>(null);
+
+export function useAuth(): Auth {
+  const auth = useContext(AuthContext);
+  if (auth === null) throw new Error('useAuth stands outside the AuthProvider.');
+  return auth;
+}
+
+export function AuthProvider({ children }: { children: ReactNode }) {
+  const [state, setState] = useState<AuthState>({ kind: 'checking' });
+  const [round, setRound] = useState(0);
+
+  useEffect(() => {
+    let isCurrent = true;
+    void resume().then((next) => isCurrent && setState(next));
+    return () => {
+      isCurrent = false;
+    };
+  }, [round]);
+
+  useEffect(() => {
+    return onSessionEnd(() => {
+      queryClient.clear();
+      setState((before) => ({ kind: 'signed_out', hasExpired: before.kind === 'signed_in' }));
+    });
+  }, []);
+
+  const signIn = useCallback(async (email: string, password: string) => {
+    const { accessToken } = await apiSend<SignInAnswer>('POST', '/auth/sign-in', { email, password });
+    keepToken(accessToken);
+    queryClient.clear();
+    setState({ kind: 'signed_in', me: await apiGet<Me>('/me') });
+  }, []);
+
+  const signOut = useCallback(async () => {
+    await apiSend<void>('POST', '/auth/sign-out').catch(() => undefined);
+    endSession();
+    setState({ kind: 'signed_out', hasExpired: false });
+  }, []);
+
+  const checkAgain = useCallback(() => {
+    setState({ kind: 'checking' });
+    setRound((before) => before + 1);
+  }, []);
+
+  const value = useMemo(() => ({ state, signIn, signOut, checkAgain }), [state, signIn, signOut, checkAgain]);
+  return <AuthContext value={value}>{children}</AuthContext>;
+}
+
+/** Picks up the session that the refresh cookie stands for, if any. */
+async function resume(): Promise<AuthState> {
+  try {
+    if (!(await refreshToken())) return { kind: 'signed_out', hasExpired: false };
+    return { kind: 'signed_in', me: await apiGet<Me>('/me') };
+  } catch (error) {
+    return { kind: 'unreachable', error };
+  }
+}
