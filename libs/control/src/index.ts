@@ -1,1 +1,12 @@
-export {};
+export { individualsChart } from './individuals-chart';
+export type { IndividualsChart } from './individuals-chart';
+export { robustScale } from './robust-scale';
+export { quantile } from './quantile';
+export { falseShare, holdLimit } from './hold-limit';
+export type { HoldLimit, HoldLimitRequest } from './hold-limit';
+export { pooledVariance } from './pooled-variance';
+export { pseudoResidualVariance } from './pseudo-residual-variance';
+export type { VarianceEstimate } from './variance-estimate';
+export { movingRangeScale } from './moving-range-scale';
+export { sampleMoments } from './sample-moments';
+export { ControlError } from './control-error';

@@ -93,7 +93,11 @@ export type NotScoredReason =
   | 'beyond_allowance'
   | 'no_values'
   | 'non_finite'
-  | 'ill_posed';
+  | 'ill_posed'
+  /** The values that are left are within the limits, but readings off the scale are missing from them. */
+  | 'censored'
+  /** Every point of the segment has the same value: a stuck gauge looks like that. */
+  | 'constant_data';
 
 /** A signal that a lot gave, with the figures its sentence needs. */
 export interface Signal {
@@ -141,4 +145,21 @@ export interface SegmentJudgement {
   /** Baseline at the points' times as deviation from nominal, with its standard error: for drawing. */
   curve: { t: Float64Array; value: Float64Array; standardError: Float64Array };
   lots: LotJudgement[];
+  /** Set when so many lots in a row are held that the process may have changed for good. */
+  askForBreak?: AskForBreak;
+  /**
+   * Deviation from nominal that movements are counted from; null when it could not be computed. Keep it and hand it in again
+   * once the segment's first lots are no longer loaded.
+   */
+  startLevel?: number | null;
+}
+
+/** A run of lots that do not pull the baseline or are outside their control limits, longer than half of T. */
+export interface AskForBreak {
+  fromLotId: number;
+  toLotId: number;
+  lotCount: number;
+  /** Weight of the run's points, and the weight kappa T / 2 that it exceeds. */
+  weight: number;
+  threshold: number;
 }
