@@ -1,0 +1,10 @@
+export { lotsOf } from './lots';
+export type { DemoMovement } from './movement';
+export { shiftHeading, writeNewcomerWorkbooks, type NewcomerWorkbook } from './newcomer';
+export { channelNamed, describePlant, lineNamed } from './plant';
+export { DEMO_SEED, makeWorld, shiftReadings, type DemoWorld } from './readings';
+export { lotMeanSd } from './scatter';
+export { demoEndsAt, demoSchedule, type DemoSchedule } from './schedule';
+export { demoBreaks, movementAt, truth, type DemoBreak, type DemoTruth, type PlantedLot } from './truth';
+export type * from './types';
+export { writeLongWorkbook, writeWideWorkbook, type WorkbookOptions } from './workbook';
