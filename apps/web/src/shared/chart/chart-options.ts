@@ -132,6 +132,7 @@ function drawLayers(u: uPlot, frame: ChartFrame, { plugins, range, theme }: Char
   drawEndWords(
     surface,
     plugins.flatMap((plugin) => plugin.words?.(surface.from, surface.to) ?? []),
+    frame.gutters.right,
   );
   ctx.font = `${12 * ratio}px ${theme.fontFamily}`;
   ctx.fillStyle = theme.colour('ink-soft');

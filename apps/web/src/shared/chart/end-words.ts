@@ -3,9 +3,10 @@ import { spreadWords } from './spread-words';
 
 const WORD_PX = 11;
 const GAP_PX = 13;
+const NARROW_PX = 100;
 
-/** Writes the words at the right ends of a pane's lines, in the gutter beside it, parted where they would touch. */
-export function drawEndWords(surface: PaneSurface, words: readonly EndWord[]): void {
+/** Writes the words at the right ends of a pane's lines, in the gutter (CSS pixels wide), parted where they would touch. */
+export function drawEndWords(surface: PaneSurface, words: readonly EndWord[], gutter: number): void {
   const { ctx, ratio, left, top, width, height, theme } = surface;
   const inside = words.filter((word) => {
     const place = surface.y(word.value);
@@ -23,6 +24,7 @@ export function drawEndWords(surface: PaneSurface, words: readonly EndWord[]): v
   ctx.textAlign = 'left';
   inside.forEach((word, i) => {
     ctx.fillStyle = theme.colour(word.token);
-    ctx.fillText(word.text, left + width + 6 * ratio, places[i]);
+    const text = gutter < NARROW_PX ? (word.short ?? word.text) : word.text;
+    ctx.fillText(text, left + width + 6 * ratio, places[i]);
   });
 }

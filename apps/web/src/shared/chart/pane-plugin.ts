@@ -22,6 +22,8 @@ export interface PaneSurface {
 export interface EndWord {
   value: number;
   text: string;
+  /** In a narrow gutter. */
+  short?: string;
   token: ColourToken;
 }
 

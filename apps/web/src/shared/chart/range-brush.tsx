@@ -1,4 +1,4 @@
-import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
+import { useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
 import { mergeColumns, type Columns } from './columns';
 import { guttersOf } from './pane-stack';
 import { clampRange, panRange, SHORTEST_SPAN_MS, type TimeRange } from './range';
@@ -21,7 +21,7 @@ const STEP_SHARE = 0.02;
 /** The whole record with a window on what is shown above: drag it, or its ends; arrow keys move each. */
 export function RangeBrush({ range, bounds, columns, breaks, format, onRange }: RangeBrushProps) {
   const element = useRef<HTMLDivElement>(null);
-  const held = useRef<{ part: Part; x: number; range: TimeRange } | null>(null);
+  const [held, setHeld] = useState<{ part: Part; x: number; range: TimeRange } | null>(null);
   const width = useWidth(element);
   const { left, right } = guttersOf(width);
   const inner = Math.max(width - left - right, 1);
@@ -38,14 +38,13 @@ export function RangeBrush({ range, bounds, columns, breaks, format, onRange }: 
   const grip = (part: Part) => ({
     onPointerDown: (event: PointerEvent) => {
       event.currentTarget.setPointerCapture(event.pointerId);
-      held.current = { part, x: event.clientX, range };
+      setHeld({ part, x: event.clientX, range });
     },
     onPointerMove: (event: PointerEvent) => {
-      if (held.current?.part === part)
-        move(part, held.current.range, ((event.clientX - held.current.x) / inner) * whole);
+      if (held?.part === part) move(part, held.range, ((event.clientX - held.x) / inner) * whole);
     },
-    onPointerUp: () => (held.current = null),
-    onPointerCancel: () => (held.current = null),
+    onPointerUp: () => setHeld(null),
+    onPointerCancel: () => setHeld(null),
     onKeyDown: (event: KeyboardEvent) => {
       const sign = event.key === 'ArrowLeft' ? -1 : event.key === 'ArrowRight' ? 1 : 0;
       if (sign === 0) return;

@@ -28,14 +28,14 @@ export function runsOf(values: readonly (number | null)[]): [first: number, last
 }
 
 /** A fitted curve with its band, and its word at the right end. */
-export function band(curve: BandedCurve, token: ColourToken, word: string): PanePlugin {
+export function band(curve: BandedCurve, token: ColourToken, word: string, short = word): PanePlugin {
   const runs = runsOf(curve.value);
   return {
     span: (from, to) =>
       joinSpans([curve.low, curve.high, curve.value].map((values) => spanWithin(curve.at, values, from, to))),
     words(from, to) {
       const last = curve.at.findLastIndex((at, i) => at <= to && at >= from && curve.value[i] !== null);
-      return last < 0 ? [] : [{ value: curve.value[last] as number, text: word, token }];
+      return last < 0 ? [] : [{ value: curve.value[last] as number, text: word, short, token }];
     },
     draw(surface) {
       surface.ctx.fillStyle = surface.theme.colour(token);

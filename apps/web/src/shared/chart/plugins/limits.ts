@@ -4,16 +4,18 @@ import { lastStepWithin, type Step } from '../step-line';
 
 export interface LimitLine {
   token: ColourToken;
-  /** Stands at the line's right end; */
-  word: (value: number) => string;
+  /** Stands at the line's right end, `short` where there is little room. */
+  word: (value: number) => { text: string; short: string };
   isDashed?: boolean;
+  /** Drawn where it happens to lie: the value axis does not stretch to hold it. */
+  isIncidental?: boolean;
 }
 
 /** A limit that is the same all along. */
 export function levelLimit(value: number, line: LimitLine): PanePlugin {
   return {
-    span: () => ({ low: value, high: value }),
-    words: () => [{ value, text: line.word(value), token: line.token }],
+    span: () => (line.isIncidental ? null : { low: value, high: value }),
+    words: () => [{ value, ...line.word(value), token: line.token }],
     draw({ ctx, ratio, left, width, theme, y }) {
       ctx.strokeStyle = theme.colour(line.token);
       ctx.lineWidth = ratio;
@@ -35,7 +37,7 @@ export function stepLimit(steps: readonly Step[], line: LimitLine): PanePlugin {
     },
     words(from, to): EndWord[] {
       const last = lastStepWithin(steps, from, to);
-      return last === undefined ? [] : [{ value: last.value, text: line.word(last.value), token: line.token }];
+      return last === undefined ? [] : [{ value: last.value, ...line.word(last.value), token: line.token }];
     },
     draw({ ctx, ratio, from, to, theme, x, y }) {
       ctx.strokeStyle = theme.colour(line.token);

@@ -1,0 +1,105 @@
+import { formatNumber, type RecordLot, type RecordView } from '@app/contracts';
+import type { PanePlugin } from '../../../shared/chart/pane-plugin';
+import type { Pane } from '../../../shared/chart/pane-stack';
+import { band } from '../../../shared/chart/plugins/band';
+import { breakRules } from '../../../shared/chart/plugins/breaks';
+import { highlight } from '../../../shared/chart/plugins/highlight';
+import { levelLimit, stepLimit } from '../../../shared/chart/plugins/limits';
+import { lotMarks } from '../../../shared/chart/plugins/lot-marks';
+import { readingColumns } from '../../../shared/chart/plugins/reading-columns';
+import { stepsOf } from '../../../shared/chart/step-line';
+import { breakWords, signed } from './record-words';
+
+/** The three panes of a channel's record. `shown` is the lot under the pointer, shaded through all of them. */
+export function recordPanes(record: RecordView, shown: RecordLot | null): Pane[] {
+  const { name, unit, resolution } = record.channel.characteristic;
+  const marker: PanePlugin[] = shown === null ? [] : [highlight(shown.startsAt, shown.endsAt)];
+  const shares = { key: '', leastHeight: 8 * resolution };
+  return [
+    {
+      ...shares,
+      key: 'readings',
+      unit: `${name}: readings less nominal, ${unit}`,
+      share: 5,
+      plugins: [...marker, ...readingPlugins(record)],
+    },
+    {
+      ...shares,
+      key: 'means',
+      unit: `Lot means less nominal, ${unit}`,
+      share: 3,
+      plugins: [...marker, ...meanPlugins(record)],
+    },
+    {
+      key: 'scores',
+      unit: 'Scores, σ',
+      share: 3,
+      leastHeight: 4,
+      plugins: [...marker, ...scorePlugins(record)],
+    },
+  ];
+}
+
+const nominalLine = levelLimit(0, {
+  token: 'rule-meaning',
+  word: () => ({ text: 'nominal', short: 'nominal' }),
+  isIncidental: true,
+});
+const silentBreaks = (record: RecordView) =>
+  breakRules(record.breaks.map(({ at }) => ({ at: Date.parse(at), words: null })));
+
+function readingPlugins(record: RecordView): PanePlugin[] {
+  return [
+    nominalLine,
+    readingColumns(record.readings),
+    band(record.baseline, 'baseline', 'baseline, 95 % band', 'baseline'),
+    breakRules(record.breaks.map((item) => ({ at: Date.parse(item.at), words: breakWords(item) }))),
+  ];
+}
+
+function meanPlugins({ lots, channel, ...record }: RecordView): PanePlugin[] {
+  const less = (lot: RecordLot, value: number | null) => (value === null ? null : value - lot.nominal);
+  const limit = (of: (lot: RecordLot) => number | null) =>
+    stepsOf(lots.map((lot) => ({ startsAt: lot.startsAt, endsAt: lot.endsAt, value: rounded(less(lot, of(lot))) })));
+  const line = {
+    token: 'ink' as const,
+    word: (value: number) => {
+      const text = signed(value, channel.characteristic.resolution);
+      return { text: `specification ${text}`, short: `spec. ${text}` };
+    },
+  };
+  return [
+    nominalLine,
+    stepLimit(
+      limit((lot) => lot.lowerSpecification),
+      line,
+    ),
+    stepLimit(
+      limit((lot) => lot.upperSpecification),
+      line,
+    ),
+    silentBreaks({ lots, channel, ...record }),
+    lotMarks(lots.map((lot) => ({ at: lot.at, value: less(lot, lot.mean), mark: lot.mark }))),
+  ];
+}
+
+/** Differences of decimal numbers, such as 42.4 − 42, are equal again once their last binary digits are cut. */
+const rounded = (value: number | null) => (value === null ? null : Number(value.toPrecision(9)));
+
+function scorePlugins(record: RecordView): PanePlugin[] {
+  const { limit, lots } = record;
+  const word = (value: number) => {
+    const text = `${value > 0 ? '+' : ''}${formatNumber(value, 1)}`;
+    return { text: `control limit ${text}`, short: `limit ${text}` };
+  };
+  const limits =
+    limit === null
+      ? []
+      : [limit, -limit].map((value) => levelLimit(value, { token: 'ink-soft', word, isDashed: true }));
+  return [
+    levelLimit(0, { token: 'baseline', word: () => ({ text: 'baseline', short: 'baseline' }) }),
+    ...limits,
+    silentBreaks(record),
+    lotMarks(lots.map((lot) => ({ at: lot.at, value: lot.score, mark: lot.mark }))),
+  ];
+}
