@@ -1,0 +1,222 @@
+import type { SheetRow } from '../container/sheet-rows';
+import { columnLetters } from '../container/cell-names';
+import type { ChannelContext, ParsedReading } from '../types';
+import type { ChannelNames } from './channel-names';
+import { ownText, type Findings } from './findings';
+import type { HeaderColumn } from './header';
+import type { LotBook } from './lot-book';
+import { isSameUnit } from './names';
+import type { ProductNames } from './product-names';
+import { channelOfRow } from './row-channel';
+import { RowNotUsed } from './row-not-used';
+import type { RowStamps } from './row-stamps';
+import type { SheetLayout, ValueColumn } from './sheet-layout';
+import { isCheckStandardLabel, isSummaryLabel } from './synonyms';
+import { cellText, lotText } from './texts';
+import { isBlank, isMissing, parseNumberText, parseValue } from './values';
+
+export interface RowReaderParts {
+  layout: SheetLayout;
+  channels: ChannelNames;
+  products: ProductNames;
+  lots: LotBook;
+  stamps: RowStamps;
+  findings: Findings;
+}
+
+/**
+ * Turns one sheet's data rows into readings. Each row either gives a reading or is reported once as *not used*, so that
+ * the rows not used are as many as the problems of that severity.
+ */
+export class RowReader {
+  rowsRead = 0;
+  rowsNotUsed = 0;
+
+  /** Columns whose cells make a row a data row. */
+  private readonly used: readonly HeaderColumn[];
+
+  constructor(private readonly parts: RowReaderParts) {
+    this.used = parts.layout.header.columns.filter(({ role }) => role !== 'ignored' && role !== 'remark');
+  }
+
+  read(row: SheetRow, into: ParsedReading[]): void {
+    if (row.cells.every(isBlank)) return;
+    this.rowsRead += 1;
+    const result = this.readRow(row, into);
+    if (!(result instanceof RowNotUsed)) return;
+    this.rowsNotUsed += 1;
+    const { code, why, column } = result;
+    this.parts.findings.add('row_not_used', code, { ...this.place(row), column }, () => why);
+  }
+
+  private readRow(row: SheetRow, into: ParsedReading[]): RowNotUsed | undefined {
+    const { layout, channels, findings, stamps, lots } = this.parts;
+    const set = this.findNonData(row);
+    if (set) return set;
+    const channel = channelOfRow(row, layout, channels, findings);
+    if (channel instanceof RowNotUsed) return channel;
+    const stamp = stamps.read(row, channel?.id ?? 0);
+    if ('code' in stamp) return new RowNotUsed(stamp.code, stamp.why, stamp.column);
+    const lot = this.readLot(row);
+    if (lot instanceof RowNotUsed) return lot;
+    const product = this.readProduct(row);
+    if (product instanceof RowNotUsed) return product;
+    const other = lots.productOf(lot);
+    if (product !== null && other != null && other !== product) {
+      const why = `gives lot ${lot} the product ${product}, but a row before it says ${other}; a lot is of one product`;
+      return new RowNotUsed('lot-with-two-products', why, layout.product?.column);
+    }
+    const readings = this.readValues(row, channel, {
+      sheet: layout.sheet,
+      row: row.number,
+      lot: lots.own(lot),
+      product: product ?? other ?? null,
+      ...this.readQuantity(row),
+      at: stamp.at,
+      serial: this.text(row, layout.serial?.column),
+      position: this.text(row, layout.position?.column),
+    });
+    if (readings instanceof RowNotUsed) return readings;
+    for (const reading of readings) {
+      lots.add(reading);
+      into.push(reading);
+    }
+    return undefined;
+  }
+
+  /** Rows that are no measurements of product: headers again, totals, check standards, empty ones. */
+  private findNonData(row: SheetRow): RowNotUsed | undefined {
+    const { used } = this;
+    const { layout } = this.parts;
+    const isHeader = used.every(
+      ({ column, header }) => row.cells[column]?.text.replace(/\s+/g, ' ').trim().slice(0, 200) === header,
+    );
+    if (isHeader) return new RowNotUsed('repeated-header', 'repeats the header');
+    const stampCell = row.cells[(layout.time ?? layout.date)?.column ?? 0];
+    const isWithoutTime = isMissing(stampCell) || (stampCell?.kind === 'text' && isSummaryLabel(stampCell.text));
+    const label = isWithoutTime && row.cells.find((cell) => cell?.kind === 'text' && isSummaryLabel(cell.text));
+    if (label) return new RowNotUsed('summary-row', `is a row of totals ("${label.text.trim()}"), no reading`);
+    for (const source of [layout.lot, layout.serial, layout.product]) {
+      const cell = source && row.cells[source.column];
+      if (cell?.kind === 'text' && isCheckStandardLabel(cell.text)) {
+        const why = `says "${cell.text.trim()}": a check standard, no product; record it as a gauge check`;
+        return new RowNotUsed('check-standard-row', why, source?.column);
+      }
+    }
+    if (used.some(({ column }) => !isBlank(row.cells[column]))) return undefined;
+    return new RowNotUsed('row-without-reading', 'has neither time nor lot nor value');
+  }
+
+  private readLot(row: SheetRow): string | RowNotUsed {
+    const { lot } = this.parts.layout;
+    const read = lotText(lot && row.cells[lot.column]);
+    return typeof read === 'string' ? read : new RowNotUsed(read.code, read.why, lot?.column);
+  }
+
+  private readProduct(row: SheetRow): string | null | RowNotUsed {
+    const { layout, products, findings } = this.parts;
+    if (!layout.product) return null;
+    const { column } = layout.product;
+    const text = cellText(row.cells[column]);
+    if (text === null) {
+      findings.add('notice', 'product-missing', { ...this.place(row), column }, () => 'names no product');
+      return null;
+    }
+    const code = products.find(text);
+    if (code !== undefined) return code;
+    const why = `names the product "${text.slice(0, 60)}", which is not known here (${products.list()})`;
+    return new RowNotUsed('unknown-product', why, column);
+  }
+
+  private readQuantity(row: SheetRow): Pick<ParsedReading, 'quantity' | 'quantityUnit'> {
+    const { layout, findings } = this.parts;
+    const cell = layout.quantity && row.cells[layout.quantity.column];
+    if (!layout.quantity || isMissing(cell)) return { quantity: null, quantityUnit: null };
+    const [, digits, unit] = /^([\d.,\s]+?)\s*(\D*)$/.exec(cell!.text.trim()) ?? [];
+    const read =
+      cell!.kind === 'number' ? cell!.number : digits ? parseNumberText(digits, { sawDecimalComma: false }) : null;
+    if (typeof read === 'number' && read >= 0) {
+      return { quantity: read, quantityUnit: unit || layout.quantity.unit };
+    }
+    findings.add(
+      'notice',
+      'quantity-not-a-number',
+      { ...this.place(row), column: layout.quantity.column },
+      () => 'gives a quantity that cannot be read as a number, so the lot gets none from this row',
+    );
+    return { quantity: null, quantityUnit: null };
+  }
+
+  private readValues(
+    row: SheetRow,
+    channel: ChannelContext | null,
+    base: Omit<ParsedReading, 'column' | 'channelId' | 'value' | 'censoring'>,
+  ): ParsedReading[] | RowNotUsed {
+    const { values } = this.parts.layout;
+    const readings: ParsedReading[] = [];
+    let only: RowNotUsed | undefined;
+    for (const source of values) {
+      const result = this.readValue(row, source, (source.channel ?? channel)!);
+      if (result instanceof RowNotUsed) {
+        if (values.length === 1) only = result;
+        else this.sayOfCell(row, result);
+      } else readings.push({ ...base, column: columnLetters(source.column), ...result });
+    }
+    if (readings.length > 0) return readings;
+    return only ?? new RowNotUsed('no-value', 'has no value that can be used');
+  }
+
+  private sayOfCell(row: SheetRow, { code, why, column }: RowNotUsed): void {
+    const severity = code === 'value-missing' ? 'notice' : 'cell_not_used';
+    this.parts.findings.add(severity, code, { ...this.place(row), column }, () => why);
+  }
+
+  private readValue(
+    row: SheetRow,
+    source: ValueColumn,
+    channel: ChannelContext,
+  ): Pick<ParsedReading, 'channelId' | 'value' | 'censoring'> | RowNotUsed {
+    const { layout, findings } = this.parts;
+    const { column } = source;
+    const unit = source.unit ?? cellText(layout.unit && row.cells[layout.unit.column]);
+    const read = parseValue(row.cells[column], channel.unit, source.habits);
+    if (read.kind === 'missing')
+      return new RowNotUsed('value-missing', 'has no value, which is not taken as zero', column);
+    if (read.kind === 'bad') return new RowNotUsed(read.code, read.why, column);
+    if (unit !== null && layout.kind === 'long' && !isSameUnit(unit, channel.unit)) {
+      const why = `is in ${unit.slice(0, 20)}, but the channel "${channel.name}" is in ${channel.unit || 'no unit'}; values are not converted`;
+      return new RowNotUsed('unit-differs', why, column);
+    }
+    if (read.kind === 'censored') {
+      findings.add(
+        'notice',
+        'censored-reading',
+        { ...this.place(row), column },
+        () =>
+          `says "${cellText(row.cells[column])}": off scale, so the lot counts a reading ${read.censoring} what the gauge can show, without a value`,
+      );
+      return { channelId: channel.id, value: null, censoring: read.censoring };
+    }
+    if (read.note) {
+      const { note, value } = read;
+      findings.add('notice', note, { ...this.place(row), column }, () => NOTES[note](value, channel.unit));
+    }
+    return { channelId: channel.id, value: read.value, censoring: null };
+  }
+
+  private text(row: SheetRow, column: number | undefined): string | null {
+    const text = column === undefined ? null : cellText(row.cells[column]);
+    return text === null ? null : ownText(text);
+  }
+
+  private place(row: SheetRow): { sheet: string; row: number } {
+    return { sheet: this.parts.layout.sheet, row: row.number };
+  }
+}
+
+const NOTES = {
+  'number-stored-as-text': (value: number, unit: string) => `holds a number as text; it is read as ${value} ${unit}`,
+  'percent-cell': (value: number) => `is formatted as a percentage; it is read as ${value} %`,
+  'looks-like-a-code': (value: number, unit: string) =>
+    `holds ${value} ${unit}, which some instruments write instead of a reading; delete it if it is none`,
+};

@@ -1,0 +1,175 @@
+import type { ChannelContext, ColumnRole } from '../types';
+import type { ChannelNames } from './channel-names';
+import type { Findings } from './findings';
+import type { Header, HeaderColumn } from './header';
+import { isSameUnit } from './names';
+import type { ColumnHabits } from './values';
+
+export interface ValueColumn {
+  column: number;
+  /** Null where each row names its channel. */
+  channel: ChannelContext | null;
+  unit: string | null;
+  habits: ColumnHabits;
+}
+
+/** Where a sheet's rows have what. Columns are numbered from 1. */
+export interface SheetLayout {
+  sheet: string;
+  kind: 'long' | 'wide';
+  header: Header;
+  time?: HeaderColumn;
+  date?: HeaderColumn;
+  clock?: HeaderColumn;
+  lot?: HeaderColumn;
+  product?: HeaderColumn;
+  unit?: HeaderColumn;
+  serial?: HeaderColumn;
+  position?: HeaderColumn;
+  quantity?: HeaderColumn;
+  channelColumns: HeaderColumn[];
+  values: ValueColumn[];
+  /** The header says UTC or GMT, so the plant's zone does not apply. */
+  isUtc: boolean;
+}
+
+/** Settles what a sheet's columns are for, and says what is missing, contradictory or not used. */
+export function resolveLayout(sheet: string, header: Header, channels: ChannelNames, findings: Findings): SheetLayout {
+  const first = (role: ColumnRole): HeaderColumn | undefined => header.columns.find((column) => column.role === role);
+  const all = (role: ColumnRole): HeaderColumn[] => header.columns.filter((column) => column.role === role);
+  const isLong = all('value').length > 0 && (all('channel').length > 0 || all('channel_values').length === 0);
+  for (const column of all(isLong ? 'channel_values' : 'value')) {
+    column.role = 'ignored';
+    column.channelId = null;
+    column.isUnknown = true;
+  }
+  const time = first('time') ?? first('date');
+  const layout: SheetLayout = {
+    sheet,
+    kind: isLong ? 'long' : 'wide',
+    header,
+    time: first('time'),
+    date: first('date'),
+    clock: first('time_of_day'),
+    lot: first('lot'),
+    product: first('product'),
+    unit: first('unit'),
+    serial: first('serial'),
+    position: first('position'),
+    quantity: first('quantity'),
+    channelColumns: isLong ? all('channel') : [],
+    values: [],
+    isUtc: /^(utc|gmt|z)$/i.test(time?.unit ?? ''),
+  };
+  layout.values = isLong
+    ? longValues(layout, all('value'), channels, findings)
+    : wideValues(layout, findings, channels);
+  sayWhatIsMissing(layout, channels, findings);
+  return layout;
+}
+
+function longValues(
+  { sheet, header, channelColumns }: SheetLayout,
+  columns: HeaderColumn[],
+  channels: ChannelNames,
+  findings: Findings,
+): ValueColumn[] {
+  const channel = channelColumns.length > 0 ? null : (channels.findOne(sheet) ?? channels.only() ?? null);
+  if (!channel && channelColumns.length === 0) {
+    findings.add(
+      'blocking',
+      'no-channel-column',
+      { sheet, row: header.row },
+      () =>
+        `has a column of values but none that names the channel; add one headed "Characteristic", or name the sheet after the channel (${channels.list()})`,
+    );
+  }
+  return columns
+    .filter((column) => !channel || isUnitRight(sheet, header.row, column, channel, findings))
+    .map(({ column, unit }) => ({ column, channel, unit, habits: { sawDecimalComma: false } }));
+}
+
+function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels: ChannelNames): ValueColumn[] {
+  const seen = new Map<number, HeaderColumn>();
+  const values: ValueColumn[] = [];
+  for (const column of header.columns) {
+    if (column.role !== 'channel_values') continue;
+    const channel = channels.get(column.channelId!);
+    const twin = seen.get(channel.id);
+    if (twin) {
+      findings.add(
+        'blocking',
+        'channel-in-two-columns',
+        { sheet, row: header.row, column: column.column },
+        () =>
+          `is headed "${column.header}" and so is "${channel.name}" a second time (first: "${twin.header}"); keep one of the two columns`,
+      );
+      continue;
+    }
+    seen.set(channel.id, column);
+    if (!isUnitRight(sheet, header.row, column, channel, findings)) continue;
+    values.push({ column: column.column, channel, unit: column.unit, habits: { sawDecimalComma: false } });
+  }
+  return values;
+}
+
+function isUnitRight(
+  sheet: string,
+  row: number,
+  column: HeaderColumn,
+  channel: ChannelContext,
+  findings: Findings,
+): boolean {
+  if (column.unit === null || isSameUnit(column.unit, channel.unit)) return true;
+  findings.add(
+    'blocking',
+    'unit-differs',
+    { sheet, row, column: column.column },
+    () =>
+      `gives "${column.name}" in ${column.unit}, but the channel "${channel.name}" is in ${channel.unit || 'no unit'}; values are not converted, so store them in ${channel.unit || 'no unit'} and say so in the header`,
+  );
+  return false;
+}
+
+function sayWhatIsMissing(layout: SheetLayout, channels: ChannelNames, findings: Findings): void {
+  const { sheet, header } = layout;
+  const place = { sheet, row: header.row };
+  if (!layout.time && !layout.date) {
+    findings.add(
+      'blocking',
+      'no-time-column',
+      place,
+      () => 'has no column headed "Time" (or "Date" and "Time"); add one',
+    );
+  }
+  if (!layout.lot) findings.add('blocking', 'no-lot-column', place, () => 'has no column headed "Lot"; add one');
+  if (!layout.product) {
+    findings.add(
+      'notice',
+      'no-product-column',
+      place,
+      () => 'has no column headed "Product", so no lot on it names its product',
+    );
+  }
+  if (
+    layout.values.length === 0 &&
+    !header.columns.some((column) => column.role === 'channel_values' || column.role === 'value')
+  ) {
+    findings.add(
+      'blocking',
+      'no-value-column',
+      place,
+      () =>
+        `has no column of values; head one "Value" beside one headed "Characteristic", or head columns with the line's channels (${channels.list()})`,
+    );
+  }
+  for (const column of header.columns.filter((one) => one.isUnknown)) {
+    findings.add(
+      'notice',
+      'column-not-used',
+      { ...place, column: column.column },
+      () =>
+        `is headed "${column.header}", which is no channel of this line and no other column that is read, so the column is not used`,
+    );
+  }
+}

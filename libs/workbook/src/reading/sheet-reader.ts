@@ -1,0 +1,108 @@
+import type { SheetRow } from '../container/sheet-rows';
+import type { ParsedReading, RecognisedColumn } from '../types';
+import type { ChannelNames } from './channel-names';
+import type { Findings } from './findings';
+import { findHeader, takeUnitsRow, toRecognised } from './header';
+import type { LotBook } from './lot-book';
+import type { ProductNames } from './product-names';
+import { RowReader } from './row-reader';
+import { RowStamps } from './row-stamps';
+import { resolveLayout, type SheetLayout } from './sheet-layout';
+import { isBlank } from './values';
+import type { ZoneClock } from './zone-clock';
+
+/** The header stands within this many rows. */
+const HEADER_WITHIN = 20;
+
+export interface ReadingParts {
+  channels: ChannelNames;
+  products: ProductNames;
+  lots: LotBook;
+  findings: Findings;
+  zone: ZoneClock;
+  dateSystem: 1900 | 1904;
+  now: number;
+}
+
+/** Reads one sheet: looks for the header in its first rows, then turns the rows below it into readings. */
+export class SheetReader {
+  layout: SheetLayout | null = null;
+  rows = 0;
+  private waiting: SheetRow[] | null = [];
+  private reader: RowReader | null = null;
+  private stamps: RowStamps | null = null;
+  private hiddenRows = 0;
+
+  constructor(
+    private readonly name: string,
+    private readonly parts: ReadingParts,
+  ) {}
+
+  get rowsRead(): number {
+    return this.reader?.rowsRead ?? 0;
+  }
+
+  get rowsNotUsed(): number {
+    return this.reader?.rowsNotUsed ?? 0;
+  }
+
+  take(row: SheetRow, into: ParsedReading[]): void {
+    if (this.waiting === null) return this.readRow(row, into);
+    if (row.number <= HEADER_WITHIN) {
+      this.waiting.push(row);
+      return;
+    }
+    this.startReading(into);
+    this.readRow(row, into);
+  }
+
+  /** Says what only the whole sheet shows, and returns the columns as recognised. */
+  finish(mergedAreas: number, into: ParsedReading[]): RecognisedColumn[] {
+    if (this.waiting !== null) this.startReading(into);
+    this.stamps?.finish();
+    const { findings } = this.parts;
+    const place = { sheet: this.name };
+    if (this.layout && mergedAreas > 0) {
+      findings.add(
+        'notice',
+        'merged-cells',
+        place,
+        () =>
+          `has ${mergedAreas} merged areas; only the first cell of each holds its content, the others are read as blank`,
+      );
+    }
+    if (this.layout && this.hiddenRows > 0) {
+      findings.add(
+        'notice',
+        'hidden-rows-read',
+        place,
+        () => `has ${this.hiddenRows} hidden or filtered rows; they were read like the others`,
+      );
+    }
+    return this.layout?.header.columns.map((column) => toRecognised(this.name, column)) ?? [];
+  }
+
+  private startReading(into: ParsedReading[]): void {
+    const rows = this.waiting ?? [];
+    this.waiting = null;
+    const { channels, findings, dateSystem, zone, now } = this.parts;
+    const header = findHeader(rows, channels);
+    const below = header ? rows.filter((row) => row.number > header.row) : rows;
+    if (header) {
+      const [units] = below;
+      if (units && units.number === header.row + 1 && takeUnitsRow(header, units)) below.shift();
+      const layout = resolveLayout(this.name, header, channels, findings);
+      this.layout = layout;
+      this.stamps = new RowStamps(layout, dateSystem, zone, now, findings);
+      this.reader = new RowReader({ ...this.parts, layout, stamps: this.stamps });
+    }
+    for (const row of below) this.readRow(row, into);
+  }
+
+  private readRow(row: SheetRow, into: ParsedReading[]): void {
+    if (row.cells.every(isBlank)) return;
+    this.rows += 1;
+    if (row.isHidden) this.hiddenRows += 1;
+    this.reader?.read(row, into);
+  }
+}
