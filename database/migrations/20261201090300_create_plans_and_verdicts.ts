@@ -110,6 +110,7 @@ export async function up(knex: Knex): Promise<void> {
       point_count integer,
       lot_count integer,
       movement double precision,
+      start_level double precision,
       input_hash bytea not null,
       method_version text not null,
       judged_at timestamptz not null,
@@ -121,6 +122,8 @@ export async function up(knex: Knex): Promise<void> {
     create index fits_channel_index on fits (channel_id, judged_at desc);
     create trigger fits_append_only before update or delete or truncate on fits for each statement execute function refuse_change();
     comment on table fits is 'One judging of a channel''s segment: by which plan revision, from which inputs, by which version of the method.';
+    comment on column fits.segment_starts_at is 'The break that the segment starts at; null for what came before any break.';
+    comment on column fits.start_level is 'Deviation from nominal that movements are counted from, in the unit; handed to the next fit of the segment.';
     comment on column fits.movement is 'Largest movement of the baseline since the segment''s start, in the characteristic''s unit.';
 
     create table baseline_points (

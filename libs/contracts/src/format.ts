@@ -1,6 +1,6 @@
 /** Numbers as Ebbline shows them: the characteristic's own resolution, U+2212 for minus, a thin space before the unit. */
-const MINUS = '−';
-const THIN_SPACE = ' ';
+const MINUS = '\u2212';
+const THIN_SPACE = '\u2009';
 
 /** Decimals that a resolution needs: 0.01 → 2, 0.5 → 1, 1 → 0, 10 → 0. */
 export function decimalsOf(resolution: number): number {

@@ -26,7 +26,8 @@ export interface OwedJobPayload {
 export interface OwedJobSubject {
   'read-intake': { intakeId: number };
   'score-intake': { intakeId: number };
-  'score-channels': { channelIds: number[]; reason: string };
+  /** `rejudgeFrom` (ISO): settled verdicts of lots that end later are looked at again too. */
+  'score-channels': { channelIds: number[]; reason: string; rejudgeFrom: string | null };
   'propose-plan': { planId: number };
 }
 

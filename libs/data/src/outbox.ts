@@ -1,0 +1,93 @@
+import { findRow, type Queryable, rows, type Transaction } from './database';
+
+export interface OutboxMail {
+  event: string;
+  kind: string;
+  recipient: string;
+  subject: string;
+  html: string;
+  text: string;
+}
+
+export interface WaitingMail extends OutboxMail {
+  id: number;
+  messageId: string;
+  attempts: number;
+}
+
+/** Writes mails in the transaction of the event that they tell of. The same event, recipient and kind is one mail. Returns the new ids. */
+export async function insertMails(tx: Transaction, plantId: number, mails: OutboxMail[], at: Date): Promise<number[]> {
+  if (mails.length === 0) return [];
+  const inserted = await rows<{ id: number }>(
+    tx,
+    `insert into outbox (plant_id, event, kind, recipient, subject, html, plain_text, message_id, next_attempt_at, created_at)
+     select :plantId, m.event, m.kind, m.recipient, m.subject, m.html, m.text,
+       '<' || encode(sha256(convert_to(m.event || ' ' || m.kind || ' ' || m.recipient || ' ' || :plantId, 'UTF8')), 'hex') || '@ebbline>', :at, :at
+     from jsonb_to_recordset(:mails) as m(event text, kind text, recipient text, subject text, html text, text text)
+     on conflict (event, recipient, kind) do nothing returning id`,
+    { plantId, at, mails: JSON.stringify(mails) },
+  );
+  return inserted.map((row) => row.id);
+}
+
+/** Takes the mail for one attempt, for as long as the lease lasts; undefined when it is sent, not yet due or with somebody else. */
+export async function leaseMail(
+  db: Queryable,
+  id: number,
+  now: Date,
+  leaseSeconds: number,
+): Promise<WaitingMail | undefined> {
+  return findRow<WaitingMail>(
+    db,
+    `update outbox set leased_until = cast(:now as timestamptz) + make_interval(secs => :leaseSeconds), attempts = attempts + 1
+     where id = :id and state = 'waiting' and next_attempt_at <= :now and (leased_until is null or leased_until <= :now)
+     returning id, event, kind, recipient, subject, html, plain_text as text, message_id as "messageId", attempts`,
+    { id, now, leaseSeconds },
+  );
+}
+
+export async function updateMailSent(db: Queryable, id: number, at: Date): Promise<void> {
+  await db('outbox')
+    .where({ id, state: 'waiting' })
+    .update({ state: 'sent', sent_at: at, leased_until: null, last_error: null });
+}
+
+/** Puts the mail off, or gives it up for a person to see when `nextAttemptAt` is null. */
+export async function updateMailFailed(
+  db: Queryable,
+  id: number,
+  error: string,
+  nextAttemptAt: Date | null,
+): Promise<void> {
+  await db('outbox')
+    .where({ id, state: 'waiting' })
+    .update({
+      last_error: error,
+      leased_until: null,
+      ...(nextAttemptAt === null ? { state: 'failed' } : { next_attempt_at: nextAttemptAt }),
+    });
+}
+
+/** Ids of the mails that are due and with nobody. */
+export async function listDueMailIds(db: Queryable, now: Date, limit: number): Promise<number[]> {
+  const found = await rows<{ id: number }>(
+    db,
+    `select id from outbox where state = 'waiting' and next_attempt_at <= :now and (leased_until is null or leased_until <= :now)
+     order by next_attempt_at, id limit :limit`,
+    { now, limit },
+  );
+  return found.map((row) => row.id);
+}
+
+/** Who gets mail about a line: its engineers and line leads, and the plant's quality managers. */
+export async function listLineRecipients(db: Queryable, lineId: number): Promise<{ email: string; name: string }[]> {
+  return rows<{ email: string; name: string }>(
+    db,
+    `select distinct p.email, p.name from people p join memberships m on m.person_id = p.id join lines l on l.plant_id = m.plant_id
+     where l.id = :lineId and p.disabled_at is null and (m.role = 'quality_manager'
+       or (m.role in ('engineer', 'line_lead') and exists (
+         select 1 from line_assignments a where a.line_id = l.id and a.person_id = p.id)))
+     order by p.email`,
+    { lineId },
+  );
+}
