@@ -1,0 +1,10 @@
+import { createParamDecorator, type ExecutionContext } from '@nestjs/common';
+import type { Person } from '@app/data';
+import type { Request } from 'express';
+
+/** Who is signed in: `{id, name, email}`. */
+export const CurrentPerson = createParamDecorator(
+  (_data: unknown, context: ExecutionContext) => context.switchToHttp().getRequest<Request & { user: Person }>().user,
+);
+
+export type { Person };

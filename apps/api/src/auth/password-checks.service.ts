@@ -1,0 +1,88 @@
+import { Inject, Injectable } from '@nestjs/common';
+import { DomainError } from '@app/contracts';
+import {
+  type Database,
+  deleteFailures,
+  deleteFailuresBefore,
+  type FailureRules,
+  findBlockedUntil,
+  findPersonForSignIn,
+  findPersonWithPassword,
+  type Person,
+  type PersonWithPassword,
+  upsertFailure,
+} from '@app/data';
+import { CLOCK, type Clock, DATABASE } from '@app/platform';
+import { RetryLaterError } from '../platform/retry-later-error';
+import { isPasswordRight } from './passwords';
+
+/** Five wrong passwords in a row, then a wait of 5 s that doubles with every further one, to a quarter of an hour. */
+const RULES: FailureRules = {
+  allowed: 5,
+  firstDelaySeconds: 5,
+  longestDelaySeconds: 900,
+  forgottenAfterSeconds: 3600,
+};
+
+/** Compares passwords, at sign-in and under signatures, and makes guessing slow. */
+@Injectable()
+export class PasswordChecks {
+  constructor(
+    @Inject(DATABASE) private readonly database: Database,
+    @Inject(CLOCK) private readonly clock: Clock,
+  ) {}
+
+  /** The person of this address and password; the same answer in the same time whichever of them is wrong. */
+  async signIn(email: string, password: string, address: string): Promise<Person> {
+    const person = await findPersonForSignIn(this.database, email);
+    if (!(await this.check(email, person, password, address)))
+      throw new DomainError('unauthenticated', 'sign-in-failed', 'The e-mail address or the password is wrong.');
+    return { id: person!.id, name: person!.name, email: person!.email };
+  }
+
+  /** The password given again under a signature. Call it before the transaction opens: wrong ones count even when nothing else is written. */
+  async verifyPassword(personId: number, password: string, address?: string): Promise<void> {
+    const person = await findPersonWithPassword(this.database, personId);
+    if (await this.check(person?.email ?? `#${personId}`, person, password, address)) return;
+    const detail = 'This is not your password.';
+    throw new DomainError('invalid', 'wrong-password', detail, [
+      { pointer: '/password', code: 'wrong-password', detail },
+    ]);
+  }
+
+  /**
+   * The account's failure is counted before the password is compared and taken back when it was right, so that guesses sent
+   * at the same time gain nothing. An address is counted afterwards: a plant's people share one, and sign in together.
+   */
+  private async check(
+    email: string,
+    person: PersonWithPassword | undefined,
+    password: string,
+    address: string | undefined,
+  ): Promise<boolean> {
+    const account = `account:${email.toLowerCase()}`;
+    const place = address === undefined ? undefined : `address:${address}`;
+    const subjects = place === undefined ? [account] : [account, place];
+    const now = this.clock.now();
+    await this.refuseBlocked(subjects, now);
+    if (!(await upsertFailure(this.database, account, now, RULES))) await this.refuseBlocked(subjects, now, true);
+    if (await isPasswordRight(password, person?.passwordHash)) {
+      await deleteFailures(this.database, account);
+      await deleteFailuresBefore(this.database, new Date(now.getTime() - 2 * RULES.forgottenAfterSeconds * 1000));
+      return true;
+    }
+    if (place !== undefined) await upsertFailure(this.database, place, now, RULES);
+    return false;
+  }
+
+  private async refuseBlocked(subjects: string[], now: Date, isSure = false): Promise<void> {
+    const until = await findBlockedUntil(this.database, subjects, now);
+    if (until === undefined && !isSure) return;
+    const seconds = until === undefined ? 1 : Math.max(1, Math.ceil((until.getTime() - now.getTime()) / 1000));
+    throw new RetryLaterError(
+      'too-many-wrong-passwords',
+      `Too many wrong passwords. Try again in ${seconds === 1 ? '1 second' : `${seconds} seconds`}.`,
+      seconds,
+    );
+  }
+}

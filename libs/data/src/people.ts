@@ -1,0 +1,67 @@
+import type { Role } from '@app/contracts';
+import { findRow, type Queryable, rows } from './database';
+
+export interface Person {
+  id: number;
+  name: string;
+  email: string;
+}
+
+export interface PersonWithPassword extends Person {
+  passwordHash: string;
+}
+
+/** The person who may sign in under this address; not one who is disabled. */
+export function findPersonForSignIn(db: Queryable, email: string): Promise<PersonWithPassword | undefined> {
+  return findRow<PersonWithPassword>(
+    db,
+    `select id, name, email, password_hash as "passwordHash" from people
+     where email = lower(:email) and disabled_at is null`,
+    { email },
+  );
+}
+
+export function findPersonWithPassword(db: Queryable, id: number): Promise<PersonWithPassword | undefined> {
+  return findRow<PersonWithPassword>(
+    db,
+    `select id, name, email, password_hash as "passwordHash" from people where id = :id and disabled_at is null`,
+    { id },
+  );
+}
+
+/** The person unless disabled. */
+export function findPerson(db: Queryable, id: number): Promise<Person | undefined> {
+  return findRow<Person>(db, `select id, name, email from people where id = :id and disabled_at is null`, { id });
+}
+
+/** The roles of a person at a plant; none: the person is nobody there. */
+export async function listRoles(db: Queryable, personId: number, plantId: number): Promise<Role[]> {
+  const found = await rows<{ role: Role }>(
+    db,
+    `select role from memberships where person_id = :personId and plant_id = :plantId order by role`,
+    { personId, plantId },
+  );
+  return found.map((row) => row.role);
+}
+
+export interface MembershipRow {
+  plantId: number;
+  plantName: string;
+  timeZone: string;
+  roles: Role[];
+  lineIds: number[];
+}
+
+/** Where a person is somebody, and the lines there that the person is assigned to. */
+export function listMemberships(db: Queryable, personId: number): Promise<MembershipRow[]> {
+  return rows<MembershipRow>(
+    db,
+    `select p.id as "plantId", p.name as "plantName", p.time_zone as "timeZone",
+            array_agg(m.role order by m.role) as roles,
+            coalesce((select json_agg(a.line_id order by a.line_id) from line_assignments a
+                      where a.person_id = :personId and a.plant_id = p.id), '[]') as "lineIds"
+     from memberships m join plants p on p.id = m.plant_id
+     where m.person_id = :personId group by p.id order by p.name`,
+    { personId },
+  );
+}
