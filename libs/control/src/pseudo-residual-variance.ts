@@ -6,9 +6,9 @@ import type { VarianceEstimate } from './variance-estimate';
  * its two neighbours, ε = a y₍ᵢ₋₁₎ + b y₍ᵢ₊₁₎ − yᵢ with a = (t₍ᵢ₊₁₎ − tᵢ) / (t₍ᵢ₊₁₎ − t₍ᵢ₋₁₎), b = 1 − a (Gasser, Sroka & Jennen-Steinmetz
  * 1986, Biometrika 73, 625–633). With known variances vᵢ added to a common σ²,
  * E ε² = σ² (a² + b² + 1) + a² v₍ᵢ₋₁₎ + b² v₍ᵢ₊₁₎ + vᵢ, hence σ² = Σ (ε² − known part) / Σ (a² + b² + 1).
- * A movement that is straight over three values does not enter; one of period P and amplitude A adds about
- * (A²/3) (1 − cos(2π spacing / P))², 0.0005 A² at 22 spacings. Plain successive differences would add
- * 0.04 A² there: several lot variances for a drift of five.
+ * A movement that is straight over three values does not enter; one of amplitude A and period P adds A² (1 − cos(2π spacing / P))² / 3:
+ * 0.0005 A² at 22 spacings, 0.03 A² at 8. Plain successive differences would add A² (1 − cos(2π spacing / P)) / 2, 0.02 A² at 22 spacings and
+ * 0.15 A² at 8, and so swallow the slow movement.
  *
  * @param at times, s, strictly increasing within a triple (triples that are not are passed over)
  * @param values in the unit

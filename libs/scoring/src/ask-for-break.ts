@@ -1,4 +1,4 @@
-import { lotScore } from './lot-score';
+import { allScores } from './lot-score';
 import { isBeyond, type TwoPassFit } from './two-pass-fit';
 import type { AskForBreak, LotOnChannel, PlanParameters } from './types';
 
@@ -14,7 +14,9 @@ export function askForBreak(
   const { chosen, fit, kappa } = result;
   const { weight, lot } = chosen.observations;
   const isHeld = Uint8Array.from(chosen.lots, (index) => (lots[index].pulls ? 0 : 1));
-  for (const deleted of fit.deletedLots()) if (isBeyond(lotScore(deleted, chosen.count), plan)) isHeld[deleted.lot] = 1;
+  allScores(fit, chosen, result.pulls).forEach((score, place) => {
+    if (isBeyond(score, plan)) isHeld[place] = 1;
+  });
   const run = new Set<number>();
   let total = 0;
   for (let i = lot.length - 1; i >= 0 && isHeld[lot[i]] === 1; i -= 1) {

@@ -1,4 +1,6 @@
-import type { DeletedLot } from '@app/baseline';
+import type { DeletedLot, SmoothingSplineFit } from '@app/baseline';
+
+import type { ChosenPoints } from './segment-points';
 
 /** A lot against the baseline fitted without it. */
 export interface LotScore {
@@ -30,4 +32,41 @@ export function lotScore(deleted: DeletedLot, count: Float64Array): LotScore {
   }
   const sd = Math.sqrt(variance);
   return { residual: r, sd, z: r / sd };
+}
+
+/** Up to this leverage (1 − h) loses no digit that matters. */
+const SAFE_LEVERAGE = 0.5;
+
+/**
+ * Scores of all chosen lots. A lot of one point of leverage h needs no deletion: e₋ = (y − ĝ) / (1 − h) with variance
+ * 1 / (w (1 − h)); when it does not pull, y − ĝ with variance 1/w + se². The others are deleted one by one.
+ *
+ * @returns by place among the chosen
+ */
+export function allScores(
+  fit: SmoothingSplineFit,
+  { observations, count }: ChosenPoints,
+  pulls: Uint8Array,
+): LotScore[] {
+  const { y, weight, lot } = observations;
+  const scores = new Array<LotScore>(pulls.length);
+  const size = new Int32Array(pulls.length);
+  for (const place of lot) size[place] += 1;
+  const others: number[] = [];
+  for (let i = 0; i < y.length; i += 1) {
+    const place = lot[i];
+    const h = fit.leverage[i];
+    if (size[place] > 1 || !(h < SAFE_LEVERAGE)) {
+      if (others[others.length - 1] !== place) others.push(place);
+      continue;
+    }
+    const stays = 1 - h;
+    const se = fit.standardError[i];
+    const residual = (y[i] - fit.fitted[i]) / stays;
+    const sd = Math.sqrt(pulls[place] === 1 ? 1 / (weight[i] * stays) : 1 / weight[i] + se * se);
+    scores[place] = { residual, sd, z: residual / sd };
+  }
+  for (const deleted of fit.deletedLots(Int32Array.from(new Set(others))))
+    scores[deleted.lot] = lotScore(deleted, count);
+  return scores;
 }

@@ -2,7 +2,7 @@ import { chooseLambda, effectivePeriod, fitSmoothingSpline, lambdaForPeriod, poi
 import type { ChosenLambda, Observations, SmoothingSplineFit } from '@app/baseline';
 import { robustScale, sampleMoments } from '@app/control';
 
-import { lotScore } from './lot-score';
+import { allScores } from './lot-score';
 import { choosePoints, segmentPoints } from './segment-points';
 import type { LotOnChannel } from './types';
 import { varianceComponents, type ComponentsEstimate } from './variance-components';
@@ -61,7 +61,7 @@ export function referenceScores(
     const smoothness = chooseSmoothness(chosen.observations, shortestPeriodSeconds, windowSeconds);
     const fit = fitSmoothingSpline(chosen.observations, smoothness.lambda);
     const z = new Array<number>(lots.length);
-    for (const deleted of fit.deletedLots()) z[chosen.lots[deleted.lot]] = lotScore(deleted, chosen.count).z;
+    allScores(fit, chosen, chosen.observations.pulls).forEach((score, place) => (z[chosen.lots[place]] = score.z));
     const { median, scale: spread } = robustScale(z.filter((_, j) => !isLeftOut[j]));
     const next = z.map((value) => !(Math.abs(value - median) <= LEAVE_OUT_BEYOND * spread));
     const isStable = next.every((flag, j) => flag === isLeftOut[j]);

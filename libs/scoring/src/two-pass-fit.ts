@@ -1,6 +1,6 @@
 import { fitSmoothingSpline, lambdaForPeriod, pointDensity, type SmoothingSplineFit } from '@app/baseline';
 
-import { lotScore, type LotScore } from './lot-score';
+import { allScores, type LotScore } from './lot-score';
 import { choosePoints, type ChosenPoints, type SegmentPoints } from './segment-points';
 import type { PlanParameters } from './types';
 
@@ -13,6 +13,8 @@ export const LOTS_PER_EDF = 3;
 export interface TwoPassFit {
   chosen: ChosenPoints;
   fit: SmoothingSplineFit;
+  /** By place among the chosen: 1 when the lot pulls the final fit. */
+  pulls: Uint8Array;
   kappa: number;
   lambda: number;
   /** Lots that pull the final fit. */
@@ -55,12 +57,13 @@ export function fitTwice(
   const lambda = lambdaOf(plan, kappa);
   const first = fitSmoothingSpline(observations, lambda);
   const staying = Uint8Array.from(observations.pulls);
-  for (const deleted of first.deletedLots())
-    if (isBeyond(lotScore(deleted, chosen.count), plan)) staying[deleted.lot] = 0;
+  const scores = allScores(first, chosen, observations.pulls);
+  for (let place = 0; place < staying.length; place += 1) if (isBeyond(scores[place], plan)) staying[place] = 0;
   const lotCount = countOnes(staying);
   if (lotCount < LEAST_LOTS) return { status: 'too-few-lots', lotCount, kappa };
   const fit = lotCount === pulling ? first : fitSmoothingSpline({ ...observations, pulls: staying }, lambda);
-  return { status: 'fitted', chosen, fit, kappa, lambda, lotCount, isLearning: !(lotCount >= LOTS_PER_EDF * fit.edf) };
+  const isLearning = !(lotCount >= LOTS_PER_EDF * fit.edf);
+  return { status: 'fitted', chosen, fit, pulls: staying, kappa, lambda, lotCount, isLearning };
 }
 
 /** The score that is compared with the limit. */
