@@ -100,9 +100,8 @@ export class RowStamps {
   private toInstant(stamp: ParsedStamp & { ms: number }, row: SheetRow, series: number, column: number): RowStamp {
     const order = this.orderOf(series);
     const candidates = stamp.kind === 'instant' || this.layout.isUtc ? [stamp.ms] : this.zone.instantsOf(stamp.ms);
-    const wall = new Date(stamp.ms).toISOString().slice(0, 16).replace('T', ' ');
     if (candidates.length === 0) {
-      const why = `says ${wall}, which does not exist: the clocks were put forward over it; correct the time`;
+      const why = `says ${wallClock(stamp.ms)}, which does not exist: the clocks were put forward over it; correct the time`;
       return { code: 'time-does-not-exist', why, column };
     }
     let at = candidates[0];
@@ -110,7 +109,7 @@ export class RowStamps {
     else {
       const choice = order.choose(candidates[0], candidates[1]);
       if (choice === null) {
-        const why = `says ${wall}, which the clocks showed twice as they were put back, and no row before it tells which; write it with its offset, such as 2025-10-26T02:30+01:00`;
+        const why = `says ${wallClock(stamp.ms)}, which the clocks showed twice as they were put back, and no row before it tells which; write it with its offset, such as 2025-10-26T02:30+01:00`;
         return { code: 'repeated-hour', why, column };
       }
       at = choice;
@@ -120,11 +119,15 @@ export class RowStamps {
         'repeated-hour-by-order',
         { sheet: this.layout.sheet, row: row.number, column },
         () =>
-          `says ${wall}, which the clocks showed twice as they were put back; by the order of the rows it is the ${pass}`,
+          `says ${wallClock(stamp.ms)}, which the clocks showed twice as they were put back; by the order of the rows it is the ${pass}`,
       );
     }
     if (at > this.now + AHEAD_TOLERANCE) {
-      return { code: 'stamp-ahead', why: `says ${wall}, which has not come yet; correct the time`, column };
+      return {
+        code: 'stamp-ahead',
+        why: `says ${wallClock(stamp.ms)}, which has not come yet; correct the time`,
+        column,
+      };
     }
     this.rows += 1;
     if (stamp.ms % DAY === 0) this.rowsAtMidnight += 1;
@@ -137,3 +140,5 @@ export class RowStamps {
     return order;
   }
 }
+
+const wallClock = (ms: number): string => new Date(ms).toISOString().slice(0, 16).replace('T', ' ');

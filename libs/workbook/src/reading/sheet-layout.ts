@@ -1,3 +1,4 @@
+import { columnLetters } from '../container/cell-names';
 import type { ChannelContext, ColumnRole } from '../types';
 import type { ChannelNames } from './channel-names';
 import type { Findings } from './findings';
@@ -7,6 +8,7 @@ import type { ColumnHabits } from './values';
 
 export interface ValueColumn {
   column: number;
+  letters: string;
   /** Null where each row names its channel. */
   channel: ChannelContext | null;
   unit: string | null;
@@ -86,7 +88,7 @@ function longValues(
   }
   return columns
     .filter((column) => !channel || isUnitRight(sheet, header.row, column, channel, findings))
-    .map(({ column, unit }) => ({ column, channel, unit, habits: { sawDecimalComma: false } }));
+    .map((column) => toValueColumn(column, channel));
 }
 
 function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels: ChannelNames): ValueColumn[] {
@@ -108,10 +110,18 @@ function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels
     }
     seen.set(channel.id, column);
     if (!isUnitRight(sheet, header.row, column, channel, findings)) continue;
-    values.push({ column: column.column, channel, unit: column.unit, habits: { sawDecimalComma: false } });
+    values.push(toValueColumn(column, channel));
   }
   return values;
 }
+
+const toValueColumn = ({ column, unit }: HeaderColumn, channel: ChannelContext | null): ValueColumn => ({
+  column,
+  letters: columnLetters(column),
+  channel,
+  unit,
+  habits: { sawDecimalComma: false },
+});
 
 function isUnitRight(
   sheet: string,
