@@ -13,7 +13,7 @@ export function loggingModule(config: Config): DynamicModule {
     pinoHttp: {
       level: isTest ? 'silent' : config.isDemo ? 'warn' : 'info',
       redact: { paths: SECRETS, remove: true },
-      genReqId: (request: IncomingMessage & { id?: string }) => request.id ?? randomUUID(),
+      genReqId: (request: IncomingMessage) => (request as { id?: string }).id ?? randomUUID(),
       customLogLevel: (_request, response, error) => (error || response.statusCode >= 500 ? 'error' : 'info'),
       serializers: {
         req: (request: { id: unknown; method: string; url: string; remoteAddress: string }) => ({
