@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import './frame.css';
 import { Header } from './header';
 import { LineNavigation } from './line-navigation';
 import { LineStrip } from './line-strip';

@@ -1,20 +1,37 @@
-import { NavLink } from 'react-router-dom';
+import { Link, NavLink, useLocation } from 'react-router-dom';
 import { useLine } from '../../shared/line-context/line-context';
 import { urls } from '../urls';
+import { heldWords, sameForLine } from './other-line';
 
-/** Within a line, in plain words. */
+/** Below the tape: the chosen line's pages in plain words, and the other lines with what is held on them. */
 export function LineNavigation() {
-  const { line } = useLine();
+  const { line, lines } = useLine();
+  const location = useLocation();
   if (line === null) return null;
+  const others = lines.filter((other) => other.id !== line.id);
   return (
-    <nav className="line-navigation" aria-label={line.name}>
-      <span className="line-navigation__line">{line.name}</span>
-      <NavLink to={urls.desk()} end>
-        Desk
-      </NavLink>
-      <NavLink to={urls.intakes(line.id)}>Intake</NavLink>
-      <NavLink to={urls.lots({ line: line.id })}>Lots</NavLink>
-      <NavLink to={urls.channels(line.id)}>Channels</NavLink>
-    </nav>
+    <div className="line-bar">
+      <nav className="line-bar__pages" aria-label={`Pages of ${line.name}`}>
+        <span className="line-bar__line" title={heldWords(line.heldCount)}>
+          {line.name}
+        </span>
+        <NavLink to={urls.desk()} end>
+          Desk
+        </NavLink>
+        <NavLink to={urls.intakes(line.id)}>Intake</NavLink>
+        <NavLink to={urls.lots({ line: line.id })}>Lots</NavLink>
+        <NavLink to={urls.channels(line.id)}>Channels</NavLink>
+      </nav>
+      {others.length > 0 && (
+        <nav className="line-bar__others" aria-label="Other lines">
+          {others.map((other) => (
+            <Link key={other.id} to={sameForLine(location, other.id)}>
+              {other.name}
+              <span className={other.heldCount > 0 ? 'line-bar__held' : 'soft'}> {heldWords(other.heldCount)}</span>
+            </Link>
+          ))}
+        </nav>
+      )}
+    </div>
   );
 }

@@ -31,10 +31,7 @@ export function asProblem(error: unknown): ApiProblem {
 }
 
 export async function problemOf(response: Response): Promise<ApiProblem> {
-  const body = await response
-    .json()
-    .then((json: unknown) => (typeof json === 'object' && json !== null ? (json as Partial<ProblemBody>) : {}))
-    .catch(() => ({}) as Partial<ProblemBody>);
+  const body = (await response.json().catch(() => null)) as Partial<ProblemBody> | null;
   return new ApiProblem({ title: titleOf(response.status), ...body, status: response.status });
 }
 

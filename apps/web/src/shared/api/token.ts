@@ -24,10 +24,15 @@ export function endSession(): void {
 
 /** Asks for a new access token; calls at the same time share one request. False: nobody is signed in. Throws when unreachable. */
 export function refreshToken(): Promise<boolean> {
-  refreshing ??= requestToken().finally(() => {
+  refreshing ??= oneTabAtATime(requestToken).finally(() => {
     refreshing = null;
   });
   return refreshing;
+}
+
+/** The cookie rotates with each use, so two tabs must not use the same one. */
+function oneTabAtATime<T>(work: () => Promise<T>): Promise<T> {
+  return 'locks' in navigator ? navigator.locks.request('ebbline.refresh', work) : work();
 }
 
 async function requestToken(): Promise<boolean> {

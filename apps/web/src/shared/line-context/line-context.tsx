@@ -15,7 +15,7 @@ interface LineContextValue {
   isLoading: boolean;
   error: unknown;
   /** Tells that the page's thing belongs to this line. */
-  showLine(lineId: number): void;
+  showLine: (lineId: number) => void;
 }
 
 const LineContext = createContext<LineContextValue | null>(null);

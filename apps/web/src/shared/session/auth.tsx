@@ -12,9 +12,9 @@ export type AuthState =
 
 interface Auth {
   state: AuthState;
-  signIn(email: string, password: string): Promise<void>;
-  signOut(): Promise<void>;
-  checkAgain(): void;
+  signIn: (email: string, password: string) => Promise<void>;
+  signOut: () => Promise<void>;
+  checkAgain: () => void;
 }
 
 const AuthContext = createContext<Auth | null>(null);

@@ -9,9 +9,9 @@ export interface Session {
   /** Lines of this plant that the person is assigned to. */
   lineIds: number[];
   /** May this person do that at this plant? The server decides; this only spares them a button. */
-  can(permission: Permission): boolean;
-  choosePlant(plantId: number): void;
-  signOut(): Promise<void>;
+  can: (permission: Permission) => boolean;
+  choosePlant: (plantId: number) => void;
+  signOut: () => Promise<void>;
 }
 
 export const SessionContext = createContext<Session | null>(null);

@@ -7,7 +7,7 @@ interface ThemeState {
   choice: ThemeChoice;
   /** What is shown now, whoever chose it. */
   shown: 'light' | 'dark';
-  choose(choice: ThemeChoice): void;
+  choose: (choice: ThemeChoice) => void;
 }
 
 const ThemeContext = createContext<ThemeState>({ choice: 'system', shown: 'light', choose: () => undefined });

@@ -1,12 +1,12 @@
 import { Toast } from 'primereact/toast';
-import { createContext, useCallback, useContext, useRef, type ReactNode } from 'react';
+import { createContext, useCallback, useContext, useMemo, useRef, type ReactNode } from 'react';
 import { asProblem } from '../api/problem';
 
 interface Notify {
   /** A sentence about something that was done. */
-  done(sentence: string): void;
+  done: (sentence: string) => void;
   /** An action without a form failed. */
-  failed(error: unknown): void;
+  failed: (error: unknown) => void;
 }
 
 const ToastContext = createContext<Notify>({ done: () => undefined, failed: () => undefined });
@@ -24,8 +24,9 @@ export function ToastProvider({ children }: { children: ReactNode }) {
     const summary = correlationId === null ? undefined : `Reference ${correlationId}`;
     toast.current?.show({ severity: 'error', className: 'toast--failed', detail, summary, life: 12_000 });
   }, []);
+  const notify = useMemo(() => ({ done, failed }), [done, failed]);
   return (
-    <ToastContext value={{ done, failed }}>
+    <ToastContext value={notify}>
       {children}
       <Toast ref={toast} position="bottom-right" />
     </ToastContext>

@@ -1,5 +1,71 @@
+import '../lots.css';
+import '../lot.css';
+import type { LotView } from '@app/contracts';
+import { useParams } from 'react-router-dom';
+import { urls } from '../../../app/urls';
+import { useShowsLine } from '../../../shared/line-context/line-context';
+import { ActionLink } from '../../../shared/ui/action';
+import { EmptyNote } from '../../../shared/ui/empty-note';
+import { Loaded } from '../../../shared/ui/loaded';
+import { Mark } from '../../../shared/ui/mark';
 import { PageHeading } from '../../../shared/ui/page-heading';
+import { Sheet } from '../../../shared/ui/sheet';
+import { Skeleton } from '../../../shared/ui/skeleton';
+import { useLot } from '../api/lots';
+import { LotHistory } from '../components/lot-history';
+import { LotLead } from '../components/lot-lead';
+import { VerdictMargin } from '../components/verdict-margin';
+import { VerdictTable } from '../components/verdict-table';
 
+/** Why did this lot get its verdict? */
 export function LotPage() {
-  return <PageHeading title="Lot" />;
+  const lotId = Number(useParams().lotId);
+  const query = useLot(lotId);
+  useShowsLine(query.data?.line.id, query.data?.plantId);
+  return (
+    <Loaded
+      query={query}
+      failure="The lot could not be loaded."
+      skeleton={<Skeleton lines={9} label="Loading the lot" />}
+    >
+      {(lot) => <LotContent lot={lot} />}
+    </Loaded>
+  );
+}
+
+function LotContent({ lot }: { lot: LotView }) {
+  const isHeld = lot.hold?.state === 'open';
+  return (
+    <>
+      <PageHeading
+        title={`Lot ${lot.number}`}
+        before={<Mark mark={lot.mark} size={26} />}
+        lead={<LotLead lot={lot} />}
+        tools={
+          lot.hold !== null && (
+            <ActionLink kind={isHeld ? 'main' : 'quiet'} to={urls.hold(lot.hold.id)}>
+              {isHeld ? 'Open the hold' : 'Read the decided hold'}
+            </ActionLink>
+          )
+        }
+      />
+      <Sheet
+        title="Verdict on each channel"
+        tone={isHeld ? 'held' : 'plain'}
+        margin={<VerdictMargin verdicts={lot.verdicts} />}
+        isFlush
+      >
+        {lot.verdicts.length === 0 ? (
+          <div className="lots__empty">
+            <EmptyNote>No channel has judged this lot yet. Verdicts appear once its workbook is scored.</EmptyNote>
+          </div>
+        ) : (
+          <VerdictTable lot={lot} />
+        )}
+      </Sheet>
+      <Sheet title="History" margin={<p>What happened to the lot, and by whose hand. Nothing is overwritten.</p>}>
+        <LotHistory lot={lot} />
+      </Sheet>
+    </>
+  );
 }

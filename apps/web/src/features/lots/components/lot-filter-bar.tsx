@@ -1,0 +1,104 @@
+import { Dropdown } from 'primereact/dropdown';
+import { InputText } from 'primereact/inputtext';
+import { useEffect, useState } from 'react';
+import type { LotFilters } from '../../../app/urls';
+import { useLine } from '../../../shared/line-context/line-context';
+import { Action } from '../../../shared/ui/action';
+import { HELD_CHOICES, isNarrowed, STATE_CHOICES } from '../filters';
+
+interface LotFilterBarProps {
+  filters: LotFilters;
+  onChange: (next: Partial<LotFilters>) => void;
+}
+
+export function LotFilterBar({ filters, onChange }: LotFilterBarProps) {
+  const { lines } = useLine();
+  const lineChoices = [
+    { value: '', label: 'all lines' },
+    ...lines.map((line) => ({ value: String(line.id), label: line.name })),
+  ];
+  return (
+    <form className="filters" role="search" aria-label="Filter the lots" onSubmit={(event) => event.preventDefault()}>
+      <LotText key={filters.text ?? ''} text={filters.text ?? ''} onChange={(text) => onChange({ text })} />
+      <Choice
+        label="Line"
+        value={filters.line == null ? '' : String(filters.line)}
+        choices={lineChoices}
+        onChange={(value) => onChange({ line: value === '' ? null : Number(value) })}
+      />
+      <Choice
+        label="Verdict"
+        value={filters.state ?? ''}
+        choices={STATE_CHOICES}
+        onChange={(state) => onChange({ state })}
+      />
+      <Choice label="Hold" value={filters.held ?? ''} choices={HELD_CHOICES} onChange={(held) => onChange({ held })} />
+      <Day label="From" value={filters.from} onChange={(from) => onChange({ from })} />
+      <Day label="To" value={filters.to} onChange={(to) => onChange({ to })} />
+      {isNarrowed(filters) && (
+        <Action kind="plain" onPress={() => onChange({ state: null, held: null, from: null, to: null, text: null })}>
+          Take the filters away
+        </Action>
+      )}
+    </form>
+  );
+}
+
+const TYPING_PAUSE_MS = 350;
+
+/** Asks once typing pauses. */
+function LotText({ text, onChange }: { text: string; onChange: (text: string) => void }) {
+  const [draft, setDraft] = useState(text);
+  useEffect(() => {
+    if (draft === text) return;
+    const timer = setTimeout(() => onChange(draft), TYPING_PAUSE_MS);
+    return () => clearTimeout(timer);
+  }, [draft, text, onChange]);
+  return (
+    <label className="filters__field filters__field--text">
+      <span>Lot or product</span>
+      <InputText type="search" value={draft} onChange={(event) => setDraft(event.target.value)} />
+    </label>
+  );
+}
+
+interface ChoiceProps {
+  label: string;
+  value: string;
+  choices: { value: string; label: string }[];
+  onChange: (value: string) => void;
+}
+
+function Choice({ label, value, choices, onChange }: ChoiceProps) {
+  const inputId = `filter-${label.toLowerCase()}`;
+  return (
+    <div className="filters__field">
+      <label htmlFor={inputId}>{label}</label>
+      <Dropdown
+        inputId={inputId}
+        value={value}
+        options={choices}
+        optionLabel="label"
+        optionValue="value"
+        onChange={(event) => onChange(String(event.value))}
+      />
+    </div>
+  );
+}
+
+function Day({
+  label,
+  value,
+  onChange,
+}: {
+  label: string;
+  value?: string | null;
+  onChange: (day: string | null) => void;
+}) {
+  return (
+    <label className="filters__field filters__field--day">
+      <span>{label}</span>
+      <InputText type="date" value={value ?? ''} onChange={(event) => onChange(event.target.value || null)} />
+    </label>
+  );
+}

@@ -1,0 +1,72 @@
+import { withQuery, type LotFilters } from '../../app/urls';
+import { plantInstant } from '../../shared/time/plant-time';
+
+export const PAGE_SIZE = 50;
+export const NEWEST_FIRST = '-startsAt';
+
+export const STATE_CHOICES = [
+  { value: '', label: 'any verdict' },
+  { value: 'outside_control_limits', label: 'outside control limits' },
+  { value: 'outside_specification', label: 'outside specification' },
+  { value: 'not_scored', label: 'not scored' },
+  { value: 'within_control_limits', label: 'within control limits' },
+];
+
+export const HELD_CHOICES = [
+  { value: '', label: 'held or not' },
+  { value: 'open', label: 'held now' },
+  { value: 'decided', label: 'held and decided' },
+  { value: 'never', label: 'never held' },
+];
+
+const DAY = /^\d{4}-\d{2}-\d{2}$/;
+
+/** The filters that an address holds; what is malformed is not set. */
+export function filtersIn(search: URLSearchParams): LotFilters {
+  const line = search.get('line');
+  const page = Number(search.get('page'));
+  return {
+    line: line !== null && /^\d+$/.test(line) ? Number(line) : null,
+    state: known(search.get('state'), STATE_CHOICES),
+    held: known(search.get('held'), HELD_CHOICES),
+    from: day(search.get('from')),
+    to: day(search.get('to')),
+    text: search.get('text'),
+    sort: search.get('sort') ?? NEWEST_FIRST,
+    page: Number.isInteger(page) && page > 1 ? page : 1,
+  };
+}
+
+const known = (value: string | null, choices: { value: string }[]) =>
+  choices.some((choice) => choice.value === value) ? value : null;
+const day = (value: string | null) => (value !== null && DAY.test(value) ? value : null);
+
+/** Filters that narrow the list at all, the line and order aside. */
+export function isNarrowed(filters: LotFilters): boolean {
+  return [filters.state, filters.held, filters.from, filters.to, filters.text].some(
+    (value) => value !== null && value !== undefined && value !== '',
+  );
+}
+
+/** The API's query for these filters. Days are the plant's own; `to` takes in its whole day. */
+export function lotsPath(filters: LotFilters, plant: { id: number; timeZone: string }, format?: 'xlsx'): string {
+  return withQuery('/lots', {
+    plantId: plant.id,
+    lineId: filters.line,
+    state: filters.state,
+    held: filters.held,
+    from: filters.from ? plantInstant(filters.from, '00:00', plant.timeZone) : null,
+    to: filters.to ? plantInstant(dayAfter(filters.to), '00:00', plant.timeZone) : null,
+    text: filters.text?.trim(),
+    sort: filters.sort,
+    page: format === undefined ? filters.page : null,
+    pageSize: format === undefined ? PAGE_SIZE : null,
+    format,
+  });
+}
+
+export function dayAfter(date: string): string {
+  const next = new Date(`${date}T00:00:00Z`);
+  next.setUTCDate(next.getUTCDate() + 1);
+  return next.toISOString().slice(0, 10);
+}
