@@ -17,48 +17,70 @@ export const DENSITY_QUANTILE = 0.9;
 export function pointDensity(t: Float64Array, weight: Float64Array, periodSeconds: number): number {
   const n = t.length;
   checkDensityInput(t, weight, periodSeconds);
+  let total = 0;
+  const before = new Float64Array(n + 1);
+  for (let i = 0; i < n; i++) before[i + 1] = total += weight[i];
   const positions = t[n - 1] - t[0] - periodSeconds;
-  if (!(positions > 0)) return sum(weight, 0, n) / periodSeconds;
-  // As the span slides right, points leave at s = t[i] (just after) and enter at s = t[i] - T (just after): between such instants the sum is constant.
-  const length: number[] = [];
-  const content: number[] = [];
+  if (!(positions > 0)) return total / periodSeconds;
+  // A point leaves as s passes t[i] and enters as s passes t[i] - T: between two such instants the sum is constant.
+  const content = new Float64Array(2 * n + 1);
+  const length = new Float64Array(2 * n + 1);
+  let count = 0;
   let first = 0;
   let end = 0;
-  let s = 0;
-  while (s < positions) {
+  for (let s = 0; s < positions; count++) {
     while (t[first] - t[0] <= s && s > 0) first++;
     while (end < n && t[end] - t[0] - periodSeconds <= s) end++;
     const leaves = t[first] - t[0];
     const enters = end < n ? t[end] - t[0] - periodSeconds : Infinity;
     const next = Math.min(leaves > s ? leaves : Infinity, enters, positions);
-    length.push(next - s);
-    content.push(first);
-    content.push(end);
+    length[count] = next - s;
+    content[count] = before[end] - before[first];
     s = next;
   }
-  return quantileOfSpans(weight, length, content) / periodSeconds;
+  return weightedQuantile(content, length, count, DENSITY_QUANTILE * positions) / periodSeconds;
 }
 
-function quantileOfSpans(weight: Float64Array, length: number[], content: number[]): number {
-  const cumulative = new Float64Array(weight.length + 1);
-  for (let i = 0; i < weight.length; i++) cumulative[i + 1] = cumulative[i] + weight[i];
-  const order = length.map((_, i) => i);
-  const value = length.map((_, i) => cumulative[content[2 * i + 1]] - cumulative[content[2 * i]]);
-  order.sort((i, j) => value[i] - value[j] || i - j);
-  const total = length.reduce((x, y) => x + y, 0);
-  let reached = 0;
-  for (const i of order) {
-    reached += length[i];
-    if (reached >= DENSITY_QUANTILE * total) return sum(weight, content[2 * i], content[2 * i + 1]);
+/** Smallest of the first n values whose shares, with those of all smaller values, reach `wanted`. Selects in place, O(n) on average. */
+function weightedQuantile(value: Float64Array, share: Float64Array, n: number, wanted: number): number {
+  let from = 0;
+  let to = n;
+  let below = 0;
+  while (to - from > 1) {
+    const pivot = value[(from + to) >>> 1];
+    let low = from;
+    let high = to;
+    let lowShare = 0;
+    let equalShare = 0;
+    for (let i = from; i < high;) {
+      if (value[i] < pivot) {
+        lowShare += share[i];
+        swap(value, share, i++, low++);
+      } else if (value[i] > pivot) {
+        swap(value, share, i, --high);
+      } else {
+        equalShare += share[i++];
+      }
+    }
+    if (below + lowShare >= wanted && low > from) {
+      to = low;
+    } else if (below + lowShare + equalShare >= wanted || high === to) {
+      return pivot;
+    } else {
+      below += lowShare + equalShare;
+      from = high;
+    }
   }
-  const i = order[order.length - 1];
-  return sum(weight, content[2 * i], content[2 * i + 1]);
+  return value[from];
 }
 
-function sum(x: Float64Array, from: number, to: number): number {
-  let total = 0;
-  for (let i = from; i < to; i++) total += x[i];
-  return total;
+function swap(value: Float64Array, share: Float64Array, i: number, j: number): void {
+  const v = value[i];
+  const s = share[i];
+  value[i] = value[j];
+  share[i] = share[j];
+  value[j] = v;
+  share[j] = s;
 }
 
 function checkDensityInput(t: Float64Array, weight: Float64Array, periodSeconds: number): void {

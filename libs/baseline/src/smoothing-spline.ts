@@ -149,15 +149,26 @@ class FittedSpline implements SmoothingSplineFit {
     const deleter = new LotDeleter(this.filtered);
     const lotCount = obs.pulls.length;
     const count = lots === undefined ? lotCount : lots.length;
-    const result: DeletedLot[] = [];
+    let points = 0;
+    let squares = 0;
     for (let k = 0; k < count; k++) {
       const lot = lots === undefined ? k : lots[k];
       if (!(lot >= 0 && lot < lotCount)) throw new BaselineError('bad-argument', `There is no lot ${lot}.`);
       const m = lotStart[lot + 1] - lotStart[lot];
-      const residual = new Float64Array(m);
-      const covariance = new Float64Array(m * m);
+      points += m;
+      squares += m * m;
+    }
+    const indices = pointsByLot.slice();
+    const residuals = new Float64Array(points);
+    const covariances = new Float64Array(squares);
+    const result: DeletedLot[] = [];
+    for (let k = 0, p = 0, s = 0; k < count; k++) {
+      const lot = lots === undefined ? k : lots[k];
+      const m = lotStart[lot + 1] - lotStart[lot];
+      const residual = residuals.subarray(p, (p += m));
+      const covariance = covariances.subarray(s, (s += m * m));
       deleter.delete(lot, residual, covariance);
-      result.push({ lot, indices: pointsByLot.slice(lotStart[lot], lotStart[lot + 1]), residual, covariance });
+      result.push({ lot, indices: indices.subarray(lotStart[lot], lotStart[lot + 1]), residual, covariance });
     }
     return result;
   }
