@@ -15,3 +15,4 @@ export type {
 } from './plan-proposal';
 export { judgeSegment } from './judge-segment';
 export type { SegmentInput } from './segment-input';
+export { METHOD_VERSION } from './version';
