@@ -1,4 +1,4 @@
-import { formatNumber } from '@app/contracts';
+import { decimalsOf, formatNumber } from '@app/contracts';
 import uPlot from 'uplot';
 import type { ChartTheme } from './chart-theme';
 import { drawEndWords } from './end-words';
@@ -80,8 +80,8 @@ export function chartOptions(frame: ChartFrame, size: { width: number; height: n
         gap: 6,
         space: 28,
         values: (_, splits, _axis, _space, step) => {
-          const decimals = Math.max(0, Math.ceil(-Math.log10(step) - 1e-9));
-          return splits.map((value) => formatNumber(value, Math.min(decimals, 6)));
+          const decimals = decimalsOf(step);
+          return splits.map((value) => formatNumber(value, decimals));
         },
       },
     ],

@@ -29,24 +29,27 @@ interface PaneStackProps {
   height: number;
   /** What the drawing shows, for those who do not see it. */
   label: string;
-  onRange: (range: TimeRange) => void;
+  /** Neither pans nor zooms; bounds and range are then the same. */
+  isStill?: boolean;
+  onRange?: (range: TimeRange) => void;
   onCursor?: (at: number | null) => void;
   onPick?: (at: number, isTouch: boolean) => void;
 }
 
 const NARROW_PX = 560;
+const stay = () => undefined;
 /** Room for the value axis at the left and for the lines' words at the right. */
 export const guttersOf = (width: number) => (width < NARROW_PX ? { left: 44, right: 78 } : { left: 56, right: 138 });
 
 /** Panes over one time axis, with one cursor, panned and zoomed together. */
-export function PaneStack({ panes, range, bounds, home, zone, height, label, ...on }: PaneStackProps) {
+export function PaneStack({ panes, range, bounds, home, zone, height, label, isStill = false, ...on }: PaneStackProps) {
   const element = useRef<HTMLDivElement>(null);
   const width = useWidth(element);
   const theme = useChartTheme();
   const syncKey = useId();
   const gutters = guttersOf(width);
   const whole = useMemo(() => clampRange(range, bounds), [range, bounds]);
-  const { onRange, onPick } = on;
+  const { onRange = stay, onPick } = on;
   const chosen = useRangeGestures(element, { range: whole, bounds, home, gutters, onRange, onPick });
   const shares = panes.reduce((sum, pane) => sum + pane.share, 0);
   const hintId = useId();
@@ -55,10 +58,10 @@ export function PaneStack({ panes, range, bounds, home, zone, height, label, ...
       <div
         ref={element}
         className="pane-stack"
-        role="application"
-        tabIndex={0}
+        role={isStill ? 'img' : 'application'}
+        tabIndex={isStill ? undefined : 0}
         aria-label={label}
-        aria-describedby={hintId}
+        aria-describedby={isStill ? undefined : hintId}
       >
         {width > 0 &&
           panes.map((pane, i) => (
@@ -83,7 +86,7 @@ export function PaneStack({ panes, range, bounds, home, zone, height, label, ...
           />
         )}
       </div>
-      <p id={hintId} className="pane-stack-hint">
+      <p id={hintId} className="pane-stack-hint" hidden={isStill}>
         Drag or arrow keys pan; the wheel, <kbd>+</kbd> and <kbd>−</kbd> zoom; Shift and drag zooms into a span;{' '}
         <kbd>0</kbd> goes back.
       </p>

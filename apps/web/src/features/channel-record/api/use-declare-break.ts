@@ -1,7 +1,7 @@
 import type { BreakKind, BreakView, Instant } from '@app/contracts';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { apiSend } from '../../../shared/api/client';
-import { channelKeys } from './keys';
+import { channelKeys } from '../../../shared/record/channel-keys';
 
 export interface BreakRequest {
   at: Instant;

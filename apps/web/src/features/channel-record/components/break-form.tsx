@@ -8,7 +8,7 @@ import { formatInstant, plantDay, plantInstant } from '../../../shared/time/plan
 import { Action } from '../../../shared/ui/action';
 import { useToast } from '../../../shared/ui/toast';
 import { useDeclareBreak } from '../api/use-declare-break';
-import { BREAK_WORDS } from './record-words';
+import { BREAK_WORDS } from '../../../shared/record/record-words';
 
 interface BreakFields {
   day: string;

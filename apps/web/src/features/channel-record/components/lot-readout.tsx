@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom';
 import { urls } from '../../../app/urls';
 import { Mark } from '../../../shared/ui/mark';
 import { When } from '../../../shared/ui/when';
-import { lotFigures } from './record-words';
+import { lotFigures } from '../../../shared/record/record-words';
 
 interface LotReadoutProps {
   lot: RecordLot | null;

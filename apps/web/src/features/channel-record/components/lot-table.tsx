@@ -9,9 +9,9 @@ import { FoldingTable, type FoldingColumn } from '../../../shared/ui/folding-tab
 import { Mark } from '../../../shared/ui/mark';
 import { markWords } from '../../../shared/ui/mark-words';
 import { When } from '../../../shared/ui/when';
-import { limitsText, scoreText } from './record-words';
+import { limitsText, scoreText } from '../../../shared/record/record-words';
 
-const STEP = 100;
+const STEP = 50;
 
 /** The figures of the panes as a table, newest lot first. */
 export function LotTable({ record, range }: { record: RecordView; range: TimeRange }) {

@@ -9,7 +9,7 @@ import type { TimeRange } from '../../../shared/chart/range';
 import { useLiveRange } from '../../../shared/chart/use-live-range';
 import { useSession } from '../../../shared/session/session';
 import { formatInstant } from '../../../shared/time/plant-time';
-import { useChannelRecord } from '../api/use-channel-record';
+import { useChannelRecord } from '../../../shared/record/use-channel-record';
 import { LotReadout } from './lot-readout';
 import { recordPanes } from './record-panes';
 

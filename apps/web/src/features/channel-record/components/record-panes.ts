@@ -1,4 +1,4 @@
-import { formatNumber, type RecordLot, type RecordView } from '@app/contracts';
+import type { RecordLot, RecordView } from '@app/contracts';
 import type { PanePlugin } from '../../../shared/chart/pane-plugin';
 import type { Pane } from '../../../shared/chart/pane-stack';
 import { band } from '../../../shared/chart/plugins/band';
@@ -8,23 +8,24 @@ import { levelLimit, stepLimit } from '../../../shared/chart/plugins/limits';
 import { lotMarks } from '../../../shared/chart/plugins/lot-marks';
 import { readingColumns } from '../../../shared/chart/plugins/reading-columns';
 import { stepsOf } from '../../../shared/chart/step-line';
-import { breakWords, signed } from './record-words';
+import { breakWords, signed } from '../../../shared/record/record-words';
+import { scorePlugins, silentBreaks } from '../../../shared/record/score-plugins';
 
 /** The three panes of a channel's record. `shown` is the lot under the pointer, shaded through all of them. */
 export function recordPanes(record: RecordView, shown: RecordLot | null): Pane[] {
   const { name, unit, resolution } = record.channel.characteristic;
   const marker: PanePlugin[] = shown === null ? [] : [highlight(shown.startsAt, shown.endsAt)];
-  const shares = { key: '', leastHeight: 8 * resolution };
+  const leastHeight = 8 * resolution;
   return [
     {
-      ...shares,
+      leastHeight,
       key: 'readings',
       unit: `${name}: readings less nominal, ${unit}`,
       share: 5,
       plugins: [...marker, ...readingPlugins(record)],
     },
     {
-      ...shares,
+      leastHeight,
       key: 'means',
       unit: `Lot means less nominal, ${unit}`,
       share: 3,
@@ -42,12 +43,10 @@ export function recordPanes(record: RecordView, shown: RecordLot | null): Pane[]
 
 const nominalLine = levelLimit(0, {
   token: 'rule-meaning',
+  wordToken: 'ink-soft',
   word: () => ({ text: 'nominal', short: 'nominal' }),
   isIncidental: true,
 });
-const silentBreaks = (record: RecordView) =>
-  breakRules(record.breaks.map(({ at }) => ({ at: Date.parse(at), words: null })));
-
 function readingPlugins(record: RecordView): PanePlugin[] {
   return [
     nominalLine,
@@ -57,7 +56,7 @@ function readingPlugins(record: RecordView): PanePlugin[] {
   ];
 }
 
-function meanPlugins({ lots, channel, ...record }: RecordView): PanePlugin[] {
+function meanPlugins({ lots, channel, breaks }: RecordView): PanePlugin[] {
   const less = (lot: RecordLot, value: number | null) => (value === null ? null : value - lot.nominal);
   const limit = (of: (lot: RecordLot) => number | null) =>
     stepsOf(lots.map((lot) => ({ startsAt: lot.startsAt, endsAt: lot.endsAt, value: rounded(less(lot, of(lot))) })));
@@ -78,28 +77,10 @@ function meanPlugins({ lots, channel, ...record }: RecordView): PanePlugin[] {
       limit((lot) => lot.upperSpecification),
       line,
     ),
-    silentBreaks({ lots, channel, ...record }),
+    silentBreaks({ breaks }),
     lotMarks(lots.map((lot) => ({ at: lot.at, value: less(lot, lot.mean), mark: lot.mark }))),
   ];
 }
 
 /** Differences of decimal numbers, such as 42.4 − 42, are equal again once their last binary digits are cut. */
 const rounded = (value: number | null) => (value === null ? null : Number(value.toPrecision(9)));
-
-function scorePlugins(record: RecordView): PanePlugin[] {
-  const { limit, lots } = record;
-  const word = (value: number) => {
-    const text = `${value > 0 ? '+' : ''}${formatNumber(value, 1)}`;
-    return { text: `control limit ${text}`, short: `limit ${text}` };
-  };
-  const limits =
-    limit === null
-      ? []
-      : [limit, -limit].map((value) => levelLimit(value, { token: 'ink-soft', word, isDashed: true }));
-  return [
-    levelLimit(0, { token: 'baseline', word: () => ({ text: 'baseline', short: 'baseline' }) }),
-    ...limits,
-    silentBreaks(record),
-    lotMarks(lots.map((lot) => ({ at: lot.at, value: lot.score, mark: lot.mark }))),
-  ];
-}

@@ -12,7 +12,7 @@ import { Sheet } from '../../../shared/ui/sheet';
 import { Skeleton } from '../../../shared/ui/skeleton';
 import { urls } from '../../../app/urls';
 import { columnsFor, parseRange, withMargin } from '../api/record-range';
-import { useChannelRecord } from '../api/use-channel-record';
+import { useChannelRecord } from '../../../shared/record/use-channel-record';
 import { BreakForm } from '../components/break-form';
 import { LotTable } from '../components/lot-table';
 import { RecordChart } from '../components/record-chart';

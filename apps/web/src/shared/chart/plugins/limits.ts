@@ -6,6 +6,8 @@ export interface LimitLine {
   token: ColourToken;
   /** Stands at the line's right end, `short` where there is little room. */
   word: (value: number) => { text: string; short: string };
+  /** Colour of the word, where the line's own is too faint to read. */
+  wordToken?: ColourToken;
   isDashed?: boolean;
   /** Drawn where it happens to lie: the value axis does not stretch to hold it. */
   isIncidental?: boolean;
@@ -15,7 +17,7 @@ export interface LimitLine {
 export function levelLimit(value: number, line: LimitLine): PanePlugin {
   return {
     span: () => (line.isIncidental ? null : { low: value, high: value }),
-    words: () => [{ value, ...line.word(value), token: line.token }],
+    words: () => [{ value, ...line.word(value), token: line.wordToken ?? line.token }],
     draw({ ctx, ratio, left, width, theme, y }) {
       ctx.strokeStyle = theme.colour(line.token);
       ctx.lineWidth = ratio;
@@ -37,7 +39,9 @@ export function stepLimit(steps: readonly Step[], line: LimitLine): PanePlugin {
     },
     words(from, to): EndWord[] {
       const last = lastStepWithin(steps, from, to);
-      return last === undefined ? [] : [{ value: last.value, ...line.word(last.value), token: line.token }];
+      return last === undefined
+        ? []
+        : [{ value: last.value, ...line.word(last.value), token: line.wordToken ?? line.token }];
     },
     draw({ ctx, ratio, from, to, theme, x, y }) {
       ctx.strokeStyle = theme.colour(line.token);

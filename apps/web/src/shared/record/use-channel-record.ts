@@ -1,9 +1,9 @@
 import type { RecordView } from '@app/contracts';
 import { useQuery } from '@tanstack/react-query';
-import { withQuery } from '../../../app/urls';
-import { apiGet } from '../../../shared/api/client';
-import type { TimeRange } from '../../../shared/chart/range';
-import { channelKeys } from './keys';
+import { withQuery } from '../../app/urls';
+import { apiGet } from '../api/client';
+import type { TimeRange } from '../chart/range';
+import { channelKeys } from './channel-keys';
 
 const iso = (at: number) => new Date(Math.round(at)).toISOString();
 

@@ -7,7 +7,7 @@ import {
   type Characteristic,
   type RecordLot,
 } from '@app/contracts';
-import { markWords } from '../../../shared/ui/mark-words';
+import { markWords } from '../ui/mark-words';
 
 export const BREAK_WORDS: Record<BreakKind, string> = {
   adjustment: 'adjustment',

@@ -1,0 +1,5 @@
+import { PageHeading } from '../../../shared/ui/page-heading';
+
+export function PlanPage() {
+  return <PageHeading title="…" />;
+}
