@@ -130,7 +130,6 @@ describe('the chosen lambda', () => {
       [0, 1, 3],
       [0, 1, 2, 4],
     ]) {
-      // prettier-ignore
       for (const rule of rules) {
         const chosen = chooseLambda(observations(t, [1, 3, 2, 4].slice(0, t.length)), { ...rule, floorLambda: 1e-3 });
         expect(Number.isFinite(chosen.lambda) && chosen.lambda >= 1e-3).toBe(true);
@@ -160,5 +159,10 @@ function noisyWave(n: number): Observations {
   const uniform = lcg(31);
   const t = Array.from({ length: n }, (_, i) => i * 600);
   const y = t.map((_, i) => 3 * Math.sin((9.42 * i) / n) + uniform() + uniform() + uniform() - 1.5);
-  return observations(t, y, undefined, t.map(() => 4)); // prettier-ignore
+  return observations(
+    t,
+    y,
+    undefined,
+    t.map(() => 4),
+  );
 }

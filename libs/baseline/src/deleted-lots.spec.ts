@@ -68,7 +68,11 @@ describe('a lot against the fit without it agrees with a refit by dense algebra'
   it('for lots that share times with others and with themselves', () => {
     const t = [0, 0, 0, 1, 1, 2, 3, 3, 4, 6, 6, 6, 7];
     const lot = [0, 1, 0, 1, 2, 2, 3, 3, 4, 5, 4, 5, 6];
-    const obs = observations(t, t.map((x, i) => Math.sin(x) + 0.1 * ((i * 7) % 5)), lot); // prettier-ignore
+    const obs = observations(
+      t,
+      t.map((x, i) => Math.sin(x) + 0.1 * ((i * 7) % 5)),
+      lot,
+    );
     for (const lambda of LAMBDAS) expect(worstAgainstRefits(obs, lambda)).toBeLessThan(1e-8);
   });
 });

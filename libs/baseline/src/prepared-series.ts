@@ -77,9 +77,23 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   const lineSlope = slope / timeScale;
   const lineTime = u0 * timeScale;
   return {
-    obs, n, gap, pull, r, timeScale, weightScale, totalWeight, pullCount,
-    lineLevel, lineSlope, lineTime, lineRss, sumSquares, pointsByLot, lotStart,
-  }; // prettier-ignore
+    obs,
+    n,
+    gap,
+    pull,
+    r,
+    timeScale,
+    weightScale,
+    totalWeight,
+    pullCount,
+    lineLevel,
+    lineSlope,
+    lineTime,
+    lineRss,
+    sumSquares,
+    pointsByLot,
+    lotStart,
+  };
 }
 
 function sortByLot(lot: Int32Array, lotCount: number): { pointsByLot: Int32Array; lotStart: Int32Array } {

@@ -35,8 +35,18 @@ describe.each(Object.entries(reference<RReference>('r-smooth-spline.json').serie
       const fit = fitSmoothingSpline(observations(x, y, undefined, w), lambda);
       const leverage = distinct.map((v) => sum([...fit.leverage].filter((_, i) => x[i] === v)));
       const scale = rangeOf(y);
-      expect(worstDifference(first.map((i) => fit.fitted[i]), expected.fitted)).toBeLessThan(1e-4 * scale); // prettier-ignore
-      expect(worstDifference(first.map((i) => fit.slope[i]), expected.slope)).toBeLessThan(5e-3 * rangeOf(expected.slope) + (1e-4 * scale) / rangeOf(x)); // prettier-ignore
+      expect(
+        worstDifference(
+          first.map((i) => fit.fitted[i]),
+          expected.fitted,
+        ),
+      ).toBeLessThan(1e-4 * scale);
+      expect(
+        worstDifference(
+          first.map((i) => fit.slope[i]),
+          expected.slope,
+        ),
+      ).toBeLessThan(5e-3 * rangeOf(expected.slope) + (1e-4 * scale) / rangeOf(x));
       expect(worstDifference(leverage, expected.leverage)).toBeLessThan(alpha > 1e-6 ? 3e-4 : 4e-4);
       expect(fit.edf).toBeCloseTo(expected.df, 1);
       expect(Math.abs(fit.weightedRss / expected.weightedRss - 1)).toBeLessThan(1e-3);
@@ -52,7 +62,12 @@ describe.each(Object.entries(reference<SciPyReference>('scipy-smoothing-spline.j
       const scale = rangeOf(y);
       expect(worstDifference(fit.fitted, expected.fitted)).toBeLessThan(1e-7 * scale);
       expect(worstDifference(fit.slope, expected.slope)).toBeLessThan((1e-6 * scale * x.length) / rangeOf(x));
-      expect(worstDifference(middle.map((t) => fit.at(t).value), expected.middle)).toBeLessThan(1e-7 * scale); // prettier-ignore
+      expect(
+        worstDifference(
+          middle.map((t) => fit.at(t).value),
+          expected.middle,
+        ),
+      ).toBeLessThan(1e-7 * scale);
     });
   },
 );

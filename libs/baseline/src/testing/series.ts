@@ -37,5 +37,11 @@ export function wavySeries(
   }
   const y = t.map((x) => 3 + 0.1 * x + Math.sin((6 * x) / t[n - 1]) + uniform() - 0.5);
   const weight = t.map(() => 0.5 + 2 * uniform());
-  return observations(t, y, t.map((_, i) => lotOf(i)), weight, idle); // prettier-ignore
+  return observations(
+    t,
+    y,
+    t.map((_, i) => lotOf(i)),
+    weight,
+    idle,
+  );
 }
