@@ -33,6 +33,7 @@ export async function up(knex: Knex): Promise<void> {
       confirmed_by bigint constraint intakes_confirmer_fkey references people,
       confirmed_at timestamptz,
       readings_stored_at timestamptz,
+      channel_ids bigint[],
       scored_at timestamptz,
       constraint intakes_line_fkey foreign key (plant_id, line_id) references lines (plant_id, id),
       constraint intakes_layout_fkey foreign key (plant_id, layout_id) references layouts (plant_id, id),
@@ -47,6 +48,8 @@ export async function up(knex: Knex): Promise<void> {
     comment on table intakes is 'An uploaded workbook on its way.';
     comment on column intakes.report is 'What was recognised: columns, lots, first rows, as read.';
     comment on column intakes.rows_read is 'Data rows of the workbook = used + already there + not used, once its readings are stored.';
+
+    comment on column intakes.channel_ids is 'Channels on which it brought new readings; set with readings_stored_at.';
 
     create table intake_bytes (
       intake_id bigint primary key,

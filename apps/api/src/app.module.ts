@@ -1,9 +1,18 @@
 import { type DynamicModule, Module, type Type } from '@nestjs/common';
 import { APP_FILTER, APP_PIPE } from '@nestjs/core';
-import { type Clock, type Config, PlatformModule } from '@app/platform';
+import { type Clock, type Config, PlatformModule, QueueModule } from '@app/platform';
 import { AccessModule } from './access/access.module';
 import { AuthModule } from './auth/auth.module';
+import { BreaksModule } from './breaks/breaks.module';
+import { ChannelsModule } from './channels/channels.module';
+import { DecisionsModule } from './decisions/decisions.module';
+import { DeskModule } from './desk/desk.module';
 import { HealthModule } from './health/health.module';
+import { HoldsModule } from './holds/holds.module';
+import { IntakesModule } from './intakes/intakes.module';
+import { LotsModule } from './lots/lots.module';
+import { PlansModule } from './plans/plans.module';
+import { PlantsModule } from './plants/plants.module';
 import { loggingModule } from './platform/logging.module';
 import { ProblemFilter } from './platform/problem.filter';
 import { createValidationPipe } from './platform/validation';
@@ -20,10 +29,20 @@ export class AppModule {
       module: AppModule,
       imports: [
         PlatformModule.register(config, clock),
+        QueueModule.register(),
         loggingModule(config),
         AccessModule,
         AuthModule,
         HealthModule,
+        PlantsModule,
+        ChannelsModule,
+        LotsModule,
+        HoldsModule,
+        DeskModule,
+        IntakesModule,
+        DecisionsModule,
+        BreaksModule,
+        PlansModule,
         ...extraImports,
       ],
       providers: [

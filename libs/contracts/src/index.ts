@@ -11,3 +11,4 @@ export * from './api/intakes';
 export * from './api/lots';
 export * from './api/holds';
 export * from './api/plans';
+export * from './decision-rights';

@@ -9,6 +9,7 @@ export interface HoldForDecision {
   lotId: number;
   lotNumber: string;
   quantity: number | null;
+  quantityUnit: string | null;
   state: 'open' | 'decided';
   evidenceVersion: number;
   engineerMayRelease: boolean;
@@ -21,7 +22,7 @@ export interface HoldForDecision {
 
 const SELECT = `
   select h.id, h.plant_id as "plantId", h.line_id as "lineId", n.name as "lineName", h.lot_id as "lotId", l.number as "lotNumber",
-    l.quantity, h.state, h.evidence_version as "evidenceVersion", p.engineer_may_release as "engineerMayRelease",
+    l.quantity, l.quantity_unit as "quantityUnit", h.state, h.evidence_version as "evidenceVersion", p.engineer_may_release as "engineerMayRelease",
     not exists (select 1 from hold_causes c where c.hold_id = h.id and c.signal <> 'lot_mean') as "isForControlLimitsAlone",
     array(select distinct i.confirmed_by from hold_causes c join intakes i on i.id = c.intake_id
       where c.hold_id = h.id and i.confirmed_by is not null) as "confirmerIds",

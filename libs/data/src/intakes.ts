@@ -25,6 +25,7 @@ export interface IntakeRow {
   confirmedByName: string | null;
   confirmedAt: Date | null;
   readingsStoredAt: Date | null;
+  channelIds: number[] | null;
   scoredAt: Date | null;
 }
 
@@ -43,7 +44,7 @@ const COLUMNS = `
   i.rows_already_there as "rowsAlreadyThere", i.rows_not_used as "rowsNotUsed", i.readings_stored as "readingsStored",
   i.readings_already_there as "readingsAlreadyThere", i.received_by as "receivedBy", r.name as "receivedByName",
   i.received_at as "receivedAt", i.confirmed_by as "confirmedBy", c.name as "confirmedByName", i.confirmed_at as "confirmedAt",
-  i.readings_stored_at as "readingsStoredAt", i.scored_at as "scoredAt"`;
+  i.readings_stored_at as "readingsStoredAt", i.channel_ids::text[]::float8[] as "channelIds", i.scored_at as "scoredAt"`;
 const SOURCE = `from intakes i join lines l on l.id = i.line_id join people r on r.id = i.received_by
   left join people c on c.id = i.confirmed_by`;
 
@@ -145,6 +146,32 @@ export async function updateIntakeRefused(tx: Transaction, id: number, failure: 
 
 export async function updateIntakeConfirmed(tx: Transaction, id: number, by: number, at: Date): Promise<void> {
   await tx('intakes').where({ id }).update({ state: 'queued', confirmed_by: by, confirmed_at: at });
+}
+
+/** Records, in the transaction that stored them, what became of a confirmed intake's rows. */
+export async function updateIntakeStored(
+  tx: Transaction,
+  id: number,
+  stored: {
+    channelIds: number[];
+    rowsUsed: number;
+    rowsAlreadyThere: number;
+    rowsNotUsed: number;
+    readingsStored: number;
+    readingsAlreadyThere: number;
+    at: Date;
+  },
+): Promise<void> {
+  await tx('intakes').where({ id }).update({
+    state: 'working',
+    channel_ids: stored.channelIds,
+    rows_used: stored.rowsUsed,
+    rows_already_there: stored.rowsAlreadyThere,
+    rows_not_used: stored.rowsNotUsed,
+    readings_stored: stored.readingsStored,
+    readings_already_there: stored.readingsAlreadyThere,
+    readings_stored_at: stored.at,
+  });
 }
 
 export async function updateIntakeState(db: Queryable, id: number, from: IntakeState, to: IntakeState): Promise<void> {

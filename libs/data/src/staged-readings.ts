@@ -56,6 +56,15 @@ export class StagedReadingWriter {
       await new Promise<void>((resolve) => this.stream.once('drain', resolve));
   }
 
+  /** Gives up what was written so far. */
+  async abort(): Promise<void> {
+    await new Promise<void>((resolve) => {
+      this.stream.once('error', () => resolve());
+      this.stream.once('close', () => resolve());
+      this.stream.destroy(new Error('reading was given up'));
+    });
+  }
+
   async end(): Promise<void> {
     await new Promise<void>((resolve, reject) => {
       this.stream.once('finish', resolve);

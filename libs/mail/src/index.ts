@@ -4,3 +4,7 @@ export { MailSendError } from './mail-send-error';
 export { MailCatcher } from './catcher/mail-catcher';
 export type { MailCatcherOptions } from './catcher/mail-catcher';
 export type { CaughtMessage } from './catcher/caught-message';
+export { decisionMail, type DecisionFacts } from './messages/decision';
+export { heldLotsMail, type HeldCause, type HeldLotFacts, type HeldLotsFacts } from './messages/held-lots';
+export type { Mail } from './messages/layout';
+export { zonedText } from './messages/zoned-text';

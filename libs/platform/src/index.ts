@@ -3,3 +3,5 @@ export * from './tokens';
 export * from './platform.module';
 export * from './project-root';
 export * from './queue/queue.module';
+export * from './queue/dispatcher';
+export * from './thread-pools';

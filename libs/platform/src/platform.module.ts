@@ -1,6 +1,7 @@
 import { type DynamicModule, Global, Inject, Injectable, Module, type OnApplicationShutdown } from '@nestjs/common';
 import { createDatabase, type Database } from '@app/data';
 import type { Config } from './config';
+import { ThreadPools } from './thread-pools';
 import { type Clock, CLOCK, CONFIG, DATABASE } from './tokens';
 
 /** Closes the database's connections last. */
@@ -25,8 +26,9 @@ export class PlatformModule {
         { provide: CLOCK, useValue: clock },
         { provide: DATABASE, useFactory: () => createDatabase(config.databaseUrl) },
         DatabaseCloser,
+        ThreadPools,
       ],
-      exports: [CONFIG, CLOCK, DATABASE],
+      exports: [CONFIG, CLOCK, DATABASE, ThreadPools],
     };
   }
 }

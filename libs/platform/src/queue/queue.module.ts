@@ -1,9 +1,10 @@
 import { BullModule } from '@nestjs/bull';
-import { type DynamicModule, Inject, Injectable, Module, type OnApplicationShutdown } from '@nestjs/common';
+import { type DynamicModule, Global, Inject, Injectable, Module, type OnApplicationShutdown } from '@nestjs/common';
 import Redis from 'ioredis';
 import { MAIL_QUEUE, WORK_QUEUE } from '@app/contracts';
 import type { Config } from '../config';
 import { CONFIG } from '../tokens';
+import { Dispatcher } from './dispatcher';
 import { BullOnIoredisMock } from './bull-on-ioredis-mock';
 
 const CLIENT_OPTIONS = { maxRetriesPerRequest: null, enableReadyCheck: false };
@@ -33,6 +34,7 @@ export class QueueClients implements OnApplicationShutdown {
 class QueueClientsModule {}
 
 /** The two queues, for whoever adds to them or works them off. */
+@Global()
 @Module({})
 export class QueueModule {
   static register(): DynamicModule {
@@ -45,12 +47,12 @@ export class QueueModule {
           useFactory: (clients: QueueClients) => ({
             createClient: () => clients.create(),
             settings: { drainDelay: 1 },
-            defaultJobOptions: { removeOnComplete: true, removeOnFail: 100 },
           }),
         }),
         BullModule.registerQueue({ name: WORK_QUEUE }, { name: MAIL_QUEUE }),
       ],
-      exports: [BullModule],
+      providers: [Dispatcher],
+      exports: [BullModule, Dispatcher],
     };
   }
 }

@@ -1,0 +1,83 @@
+import {
+  Controller,
+  Get,
+  HttpCode,
+  type MessageEvent,
+  Param,
+  Post,
+  Query,
+  Sse,
+  StreamableFile,
+  UploadedFile,
+} from '@nestjs/common';
+import { ApiTags } from '@nestjs/swagger';
+import type { IntakeListItem, IntakeView, Page } from '@app/contracts';
+import type { Observable } from 'rxjs';
+import { Permit } from '../access/permit';
+import { CurrentPerson, type Person } from '../auth/current-person';
+import { IdPipe } from '../platform/id.pipe';
+import { IntakeListQueryDto } from './dto/intake-list-query.dto';
+import { IntakeEventsService } from './intake-events.service';
+import { IntakesService } from './intakes.service';
+import { uploadedFile, WorkbookUpload } from './workbook-upload';
+
+const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
+
+@ApiTags('intakes')
+@Controller()
+export class IntakesController {
+  constructor(
+    private readonly intakes: IntakesService,
+    private readonly events: IntakeEventsService,
+  ) {}
+
+  @Post('lines/:id/intakes')
+  @Permit('upload_intake')
+  @WorkbookUpload()
+  receive(
+    @CurrentPerson() person: Person,
+    @Param('id', IdPipe) lineId: number,
+    @UploadedFile() file?: Express.Multer.File,
+  ): Promise<IntakeView> {
+    return this.intakes.receive(person, lineId, uploadedFile(file));
+  }
+
+  @Get('lines/:id/intakes')
+  @Permit('read')
+  list(
+    @CurrentPerson() person: Person,
+    @Param('id', IdPipe) lineId: number,
+    @Query() query: IntakeListQueryDto,
+  ): Promise<Page<IntakeListItem>> {
+    return this.intakes.list(person, lineId, query.page, query.pageSize);
+  }
+
+  @Get('intakes/:id')
+  @Permit('read')
+  get(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<IntakeView> {
+    return this.intakes.get(person, id);
+  }
+
+  @Post('intakes/:id/confirm')
+  @Permit('upload_intake')
+  @HttpCode(200)
+  confirm(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<IntakeView> {
+    return this.intakes.confirm(person, id);
+  }
+
+  @Sse('intakes/:id/events')
+  @Permit('read')
+  watch(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<Observable<MessageEvent>> {
+    return this.events.watch(person, id);
+  }
+
+  @Get('intakes/:id/workbook')
+  @Permit('read')
+  async workbook(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<StreamableFile> {
+    const { fileName, bytes } = await this.intakes.markedWorkbook(person, id);
+    return new StreamableFile(bytes, {
+      type: XLSX,
+      disposition: `attachment; filename*=UTF-8''${encodeURIComponent(fileName)}`,
+    });
+  }
+}

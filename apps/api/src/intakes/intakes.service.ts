@@ -1,0 +1,165 @@
+import { createHash } from 'node:crypto';
+import { Inject, Injectable } from '@nestjs/common';
+import { DomainError, type IntakeListItem, type IntakeView, JOBS, type Page } from '@app/contracts';
+import {
+  type Database,
+  findIntake,
+  findLine,
+  findSameFile,
+  getIntakeBytes,
+  getIntakeOutcome,
+  getLineContext,
+  insertAuditEntry,
+  insertIntake,
+  insertOwedJob,
+  type IntakeRow,
+  listIntakeProblems,
+  listIntakes,
+  lockIntake,
+  type Person,
+  updateIntakeConfirmed,
+} from '@app/data';
+import { CLOCK, type Clock, DATABASE, Dispatcher, ThreadPools } from '@app/platform';
+import { AccessService } from '../access/access.service';
+import { intakeListItem, intakeView, isConfirmable } from './intake-view';
+
+const SHOWN_PROBLEMS = 1000;
+/** An upload answers when its workbook has been read, or after this long with the intake still being read. */
+const READING_WAIT_MS = 20_000;
+const POLL_MS = 60;
+
+@Injectable()
+export class IntakesService {
+  constructor(
+    @Inject(DATABASE) private readonly database: Database,
+    @Inject(CLOCK) private readonly clock: Clock,
+    private readonly access: AccessService,
+    private readonly dispatcher: Dispatcher,
+    private readonly threads: ThreadPools,
+  ) {}
+
+  /** Stores the workbook whole and owes its reading, in one transaction. */
+  async receive(person: Person, lineId: number, file: { name: string; bytes: Buffer }): Promise<IntakeView> {
+    const { thing: line } = await this.access.requireThing(
+      person.id,
+      await findLine(this.database, lineId),
+      'upload_intake',
+    );
+    const receivedAt = this.clock.now();
+    const { intakeId, owedJobId } = await this.database.transaction(async (tx) => {
+      const sha256 = createHash('sha256').update(file.bytes).digest();
+      const intakeId = await insertIntake(tx, {
+        plantId: line.plantId,
+        lineId,
+        fileName: file.name,
+        bytes: file.bytes,
+        sha256,
+        receivedBy: person.id,
+        receivedAt,
+      });
+      await insertAuditEntry(tx, {
+        plantId: line.plantId,
+        at: receivedAt,
+        actor: person,
+        action: 'upload',
+        thingKind: 'intake',
+        thingId: intakeId,
+        sentence: `${person.name} uploaded ${file.name} for ${line.name} (${file.bytes.length} bytes).`,
+        after: { state: 'received', sha256: sha256.toString('hex') },
+      });
+      const owedJobId = await insertOwedJob(tx, {
+        plantId: line.plantId,
+        name: JOBS.readIntake,
+        subject: { intakeId },
+        at: receivedAt,
+      });
+      return { intakeId, owedJobId };
+    });
+    await this.dispatcher.owedJobs([owedJobId]);
+    return this.view(await this.waitUntilRead(intakeId));
+  }
+
+  async get(person: Person, id: number): Promise<IntakeView> {
+    return this.view(await this.require(person, id, 'read'));
+  }
+
+  async list(person: Person, lineId: number, page: number, pageSize: number): Promise<Page<IntakeListItem>> {
+    await this.access.requireThing(person.id, await findLine(this.database, lineId), 'read');
+    const { items, total } = await listIntakes(this.database, lineId, page, pageSize);
+    return { items: items.map(intakeListItem), total, page, pageSize };
+  }
+
+  async confirm(person: Person, id: number): Promise<IntakeView> {
+    await this.require(person, id, 'upload_intake');
+    const owedJobId = await this.database.transaction(async (tx) => {
+      const intake = (await lockIntake(tx, id)) as IntakeRow;
+      refuseUnconfirmable(intake);
+      const at = this.clock.now();
+      await updateIntakeConfirmed(tx, id, person.id, at);
+      await insertAuditEntry(tx, {
+        plantId: intake.plantId,
+        at,
+        actor: person,
+        action: 'confirm',
+        thingKind: 'intake',
+        thingId: id,
+        sentence: `${person.name} confirmed the intake of ${intake.fileName} for ${intake.lineName}.`,
+        before: { state: intake.state },
+        after: { state: 'queued' },
+      });
+      return insertOwedJob(tx, { plantId: intake.plantId, name: JOBS.scoreIntake, subject: { intakeId: id }, at });
+    });
+    await this.dispatcher.owedJobs([owedJobId]);
+    return this.view((await findIntake(this.database, id)) as IntakeRow);
+  }
+
+  /** The workbook as uploaded, with its problem cells marked. Marking runs in a thread. */
+  async markedWorkbook(person: Person, id: number): Promise<{ fileName: string; bytes: Buffer }> {
+    const intake = await this.require(person, id, 'read');
+    if (intake.report === null)
+      throw new DomainError('conflict', 'not-read', 'This workbook could not be read, so no cell of it can be marked.');
+    const bytes = await getIntakeBytes(this.database, id);
+    const problems = await listIntakeProblems(this.database, id, SHOWN_PROBLEMS);
+    const marked = await this.threads.run<Uint8Array>('mark-workbook.thread', { bytes, problems });
+    return { fileName: intake.fileName.replace(/(\.xlsx)?$/i, ' marked.xlsx'), bytes: Buffer.from(marked) };
+  }
+
+  async require(person: Person, id: number, permission: 'read' | 'upload_intake'): Promise<IntakeRow> {
+    const { thing } = await this.access.requireThing(person.id, await findIntake(this.database, id), permission);
+    return thing;
+  }
+
+  private async waitUntilRead(id: number): Promise<IntakeRow> {
+    const end = performance.now() + READING_WAIT_MS;
+    for (;;) {
+      const intake = (await findIntake(this.database, id)) as IntakeRow;
+      if (intake.state !== 'received' || performance.now() >= end) return intake;
+      await new Promise((resolve) => setTimeout(resolve, POLL_MS));
+    }
+  }
+
+  private async view(intake: IntakeRow): Promise<IntakeView> {
+    const [sameFile, problems, context, outcome] = await Promise.all([
+      findSameFile(this.database, intake),
+      listIntakeProblems(this.database, intake.id, SHOWN_PROBLEMS),
+      getLineContext(this.database, intake.lineId),
+      intake.state === 'scored' ? getIntakeOutcome(this.database, intake.id) : null,
+    ]);
+    const channels = new Map(context.channels.map((channel) => [channel.id, channel]));
+    return intakeView({ intake, sameFile, problems, channels, outcome });
+  }
+}
+
+function refuseUnconfirmable(intake: IntakeRow): void {
+  if (isConfirmable(intake)) return;
+  const conflict = (code: string, detail: string) => new DomainError('conflict', code, detail);
+  if (intake.state === 'received')
+    throw conflict('still-being-read', 'The workbook is still being read. Look at what was recognised, then confirm.');
+  if (intake.state === 'refused')
+    throw conflict('refused', `This intake was refused: ${intake.failure ?? 'it could not be read'}`);
+  if (intake.state !== 'needs_attention') throw conflict('confirmed-already', 'This intake was confirmed already.');
+  throw conflict(
+    'blocked',
+    'Something in this workbook must be put right before it can be confirmed. See its problems, mend it and upload it again.',
+  );
+}

@@ -1,0 +1,104 @@
+import { Inject, Injectable } from '@nestjs/common';
+import { DomainError, JOBS } from '@app/contracts';
+import {
+  type Database,
+  findIntake,
+  insertAuditEntry,
+  notifyProgress,
+  type OwedJob,
+  updateIntakeRefused,
+  updateOwedJobEnded,
+} from '@app/data';
+import { CLOCK, type Clock, CONFIG, type Config, DATABASE, ThreadPools } from '@app/platform';
+import type { HandlerOutcome, OwedJobHandler } from '../owed/owed-job-handler';
+import type { ReadIntakeOutcome, ReadIntakeTask } from './read-intake.thread';
+
+type Job = OwedJob & { subject: { intakeId: number } };
+
+const MAX_READING_MS = 5 * 60_000;
+
+/** Has a workbook read in a thread that can be stopped; a file that breaks the reader is refused with a sentence and kept. */
+@Injectable()
+export class ReadIntakeHandler implements OwedJobHandler<'read-intake'> {
+  readonly jobName = JOBS.readIntake;
+
+  constructor(
+    @Inject(DATABASE) private readonly database: Database,
+    @Inject(CONFIG) private readonly config: Config,
+    @Inject(CLOCK) private readonly clock: Clock,
+    private readonly threads: ThreadPools,
+  ) {}
+
+  async run(job: Job): Promise<HandlerOutcome> {
+    const task: ReadIntakeTask = {
+      databaseUrl: this.config.databaseUrl,
+      intakeId: job.subject.intakeId,
+      owedJobId: job.id,
+      now: this.clock.now().getTime(),
+    };
+    const outcome = await this.read(task);
+    if (outcome.status === 'refused') {
+      await this.refuse(job, outcome.sentence);
+      return { done: true };
+    }
+    if (outcome.status === 'skipped') {
+      await updateOwedJobEnded(this.database, job.id, 'done', this.clock.now());
+      return { done: false, reason: 'the intake was read already' };
+    }
+    return { done: true };
+  }
+
+  async fail(job: Job, sentence: string): Promise<void> {
+    await this.refuse(job, sentence);
+  }
+
+  private async read(task: ReadIntakeTask): Promise<ReadIntakeOutcome> {
+    try {
+      return await this.threads.run<ReadIntakeOutcome>('read-intake.thread', task, AbortSignal.timeout(MAX_READING_MS));
+    } catch (error) {
+      const { code, name } = error as { code?: string; name?: string };
+      if (code === 'ERR_WORKER_OUT_OF_MEMORY')
+        throw new DomainError(
+          'unprocessable',
+          'reader-out-of-memory',
+          'The workbook needs more memory than one file may take. Split it by shift and upload the parts.',
+        );
+      if (name === 'AbortError' || name === 'TimeoutError')
+        throw new DomainError(
+          'unprocessable',
+          'reading-too-slow',
+          'Reading the workbook took longer than five minutes and was stopped. Split it by shift and upload the parts.',
+        );
+      throw error;
+    }
+  }
+
+  private async refuse(job: Job, sentence: string): Promise<void> {
+    const at = this.clock.now();
+    const { intakeId } = job.subject;
+    await this.database.transaction(async (tx) => {
+      const intake = await findIntake(tx, intakeId);
+      await updateIntakeRefused(tx, intakeId, sentence);
+      await insertAuditEntry(tx, {
+        plantId: job.plantId,
+        at,
+        actor: null,
+        action: 'refuse',
+        thingKind: 'intake',
+        thingId: intakeId,
+        sentence: `Ebbline refused ${intake?.fileName ?? 'the workbook'}: ${sentence}`,
+        before: { state: intake?.state },
+        after: { state: 'refused' },
+      });
+      await updateOwedJobEnded(tx, job.id, 'done', at);
+      await notifyProgress(tx, {
+        intakeId,
+        stage: 'failed',
+        rowsRead: 0,
+        channelsScored: 0,
+        channelsTotal: 0,
+        sentence,
+      });
+    });
+  }
+}

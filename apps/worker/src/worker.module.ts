@@ -1,0 +1,35 @@
+import { type DynamicModule, Module } from '@nestjs/common';
+import { ReadIntakeHandler } from './intake/read-intake.handler';
+import { HeldLotsMailService } from './judging/held-lots-mail.service';
+import { JudgingService } from './judging/judging.service';
+import { ScoreChannelsHandler } from './judging/score-channels.handler';
+import { ScoreIntakeHandler } from './judging/score-intake.handler';
+import { MailProcessor } from './mail/mail.processor';
+import { MailSendingService } from './mail/mail-sending.service';
+import { OWED_JOB_HANDLERS, type OwedJobHandler } from './owed/owed-job-handler';
+import { OwedWorkService } from './owed/owed-work.service';
+import { WorkProcessor } from './owed/work.processor';
+import { ProposePlanHandler } from './plans/propose-plan.handler';
+
+const HANDLERS = [ReadIntakeHandler, ScoreIntakeHandler, ScoreChannelsHandler, ProposePlanHandler];
+
+/** Works off the queues. Needs PlatformModule and QueueModule, both global, in the same program. */
+@Module({})
+export class WorkerModule {
+  static register(): DynamicModule {
+    return {
+      module: WorkerModule,
+      providers: [
+        JudgingService,
+        HeldLotsMailService,
+        ...HANDLERS,
+        { provide: OWED_JOB_HANDLERS, inject: HANDLERS, useFactory: (...handlers: OwedJobHandler[]) => handlers },
+        WorkProcessor,
+        MailSendingService,
+        MailProcessor,
+        OwedWorkService,
+      ],
+      exports: [WorkProcessor, MailSendingService],
+    };
+  }
+}
