@@ -1,13 +1,23 @@
 import { randomBytes } from 'node:crypto';
-import { chmodSync, existsSync, mkdirSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
+import { chmodSync, existsSync, mkdirSync, readFileSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { Failure } from './failure.mjs';
+
+/** Node's own recursive mkdir never returns where a file system answers "no such file" (seen in /proc with Node 20). */
+function makeFolders(folder) {
+  if (existsSync(folder)) return;
+  makeFolders(path.dirname(folder));
+  mkdirSync(folder);
+}
 
 /** Makes the data folder and proves that it can be written. Root's is enterable, since PostgreSQL runs as another user. */
 export function openDataFolder(dataDir) {
   if (!existsSync(dataDir)) {
-    mkdirSync(dataDir, { recursive: true });
+    makeFolders(dataDir);
     chmodSync(dataDir, process.getuid?.() === 0 ? 0o711 : 0o700);
+  }
+  if (!statSync(dataDir).isDirectory()) {
+    throw new Failure(`${dataDir} is a file, not a folder: set EBBLINE_DATA_DIR to another place.`);
   }
   mkdirSync(path.join(dataDir, 'logs'), { recursive: true, mode: 0o700 });
   const probe = path.join(dataDir, `.probe-${process.pid}`);

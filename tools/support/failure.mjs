@@ -16,6 +16,7 @@ const DISK_SENTENCES = {
   EROFS: (path) => `${path} is on a read-only disk: set EBBLINE_DATA_DIR to a folder that can be written.`,
   ENOSPC: (path) => `The disk that holds ${path} is full: free some space and start again.`,
   EDQUOT: (path) => `The quota for ${path} is used up: free some space and start again.`,
+  ENOENT: (path) => `${path} cannot be made: set EBBLINE_DATA_DIR to a folder that can be written.`,
   ENOTDIR: (path) => `A part of ${path} is a file, not a folder: set EBBLINE_DATA_DIR to another place.`,
   EEXIST: (path) => `${path} is a file, not a folder: set EBBLINE_DATA_DIR to another place.`,
 };

@@ -91,7 +91,10 @@ export async function start(root, env) {
     const up = bringUp(Object.assign(context, { root, env, settings, programs, log }));
     up.catch(() => {});
     const early = await Promise.race([up, stop]);
-    if (early.signal) return 130;
+    if (early.signal) {
+      say('\nEnding what was begun …');
+      return 130;
+    }
     sayWelcome(early, duration(startedAt));
     const end = await Promise.race([firstToEnd(early.watched), stop]);
     if (end.program) throw describeEnd(end);

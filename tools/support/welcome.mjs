@@ -15,7 +15,7 @@ function signIns({ isDemo, demoPassword, settings }) {
   const isOther = settings.demoPassword !== undefined && settings.demoPassword !== demoPassword;
   return [
     ...PEOPLE.map(
-      ([name, role], i) => `  ${i === 0 ? 'Sign in' : '       '}    ${`${name}@marrowby.example`.padEnd(28)}${role}`,
+      ([name, role], i) => `  ${i === 0 ? 'Sign in' : '       '}    ${`${name}@marrowby.example`.padEnd(30)}${role}`,
     ),
     `  Password   ${demoPassword}   (the same for all of them)`,
     ...(isOther
