@@ -28,13 +28,13 @@ describe('spanWithin', () => {
 describe('axisEnds', () => {
   it('adds the same margin on both sides', () => {
     const [low, high] = axisEnds({ low: 0, high: 10 }, 0);
-    expect(low).toBeCloseTo(-0.8, 12);
-    expect(high).toBeCloseTo(10.8, 12);
+    expect(low).toBeCloseTo(-1, 12);
+    expect(high).toBeCloseTo(11, 12);
   });
 
   it('opens a flat line to the least height', () => {
     const [low, high] = axisEnds({ low: 5, high: 5 }, 2);
-    expect(high - low).toBeCloseTo(2.32, 12);
+    expect(high - low).toBeCloseTo(2.4, 12);
     expect((low + high) / 2).toBeCloseTo(5, 12);
   });
 

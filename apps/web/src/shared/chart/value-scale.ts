@@ -4,7 +4,7 @@ export interface ValueSpan {
   high: number;
 }
 
-const PADDING_SHARE = 0.08;
+const PADDING_SHARE = 0.1;
 
 /** The smallest span that holds all given ones; null when there is none. Non-finite ends are passed over. */
 export function joinSpans(spans: readonly (ValueSpan | null)[]): ValueSpan | null {

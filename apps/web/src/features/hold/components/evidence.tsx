@@ -16,7 +16,12 @@ export function Evidence({ hold }: { hold: HoldView }) {
           <NeighboursChart key={verdict.id} hold={hold} verdict={verdict} />
         ))}
       </Sheet>
-      <Sheet title="Gauge or process?">
+      <Sheet
+        title="Gauge or process?"
+        margin={
+          <p>A baseline from production readings alone cannot see a process that moves as slowly as the gauge.</p>
+        }
+      >
         <p>{hold.attribution}</p>
         {offending.map((verdict) => (
           <p key={verdict.id}>{constantSentence(verdict)}</p>

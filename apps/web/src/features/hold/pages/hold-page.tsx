@@ -52,7 +52,15 @@ function Hold({ hold }: { hold: HoldView }) {
   return (
     <>
       <PageHeading title={`Lot ${hold.lot.number}, ${hold.line.name}: ${fate}`} lead={<Lead hold={hold} />} />
-      <Sheet tone={hold.state === 'open' ? 'held' : 'plain'}>
+      <Sheet
+        tone={hold.state === 'open' ? 'held' : 'plain'}
+        margin={
+          <p>
+            A held lot may not move on until it is decided. A <b>provisional</b> verdict may still move as later
+            readings arrive; people decide, the verdict does not.
+          </p>
+        }
+      >
         <p className="hold-reason">{hold.reason}</p>
         <p className="soft">
           Held on <When at={hold.openedAt} />

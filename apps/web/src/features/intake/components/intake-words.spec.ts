@@ -1,0 +1,64 @@
+import type { IntakeProblem } from '@app/contracts';
+import { cellName, counted, groupProblems, roleWords, sizeWords } from './intake-words';
+
+const problem = (code: string, severity: IntakeProblem['severity'], row: number | null = 1): IntakeProblem => ({
+  sheet: 'Readings',
+  row,
+  column: 'E',
+  code,
+  detail: '',
+  severity,
+});
+
+describe('groupProblems', () => {
+  it('puts the gravest first, then the most frequent, and keeps the full count', () => {
+    const groups = groupProblems({
+      problems: [
+        problem('a', 'notice'),
+        problem('b', 'row_not_used'),
+        problem('c', 'blocking'),
+        problem('d', 'notice'),
+      ],
+      problemCounts: [
+        { code: 'a', severity: 'notice', count: 1 },
+        { code: 'b', severity: 'row_not_used', count: 240 },
+        { code: 'c', severity: 'blocking', count: 1 },
+        { code: 'd', severity: 'notice', count: 7 },
+      ],
+    });
+    expect(groups.map((group) => group.code)).toEqual(['c', 'b', 'd', 'a']);
+    expect(groups[1]).toMatchObject({ count: 240, problems: [{ code: 'b' }] });
+  });
+});
+
+describe('cellName', () => {
+  it('names the cell, the row, the column or the sheet', () => {
+    expect(cellName({ sheet: 'Readings', row: 210, column: 'E' })).toBe('Readings!E210');
+    expect(cellName({ sheet: 'Readings', row: 210, column: null })).toBe('Readings, row 210');
+    expect(cellName({ sheet: 'Readings', row: null, column: 'F' })).toBe('Readings, column F');
+    expect(cellName({ sheet: 'Summary', row: null, column: null })).toBe('Summary');
+  });
+});
+
+describe('counted', () => {
+  it('groups thousands and knows one from many', () => {
+    expect(counted(1, 'row')).toBe('1 row');
+    expect(counted(12_240, 'row')).toBe('12,240 rows');
+  });
+});
+
+describe('roleWords', () => {
+  it('says what a column is read as', () => {
+    expect(roleWords('ignored')).toBe('not used');
+    expect(roleWords('lot')).toBe('lot');
+    expect(roleWords('some_new_role')).toBe('some new role');
+  });
+});
+
+describe('sizeWords', () => {
+  it('uses bytes, kB and MB', () => {
+    expect(sizeWords(999)).toBe('999 bytes');
+    expect(sizeWords(84_213)).toBe('84\u2009kB');
+    expect(sizeWords(2_310_000)).toBe('2.3\u2009MB');
+  });
+});
