@@ -1,4 +1,4 @@
-import { readSheetRows } from './container/sheet-rows';
+import { readSheetRows, type SheetFacts } from './container/sheet-rows';
 import { openWorkbook } from './container/workbook-parts';
 import { DEFAULT_LIMITS, type ReadLimits } from './limits';
 import { ChannelNames } from './reading/channel-names';
@@ -64,7 +64,7 @@ export async function readWorkbook(
   };
   for (const sheet of book.sheets) {
     const reader = new SheetReader(sheet.name, parts);
-    const facts = { mergedAreas: 0 };
+    const facts: SheetFacts = { mergedUntil: [] };
     for await (const rows of readSheetRows(book, sheet, limits, count, facts)) {
       for (const row of rows) {
         reader.take(row, batch);
@@ -72,7 +72,7 @@ export async function readWorkbook(
       }
       options.onProgress?.(report.rowsRead + reader.rowsRead);
     }
-    report.columns.push(...reader.finish(facts.mergedAreas, batch));
+    report.columns.push(...reader.finish(facts, batch));
     report.sheets.push({ name: sheet.name, headerRow: reader.layout?.header.row ?? null, rows: reader.rows });
     report.rowsRead += reader.rowsRead;
     report.rowsNotUsed += reader.rowsNotUsed;
@@ -115,7 +115,7 @@ function finishReport(report: WorkbookReport, { findings, lots }: ReadingParts):
       'no-header',
       { sheet: name },
       () =>
-        `has no header row in its first 20 rows (one that names time, lot and value, or time, lot and channels), so none of its ${rows} rows was read`,
+        `has no header row in its first 20 rows (one that names time, lot and value, or time, lot and channels), so nothing on it was read (${rows === 1 ? 'one row' : `${rows} rows`})`,
     );
   }
   if (lots.readings === 0 && findings.countOf('blocking') === 0) {

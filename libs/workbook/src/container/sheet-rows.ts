@@ -28,7 +28,8 @@ export interface CellCount {
 }
 
 export interface SheetFacts {
-  mergedAreas: number;
+  /** Last row of each merged area. */
+  mergedUntil: number[];
 }
 
 /**
@@ -42,7 +43,7 @@ export async function* readSheetRows(
   sheet: SheetPart,
   limits: ReadLimits,
   count: CellCount,
-  facts: SheetFacts = { mergedAreas: 0 },
+  facts: SheetFacts = { mergedUntil: [] },
 ): AsyncGenerator<SheetRow[]> {
   const parser = new SheetParser(book, limits, count, facts);
   for await (const _ of parseXml(book.archive.read(sheet.part), parser)) {
@@ -97,7 +98,7 @@ class SheetParser {
         this.openRow(attributes);
         break;
       case 'mergeCell':
-        this.facts.mergedAreas += 1;
+        this.facts.mergedUntil.push(Number(/\d+$/.exec(attributes.ref ?? '')?.[0] ?? 0));
         break;
     }
   };

@@ -1,4 +1,4 @@
-import type { SheetRow } from '../container/sheet-rows';
+import type { SheetFacts, SheetRow } from '../container/sheet-rows';
 import type { ParsedReading, RecognisedColumn } from '../types';
 import type { ChannelNames } from './channel-names';
 import type { Findings } from './findings';
@@ -57,27 +57,25 @@ export class SheetReader {
   }
 
   /** Says what only the whole sheet shows, and returns the columns as recognised. */
-  finish(mergedAreas: number, into: ParsedReading[]): RecognisedColumn[] {
+  finish({ mergedUntil }: SheetFacts, into: ParsedReading[]): RecognisedColumn[] {
     if (this.waiting !== null) this.startReading(into);
     this.stamps?.finish();
     const { findings } = this.parts;
     const place = { sheet: this.name };
-    if (this.layout && mergedAreas > 0) {
+    const headerRow = this.layout?.header.row ?? Infinity;
+    const merged = mergedUntil.filter((row) => row > headerRow).length;
+    if (merged > 0) {
       findings.add(
         'notice',
         'merged-cells',
         place,
         () =>
-          `has ${mergedAreas} merged areas; only the first cell of each holds its content, the others are read as blank`,
+          `has merged cells below its header (${merged}); only the first cell of each area holds its content, the others are read as blank`,
       );
     }
     if (this.layout && this.hiddenRows > 0) {
-      findings.add(
-        'notice',
-        'hidden-rows-read',
-        place,
-        () => `has ${this.hiddenRows} hidden or filtered rows; they were read like the others`,
-      );
+      const say = (): string => `has hidden or filtered rows (${this.hiddenRows}); they were read like the others`;
+      findings.add('notice', 'hidden-rows-read', place, say);
     }
     return this.layout?.header.columns.map((column) => toRecognised(this.name, column)) ?? [];
   }

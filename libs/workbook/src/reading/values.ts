@@ -33,7 +33,9 @@ const MISSING = new Set([
 ]);
 const ABOVE = /^(ol|o\.l\.?|over|overload|over ?range|overflow|high|>\s*max|überlauf|über)$/i;
 const BELOW = /^(ul|u\.l\.?|under|underload|under ?range|underflow|low|<\s*(lod|loq|min)|unter|<\s*ng|<\s*bg)$/i;
-const CENSORED_NUMBER = /^([<>≤≥])=?\s*[+-]?[\d.,\s]*\d\s*(\D*)$/;
+const CENSORED_NUMBER = /^([<>≤≥])=?\s*[+-]?[\d.,\s]*\d\s*([^\d\s.,+\-−±].*)?$/;
+/** Longer texts are no numbers, and not worth matching. */
+const MAX_VALUE_TEXT = 60;
 const AMBIGUOUS = 'ambiguous';
 /** Numbers that instruments write instead of a reading. */
 const CODES = new Set([999, 9999, 99999, 999999]);
@@ -78,6 +80,7 @@ function fromPercent(number: number, unit: string): ParsedValue {
 }
 
 function fromText(text: string, unit: string, habits: ColumnHabits): ParsedValue {
+  if (text.length > MAX_VALUE_TEXT) return bad('not-a-number', 'holds a long text, which is no number');
   if (ABOVE.test(text)) return { kind: 'censored', censoring: 'above' };
   if (BELOW.test(text)) return { kind: 'censored', censoring: 'below' };
   const censored = CENSORED_NUMBER.exec(text);
@@ -85,7 +88,7 @@ function fromText(text: string, unit: string, habits: ColumnHabits): ParsedValue
     if (censored[2] && !isSameUnit(censored[2], unit)) return otherUnit(text, censored[2], unit);
     return { kind: 'censored', censoring: '<≤'.includes(censored[1]) ? 'below' : 'above' };
   }
-  const match = /^([+\-−]?[\d.,'’\s]*\d[.,]?(?:[eE][+-]?\d+)?)\s*(\D*)$/.exec(text);
+  const match = /^([+\-−]?[\d.,'’\s]*\d[.,]?(?:[eE][+-]?\d+)?)\s*([^\d\s.,+\-−±].*)?$/.exec(text);
   if (!match) return bad('not-a-number', `says "${text.slice(0, 40)}", which is no number`);
   if (match[2] && !isSameUnit(match[2], unit)) return otherUnit(text, match[2], unit);
   const value = parseNumberText(match[1], habits);

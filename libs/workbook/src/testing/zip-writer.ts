@@ -1,0 +1,43 @@
+import { crc32, deflateRawSync } from 'node:zlib';
+
+export interface ZipPart {
+  name: string;
+  data: Buffer | string;
+  /** General purpose flags; bit 0 marks an encrypted part. */
+  flags?: number;
+}
+
+/** Writes a zip archive (APPNOTE 6.3.3: local headers, central directory, end record), independent of the reader. */
+export function writeZip(parts: readonly ZipPart[]): Buffer {
+  const pieces: Buffer[] = [];
+  const directory: Buffer[] = [];
+  let offset = 0;
+  for (const { name, data, flags = 0 } of parts) {
+    const raw = Buffer.isBuffer(data) ? data : Buffer.from(data);
+    const packed = deflateRawSync(raw, { level: 6 });
+    const nameBytes = Buffer.from(name);
+    const common = Buffer.alloc(26);
+    common.writeUInt16LE(20, 0);
+    common.writeUInt16LE(flags, 2);
+    common.writeUInt16LE(8, 4);
+    common.writeUInt16LE(0, 6);
+    common.writeUInt16LE(0x5a21, 8);
+    common.writeUInt32LE(crc32(raw), 10);
+    common.writeUInt32LE(packed.length, 14);
+    common.writeUInt32LE(raw.length, 18);
+    common.writeUInt16LE(nameBytes.length, 22);
+    const tail = Buffer.alloc(14);
+    tail.writeUInt32LE(offset, 10);
+    pieces.push(Buffer.from([0x50, 0x4b, 3, 4]), common, nameBytes, packed);
+    directory.push(Buffer.from([0x50, 0x4b, 1, 2, 20, 0]), common, tail, nameBytes);
+    offset += 4 + 26 + nameBytes.length + packed.length;
+  }
+  const central = Buffer.concat(directory);
+  const end = Buffer.alloc(22);
+  end.writeUInt32LE(0x06054b50, 0);
+  end.writeUInt16LE(parts.length, 8);
+  end.writeUInt16LE(parts.length, 10);
+  end.writeUInt32LE(central.length, 12);
+  end.writeUInt32LE(offset, 16);
+  return Buffer.concat([...pieces, central, end]);
+}
