@@ -1,6 +1,7 @@
 import { createBrowserRouter, type RouteObject } from 'react-router-dom';
 import { DeskPage } from '../features/desk/pages/desk-page';
 import { SignInPage } from '../features/sign-in/pages/sign-in-page';
+import { Skeleton } from '../shared/ui/skeleton';
 import { ErrorPage } from './error-page';
 import { NotFoundPage } from './not-found-page';
 import { PlanRedirect } from './plan-redirect';
@@ -14,6 +15,7 @@ export const router = createBrowserRouter([
   {
     element: <SignedIn />,
     errorElement: <ErrorPage />,
+    hydrateFallbackElement: <Skeleton lines={3} />,
     children: [
       { path: routes.desk, element: <DeskPage />, errorElement: <ErrorPage /> },
       page(routes.lots, async () => ({ Component: (await import('../features/lots/pages/lots-page')).LotsPage })),

@@ -1,11 +1,13 @@
 import type { ReactNode } from 'react';
 import './frame.css';
+import { useSession } from '../../shared/session/session';
 import { Header } from './header';
 import { LineNavigation } from './line-navigation';
 import { LineStrip } from './line-strip';
 
 /** Header, line strip and navigation around each page. */
 export function Frame({ children }: { children: ReactNode }) {
+  const { plant } = useSession();
   return (
     <>
       <a className="skip-link" href="#page">
@@ -17,6 +19,9 @@ export function Frame({ children }: { children: ReactNode }) {
       <main className="page" id="page" tabIndex={-1}>
         {children}
       </main>
+      <footer className="foot">
+        Times are those of {plant.name} ({plant.timeZone}).
+      </footer>
     </>
   );
 }

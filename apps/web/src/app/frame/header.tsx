@@ -15,7 +15,7 @@ export function Header() {
       <div className="header__right">
         {me.mailCatcherUrl !== null && (
           <a className="header__mail" href={me.mailCatcherUrl} target="_blank" rel="noreferrer">
-            Read caught mail
+            Caught mail
           </a>
         )}
         <PlantChoice />

@@ -47,7 +47,7 @@ export function Tape({ shifts }: { shifts: StripView['shifts'] }) {
               />
             ))}
           </div>
-          <ShiftLabel shift={shift} before={shifts[index - 1]} />
+          <ShiftLabel shift={shift} before={shifts[index - 1]} after={shifts[index + 1]} />
         </div>
       ))}
     </div>
@@ -86,14 +86,23 @@ function TapeLot({ lot, isOpen, isEntry, isRight, onFocus }: TapeLotProps) {
   );
 }
 
-/** The shift's name, and the day where it changes. */
-function ShiftLabel({ shift, before }: { shift: StripView['shifts'][number]; before?: StripView['shifts'][number] }) {
+type Shift = StripView['shifts'][number];
+
+/** The shift's name, and the day where it changes; the month too, at the tape's beginning and on a month's first day. */
+function ShiftLabel({ shift, before, after }: { shift: Shift; before?: Shift; after?: Shift }) {
   const { plant } = useSession();
-  const day = formatInstant(shift.startsAt, plant.timeZone, 'day');
-  const isNewDay = before === undefined || formatInstant(before.startsAt, plant.timeZone, 'day') !== day;
+  const dayOf = (other: Shift) => formatInstant(other.startsAt, plant.timeZone, 'day');
+  const day = dayOf(shift);
+  const isNewDay = before === undefined || dayOf(before) !== day;
+  const isAlone = after !== undefined && dayOf(after) !== day;
+  const tellsMonth = before === undefined || / 1 /.test(day);
+  const dayWords = tellsMonth ? day : formatInstant(shift.startsAt, plant.timeZone, 'weekday');
   return (
-    <div className={`tape__label${isNewDay ? ' tape__label--day' : ''}`} aria-hidden="true">
-      {isNewDay && <strong>{day} </strong>}
+    <div
+      className={`tape__label${isNewDay ? ' tape__label--day' : ''}${isAlone ? ' tape__label--alone' : ''}`}
+      aria-hidden="true"
+    >
+      {isNewDay && <strong>{dayWords} </strong>}
       <span>{shift.name}</span>
     </div>
   );

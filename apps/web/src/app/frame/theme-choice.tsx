@@ -5,13 +5,8 @@ export function ThemeChoice() {
   const { shown, choose } = useTheme();
   const next = shown === 'dark' ? 'light' : 'dark';
   return (
-    <button
-      type="button"
-      className="action action--plain"
-      onClick={() => choose(next)}
-      aria-label={`Switch to the ${next} theme`}
-    >
-      {next === 'dark' ? 'Night' : 'Day'}
+    <button type="button" className="action action--plain" onClick={() => choose(next)} aria-pressed={shown === 'dark'}>
+      {next === 'dark' ? 'Night theme' : 'Day theme'}
     </button>
   );
 }

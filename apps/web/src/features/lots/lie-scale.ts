@@ -12,7 +12,7 @@ export function lieScale(verdict: VerdictView, width: number, air: number): ((va
     verdict.constant.low,
     verdict.constant.high,
   ].filter((value): value is number => value !== null && Number.isFinite(value));
-  if (verdict.lotMean === null || values.length < 2) return null;
+  if (verdict.lotMean === null || !Number.isFinite(verdict.lotMean) || values.length < 2) return null;
   const [low, high] = [Math.min(...values), Math.max(...values)];
   if (!(high > low)) return null;
   return (value) => air + ((value - low) / (high - low)) * (width - 2 * air);

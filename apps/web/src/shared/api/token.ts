@@ -31,8 +31,9 @@ export function refreshToken(): Promise<boolean> {
 }
 
 /** The cookie rotates with each use, so two tabs must not use the same one. */
-function oneTabAtATime<T>(work: () => Promise<T>): Promise<T> {
-  return 'locks' in navigator ? navigator.locks.request('ebbline.refresh', work) : work();
+async function oneTabAtATime<T>(work: () => Promise<T>): Promise<T> {
+  if (typeof navigator === 'undefined' || !('locks' in navigator)) return work();
+  return await navigator.locks.request('ebbline.refresh', work);
 }
 
 async function requestToken(): Promise<boolean> {

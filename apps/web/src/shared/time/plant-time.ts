@@ -1,12 +1,13 @@
 import type { Instant } from '@app/contracts';
 
 /** How much of an instant is shown. All in 24 h and in the plant's own zone. */
-export type TimeForm = 'full' | 'short' | 'day' | 'time' | 'seconds';
+export type TimeForm = 'full' | 'short' | 'day' | 'weekday' | 'time' | 'seconds';
 
 const FORMS: Record<TimeForm, Intl.DateTimeFormatOptions> = {
   full: { weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit' },
   short: { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' },
   day: { weekday: 'short', day: 'numeric', month: 'short' },
+  weekday: { weekday: 'short', day: 'numeric' },
   time: { hour: '2-digit', minute: '2-digit' },
   seconds: { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit', second: '2-digit' },
 };

@@ -35,7 +35,9 @@ function ChannelRow({ channel }: { channel: ChannelView }) {
       <td data-label="Gauge">
         {gauge === null ? <span className="soft">no gauge now</span> : `${gauge.assetNumber}, ${gauge.kind}`}
       </td>
-      <td data-label="Position">{gauge?.position ?? '–'}</td>
+      <td data-label="Position" className={gauge === null ? 'is-nothing' : undefined}>
+        {gauge?.position ?? '–'}
+      </td>
       <td data-label="Plan in force">
         <Link to={urls.plans(channel.id)} aria-label={`Plans of ${channel.name}`}>
           {planInForce === null ? 'none' : `revision ${planInForce.revision}`}
@@ -47,7 +49,9 @@ function ChannelRow({ channel }: { channel: ChannelView }) {
           </span>
         )}
       </td>
-      <td data-label="Waiting">{planPending === null ? <span className="soft">–</span> : pendingWords(planPending)}</td>
+      <td data-label="Waiting" className={planPending === null ? 'is-nothing' : undefined}>
+        {planPending === null ? <span className="soft">–</span> : pendingWords(planPending)}
+      </td>
     </tr>
   );
 }
