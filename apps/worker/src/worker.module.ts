@@ -13,10 +13,13 @@ import { ProposePlanHandler } from './plans/propose-plan.handler';
 
 const HANDLERS = [ReadIntakeHandler, ScoreIntakeHandler, ScoreChannelsHandler, ProposePlanHandler];
 
+const MAILING = [MailSendingService, MailProcessor];
+
 /** Works off the queues. Needs PlatformModule and QueueModule, both global, in the same program. */
 @Module({})
 export class WorkerModule {
-  static register(): DynamicModule {
+  /** Without `isMailing` mails stay in the outbox, for another worker to send. */
+  static register({ isMailing } = { isMailing: true }): DynamicModule {
     return {
       module: WorkerModule,
       providers: [
@@ -25,11 +28,10 @@ export class WorkerModule {
         ...HANDLERS,
         { provide: OWED_JOB_HANDLERS, inject: HANDLERS, useFactory: (...handlers: OwedJobHandler[]) => handlers },
         WorkProcessor,
-        MailSendingService,
-        MailProcessor,
+        ...(isMailing ? MAILING : []),
         OwedWorkService,
       ],
-      exports: [WorkProcessor, MailSendingService],
+      exports: [WorkProcessor],
     };
   }
 }

@@ -97,3 +97,16 @@ export async function insertDecision(
   await tx('holds').where({ id: hold.id }).update({ state: 'decided' });
   return row.id;
 }
+
+/** The plant's open holds, oldest first. */
+export async function listOpenHolds(
+  db: Queryable,
+  plantId: number,
+): Promise<{ id: number; lotNumber: string; evidenceVersion: number }[]> {
+  return rows<{ id: number; lotNumber: string; evidenceVersion: number }>(
+    db,
+    `select h.id, l.number as "lotNumber", h.evidence_version as "evidenceVersion" from holds h join lots l on l.id = h.lot_id
+     where h.plant_id = :plantId and h.state = 'open' order by h.opened_at, h.id`,
+    { plantId },
+  );
+}
