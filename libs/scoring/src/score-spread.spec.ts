@@ -11,7 +11,7 @@ const LOTS = 100;
 const RUNS = 60;
 /** 24 lot spacings. */
 const PERIOD = 2 * DAY;
-const READINGS = 5;
+const READINGS = 2;
 
 type DriftMaker = (lambda: number, normal: () => number) => (seconds: number) => number;
 
@@ -25,10 +25,10 @@ function spread(pointsPerLot: number, lotEffectSd: number, drift: DriftMaker, se
     betweenReadings: 0.5 * READINGS,
   };
   let squares = 0;
+  const shape = { lotCount: LOTS, pointsPerLot, readingsPerPoint: READINGS, components, normal };
+  const blank = segmentPoints(simulatedLots({ ...shape, driftAt: () => 0, normal: () => 0 }), components, 0);
+  const lambda = lambdaForPeriod(pointDensity(blank.t, blank.weight, PERIOD), PERIOD);
   for (let run = 0; run < RUNS; run += 1) {
-    const shape = { lotCount: LOTS, pointsPerLot, readingsPerPoint: READINGS, components, normal };
-    const blank = segmentPoints(simulatedLots({ ...shape, driftAt: () => 0, normal: () => 0 }), components, 0);
-    const lambda = lambdaForPeriod(pointDensity(blank.t, blank.weight, PERIOD), PERIOD);
     const lots = simulatedLots({ ...shape, driftAt: drift(lambda, normal) });
     const pulls = new Uint8Array(LOTS).fill(1);
     const chosen = choosePoints(segmentPoints(lots, components, 0), LOTS, () => true, pulls);
