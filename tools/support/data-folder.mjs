@@ -19,6 +19,11 @@ export function openDataFolder(dataDir) {
   if (!statSync(dataDir).isDirectory()) {
     throw new Failure(`${dataDir} is a file, not a folder: set EBBLINE_DATA_DIR to another place.`);
   }
+  if (process.getuid?.() === 0 && statSync(dataDir).uid !== 0) {
+    throw new Failure(
+      `${dataDir} belongs to another user, who could not read what root writes into it: start as that user, or set EBBLINE_DATA_DIR.`,
+    );
+  }
   mkdirSync(path.join(dataDir, 'logs'), { recursive: true, mode: 0o700 });
   const probe = path.join(dataDir, `.probe-${process.pid}`);
   writeFileSync(probe, 'probe');

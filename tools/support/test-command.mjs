@@ -8,6 +8,7 @@ import { programList } from './programs.mjs';
 import { duration, say } from './say.mjs';
 import { chosenStages, inLanes } from './stages.mjs';
 import { chooseDist, testEnvironment, testRun } from './test-run.mjs';
+import { stopAsked } from './stop-asked.mjs';
 import { startThrowAwayCluster } from './throw-away-cluster.mjs';
 import { sumCounts, totalsLine } from './totals.mjs';
 
@@ -49,11 +50,11 @@ export async function runTests(root, { only, isVerbose, minutes }) {
   const startedAt = Date.now();
   const endsAt = startedAt + minutes * 60_000;
   const programs = programList();
-  const stop = (name) => {
-    say(`\nEnded by ${name}`);
-    void programs.stopAll().then(() => process.exit(130));
-  };
-  for (const name of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.once(name, () => stop(name));
+  void stopAsked(() => process.exit(130)).then(async ({ signal }) => {
+    say(`\nEnded by ${signal}`);
+    await programs.stopAll();
+    process.exit(130);
+  });
   const stages = chosenStages(only);
   try {
     await prepare(root, stages, programs);

@@ -11,6 +11,7 @@ import { programList } from './programs.mjs';
 import { openProjectCluster } from './project-cluster.mjs';
 import { duration, say, step } from './say.mjs';
 import { readSettings, refuseProduction } from './settings.mjs';
+import { stopAsked } from './stop-asked.mjs';
 import { prepareDatabase } from './trial-database.mjs';
 import { launchApp, launchCatcher } from './trial-programs.mjs';
 import { sayWelcome } from './welcome.mjs';
@@ -60,19 +61,6 @@ function describeEnd({ program, outcome }) {
   return new Failure(`${program.name} ${how}, so everything is being ended.`, { detail: program.tail() });
 }
 
-/** Resolves with the name of the signal that asks us to stop; a second one makes the stop impatient. */
-function stopAsked(programs) {
-  return new Promise((resolve) => {
-    let asked = 0;
-    const hear = (name) => {
-      asked += 1;
-      resolve({ signal: name });
-      if (asked === 2) void programs.stopAll(0.1);
-    };
-    for (const name of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(name, () => hear(name));
-  });
-}
-
 /** Runs the trial until it is asked to stop or something fails; answers the exit code. */
 export async function start(root, env) {
   const startedAt = Date.now();
@@ -81,7 +69,7 @@ export async function start(root, env) {
   openDataFolder(settings.dataDir);
   const release = lockDataFolder(settings.dataDir, settings.port);
   const programs = programList();
-  const stop = stopAsked(programs);
+  const stop = stopAsked(() => programs.stopAll(0.1));
   const context = {};
   process.stdout.on('error', () => {});
   process.stderr.on('error', () => {});
