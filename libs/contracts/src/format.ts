@@ -18,13 +18,18 @@ export function formatNumber(value: number, decimals: number): string {
   return value < 0 && Number(text) !== 0 ? MINUS + text : text;
 }
 
+/** A characteristic such as pH has no unit. */
+function withUnit(number: string, unit: string): string {
+  return unit === '' ? number : number + THIN_SPACE + unit;
+}
+
 export function formatValue(value: number, characteristic: { unit: string; resolution: number }): string {
-  return formatNumber(value, decimalsOf(characteristic.resolution)) + THIN_SPACE + characteristic.unit;
+  return withUnit(formatNumber(value, decimalsOf(characteristic.resolution)), characteristic.unit);
 }
 
 /** A mean shows one decimal more than a single reading. */
 export function formatMean(value: number, characteristic: { unit: string; resolution: number }): string {
-  return formatNumber(value, decimalsOf(characteristic.resolution) + 1) + THIN_SPACE + characteristic.unit;
+  return withUnit(formatNumber(value, decimalsOf(characteristic.resolution) + 1), characteristic.unit);
 }
 
 /** A span of time in words, two units at most: "3 h 12 min", "2 d 4 h", "under a minute". */

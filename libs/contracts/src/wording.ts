@@ -25,7 +25,9 @@ export function signalPhrase(facts: SignalFacts): string {
     case 'lot_mean': {
       const score = facts.score ?? 0;
       const side = score < 0 ? 'below' : 'above';
-      return `lies ${formatNumber(Math.abs(score), 1)} σ ${side} its baseline in ${name} (control limit ${formatNumber(facts.limit ?? 0, 1)} σ)`;
+      const limit = facts.limit ?? 0;
+      const decimals = decimalsApart(Math.abs(score), limit);
+      return `lies ${formatNumber(Math.abs(score), decimals)} σ ${side} its baseline in ${name} (control limit ${formatNumber(limit, decimals)} σ)`;
     }
     case 'outside_specification':
       return `is outside its specification in ${name}${specificationDetail(facts, size)}`;
@@ -39,6 +41,13 @@ export function signalPhrase(facts: SignalFacts): string {
     case 'baseline_moved':
       return `lies where the slow movement of ${name} has gone ${formatValue(Number(facts.facts.movement ?? 0), size)} since the baseline's start, beyond the plan's allowance`;
   }
+}
+
+/** One decimal, or as many more as it takes to see that the score is not the limit. */
+function decimalsApart(score: number, limit: number): number {
+  let decimals = 1;
+  while (decimals < 4 && score !== limit && score.toFixed(decimals) === limit.toFixed(decimals)) decimals++;
+  return decimals;
 }
 
 function specificationDetail(facts: SignalFacts, size: { unit: string; resolution: number }): string {
