@@ -31,8 +31,8 @@ export async function upsertFailure(db: Queryable, subject: string, now: Date, r
      on conflict (subject) do update set
        failures = case when f.last_failed_at < :forgottenBefore then 1 else f.failures + 1 end,
        blocked_until = case when f.last_failed_at >= :forgottenBefore and f.failures + 1 >= :allowed
-         then :now::timestamptz + make_interval(secs =>
-           least(:longest::float8, :first::float8 * 2.0 ^ least(f.failures + 1 - :allowed, 30)))
+         then cast(:now as timestamptz) + make_interval(secs =>
+           least(cast(:longest as float8), cast(:first as float8) * 2.0 ^ least(f.failures + 1 - :allowed, 30)))
          else null end,
        last_failed_at = :now
      where f.blocked_until is null or f.blocked_until <= :now
