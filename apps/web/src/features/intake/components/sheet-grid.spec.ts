@@ -25,9 +25,9 @@ const format = { time: (at: string, form: string) => `${form} ${at.slice(11, 16)
 describe('sheetGrids', () => {
   it('lays a reading a row on the long layout', () => {
     const columns = [column('A', 'time'), column('B', 'lot'), column('C', 'channel'), column('D', 'value')];
-    const [grid] = sheetGrids(columns, [reading(2, 'Thickness', 25.125), reading(3, 'Thickness', null)], format);
+    const [grid] = sheetGrids(columns, [reading(2, 'Thickness', 25.1 + 0.1), reading(3, 'Thickness', null)], format);
     expect(grid.rows).toEqual([
-      { row: 2, cells: ['seconds 05:00', '24118', 'Thickness', '25.125'] },
+      { row: 2, cells: ['seconds 05:00', '24118', 'Thickness', '25.2'] },
       { row: 3, cells: ['seconds 05:00', '24118', 'Thickness', 'off scale, low'] },
     ]);
   });

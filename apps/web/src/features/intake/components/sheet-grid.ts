@@ -71,5 +71,8 @@ function valueText({ value, censoring }: IntakeReadingPreview): string {
   return censoring === 'below' ? 'off scale, low' : censoring === 'above' ? 'off scale, high' : '';
 }
 
-/** As many decimals as the number was written with, so that a misread separator shows. */
-const decimalsWritten = (value: number) => Math.min((String(value).split('.')[1] ?? '').length, 6);
+/** As many decimals as the number was written with, so that a misread separator shows; binary crumbs beyond 12 digits are none. */
+function decimalsWritten(value: number): number {
+  const written = String(Number(value.toPrecision(12)));
+  return Math.min((written.split('.')[1] ?? '').length, 6);
+}
