@@ -10,12 +10,16 @@ import type { PlanParameters } from './types';
 export function checkSegment({
   lots,
   lotIdsToJudge,
-}: Pick<SegmentInput, 'lots' | 'lotIdsToJudge'>): (id: number) => number {
+  segmentStartsAt,
+  segmentEndsAt,
+}: SegmentInput): (id: number) => number {
   const places = new Map<number, number>();
   lots.forEach((lot, place) => {
     if (places.has(lot.lotId)) throw new ScoringError('bad-argument', `Lot ${lot.lotId} is there twice.`);
     if (place > 0 && lot.firstAt < lots[place - 1].firstAt)
       throw new ScoringError('bad-argument', `Lot ${lot.lotId} starts before the lot that it follows.`);
+    if (lot.lastAt < segmentStartsAt || (segmentEndsAt !== null && lot.firstAt > segmentEndsAt))
+      throw new ScoringError('bad-argument', `Lot ${lot.lotId} lies outside the segment.`);
     places.set(lot.lotId, place);
   });
   const placeOf = (id: number) => {

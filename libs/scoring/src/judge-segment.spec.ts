@@ -295,6 +295,20 @@ describe('signals that are off', () => {
   });
 });
 
+describe('a lot of another segment', () => {
+  it('is refused', () => {
+    const input = { plan: madePlan(), lots: channel(20), lotIdsToJudge: [] };
+    const [startsAt, endsAt] = [START_AT, START_AT + 19 * SPACING];
+    expect(() => judgeSegment({ ...input, segmentStartsAt: startsAt, segmentEndsAt: endsAt })).not.toThrow();
+    expect(() => judgeSegment({ ...input, segmentStartsAt: startsAt + SPACING, segmentEndsAt: null })).toThrow(
+      ScoringError,
+    );
+    expect(() => judgeSegment({ ...input, segmentStartsAt: startsAt, segmentEndsAt: endsAt - SPACING })).toThrow(
+      ScoringError,
+    );
+  });
+});
+
 describe('what the caller answers for', () => {
   it('is refused', () => {
     const lots = channel(20);
