@@ -6,7 +6,7 @@
  */
 import { rmSync } from 'node:fs';
 import { createInterface } from 'node:readline';
-import { isAlive, signal, startMark, waitUntil } from './processes.mjs';
+import { isAlive, isGroupAlive, signal, startMark, waitUntil } from './processes.mjs';
 
 const programs = new Map();
 const folders = [];
@@ -21,7 +21,7 @@ async function end({ pid, isGroup, signal: name, graceSeconds, force, mark }) {
   if (startMark(pid) !== mark) return;
   const target = isGroup ? -pid : pid;
   if (!signal(target, name)) return;
-  const hasEnded = await waitUntil(() => !isAlive(target), graceSeconds);
+  const hasEnded = await waitUntil(() => !(isGroup ? isGroupAlive(pid) : isAlive(pid)), graceSeconds);
   if (!hasEnded) signal(target, force);
 }
 

@@ -1,15 +1,5 @@
 import { spawnSync } from 'node:child_process';
-import { readFileSync } from 'node:fs';
-
-/** Whether a process with this id exists (also one that belongs to somebody else). */
-export function isAlive(pid) {
-  try {
-    process.kill(pid, 0);
-    return true;
-  } catch (error) {
-    return error.code === 'EPERM';
-  }
-}
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
 
 function readProc(pid, name) {
   try {
@@ -19,12 +9,39 @@ function readProc(pid, name) {
   }
 }
 
-/** Something that tells a process from a later one with the same id; undefined where there is no /proc. */
-export function startMark(pid) {
+/** The fields of /proc/<pid>/stat from the third on (state, parent, group …); undefined where there is no /proc. */
+function statFields(pid) {
   const stat = readProc(pid, 'stat');
-  // The command name (field 2) may hold spaces and brackets: count from behind its closing bracket. Field 22: start time.
-  return stat?.slice(stat.lastIndexOf(')') + 2).split(' ')[19];
+  // The command name (field 2) may hold spaces and brackets: count from behind its closing bracket.
+  return stat?.slice(stat.lastIndexOf(')') + 2).split(' ');
 }
+
+function exists(pid) {
+  try {
+    process.kill(pid, 0);
+    return true;
+  } catch (error) {
+    return error.code === 'EPERM';
+  }
+}
+
+/** Whether a process with this id runs (also somebody else's); one that has ended and was not collected does not. */
+export const isAlive = (pid) => exists(pid) && statFields(pid)?.[0] !== 'Z';
+
+/** Whether a process of this group runs. */
+export function isGroupAlive(group) {
+  if (!exists(-group)) return false;
+  if (!existsSync('/proc/self/stat')) return true;
+  return readdirSync('/proc')
+    .filter((name) => /^\d+$/.test(name))
+    .some((pid) => {
+      const fields = statFields(pid);
+      return fields?.[2] === String(group) && fields[0] !== 'Z';
+    });
+}
+
+/** Something that tells a process from a later one with the same id (field 22: its start time); undefined without /proc. */
+export const startMark = (pid) => statFields(pid)?.[19];
 
 /** The command line of a process with its arguments joined by spaces, or an empty text. */
 export function commandLine(pid) {

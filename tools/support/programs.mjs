@@ -3,7 +3,7 @@ import { closeSync, existsSync, openSync, readFileSync, renameSync, statSync } f
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { Failure } from './failure.mjs';
-import { isAlive, signal, waitUntil } from './processes.mjs';
+import { isGroupAlive, signal, waitUntil } from './processes.mjs';
 
 const LOG_BYTES = 5 * 1024 * 1024;
 
@@ -69,7 +69,7 @@ export function programList() {
       const target = isGroup ? -program.pid : program.pid;
       program.isStopping = true;
       signal(target, stopSignal);
-      const isGone = () => program.hasEnded && !(isGroup && isAlive(target));
+      const isGone = () => program.hasEnded && !(isGroup && isGroupAlive(program.pid));
       if (!(await waitUntil(isGone, graceSeconds * impatience))) signal(target, force);
       await program.ended;
     };
