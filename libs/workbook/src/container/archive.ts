@@ -8,7 +8,8 @@ const CHUNK = 64 * 1024;
 /** Below this a part may be as compressible as it likes. */
 const RATIO_COUNTS_FROM = 8 * 1024 * 1024;
 const MAX_ENTRIES = 10_000;
-const mebibytes = (bytes: number): string => `${Math.round(bytes / 1024 / 1024)} MB`;
+const mebibytes = (bytes: number): string =>
+  bytes < 1024 * 1024 ? 'less than 1 MB' : `${Math.round(bytes / 1024 / 1024)} MB`;
 
 export const corrupt = (cause?: unknown): WorkbookRefusedError =>
   new WorkbookRefusedError(
@@ -50,7 +51,9 @@ export class Archive {
     if ([...entries.values()].some((entry) => entry.isEncrypted())) {
       throw new WorkbookRefusedError('password-protected', PASSWORD);
     }
-    return new Archive(bytes, zip, entries, limits);
+    const archive = new Archive(bytes, zip, entries, limits);
+    archive.assertDeclaredSizes();
+    return archive;
   }
 
   has(name: string): boolean {
@@ -98,15 +101,30 @@ export class Archive {
     }
   }
 
+  /** Turns away at once what admits its size; what lies about it is caught while inflating. */
+  private assertDeclaredSizes(): void {
+    let total = 0;
+    for (const [name, entry] of this.entries) {
+      if (!/\.(xml|rels)$/.test(name)) continue;
+      total += entry.uncompressedSize;
+      if (this.isBomb(entry.uncompressedSize, entry) || total > this.limits.maxInflatedBytes) throw this.bomb(total);
+    }
+  }
+
   private count(size: number, added: number, entry: Entry): void {
     this.inflated += added;
-    const ratio = size / Math.max(1, entry.compressedSize);
-    const isBomb = size > RATIO_COUNTS_FROM && ratio > this.limits.maxCompressionRatio;
-    if (isBomb || this.inflated > this.limits.maxInflatedBytes) {
-      throw new WorkbookRefusedError(
-        'decompression-bomb',
-        `The file has ${mebibytes(this.bytes.length) === '0 MB' ? 'under 1 MB' : mebibytes(this.bytes.length)} but unpacks to more than ${mebibytes(size)}, which no ordinary workbook does, so reading stopped. Delete unused rows and columns, save it and upload it again.`,
-      );
-    }
+    if (this.isBomb(size, entry) || this.inflated > this.limits.maxInflatedBytes) throw this.bomb(this.inflated);
+  }
+
+  private isBomb(size: number, { compressedSize, uncompressedSize }: Entry): boolean {
+    const isTooDense = size > RATIO_COUNTS_FROM && size / Math.max(1, compressedSize) > this.limits.maxCompressionRatio;
+    return isTooDense || size > uncompressedSize + CHUNK;
+  }
+
+  private bomb(size: number): WorkbookRefusedError {
+    return new WorkbookRefusedError(
+      'decompression-bomb',
+      `The file has ${mebibytes(this.bytes.length)} but unpacks to at least ${mebibytes(size)}, which no ordinary workbook does, so it is not read. Delete unused rows and columns, save it and upload it again.`,
+    );
   }
 }

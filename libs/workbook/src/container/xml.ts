@@ -14,8 +14,11 @@ export interface XmlHandlers {
 
 /** The deepest part of a workbook that is read (a rich text in a sheet) is 7 deep. */
 const MAX_DEPTH = 64;
-/** Characters without a tag: Excel's longest text, every character written as a long entity, is 0.3 million. */
-const MAX_QUIET = 2 * 1024 * 1024;
+/**
+ * Characters without a tag. Excel's longest text, every character written as a long entity, is 0.3 million; above the
+ * size from which the compression ratio counts, so that a bomb is called one.
+ */
+const MAX_QUIET = 10 * 1024 * 1024;
 
 const localName = (name: string): string => {
   const colon = name.indexOf(':');

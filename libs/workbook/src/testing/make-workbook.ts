@@ -62,7 +62,7 @@ function sheetXml({ rows, hiddenRows = [], merged = [], isWithoutNames }: SheetS
 
 /** The parts of a workbook around sheets whose XML is given. */
 export function wrapSheets(
-  sheets: { name: string; state?: string; xml: string | Buffer }[],
+  sheets: { name: string; state?: string; xml: ZipPart['data'] }[],
   is1904 = false,
 ): ZipPart[] {
   const list = sheets.map(
