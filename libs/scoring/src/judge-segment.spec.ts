@@ -249,6 +249,13 @@ describe('movement of the baseline', () => {
     expect(later.startLevel).toBe(startLevel);
   });
 
+  it('starts from a level that is told once, when later lots can no longer change it', () => {
+    // T_eff is 36 lot spacings.
+    expect(judge(climbing.slice(0, 30), [], plan).startLevel).toBeNull();
+    expect(judge(climbing.slice(0, 12), [], plan).startLevel).toBeNull();
+    expect(judge(climbing.slice(0, 40), [], plan).startLevel).toBe(judge(climbing, [], plan).startLevel);
+  });
+
   it('is nothing without a stated allowance', () => {
     expect(judge(climbing, [115]).lots[0].signals).toEqual([]);
   });

@@ -60,11 +60,12 @@ function judgementOf(lot: LotOnChannel, control: ControlPart, plan: PlanParamete
 function present(fits: SegmentFits, lots: LotOnChannel[], plan: PlanParameters): Omit<SegmentJudgement, 'lots'> {
   const { newestEndAt } = fits.timeline;
   const result = fits.at(fits.timeline.setUpTo(newestEndAt));
-  const startLevel = fits.startLevel(newestEndAt);
+  const level = fits.startLevel(newestEndAt);
+  const startLevel = fits.isStartComplete ? level : null;
   if (result.status !== 'fitted') return { ...NOTHING, startLevel };
   const { fit, chosen, lambda, kappa, lotCount } = result;
   let movement = 0;
-  if (startLevel !== null) for (const value of fit.fitted) movement = Math.max(movement, Math.abs(value - startLevel));
+  if (level !== null) for (const value of fit.fitted) movement = Math.max(movement, Math.abs(value - level));
   const ask = askForBreak(result, lots, plan);
   return {
     fit: { lambda, kappa, edf: fit.edf, pointCount: chosen.observations.t.length, lotCount, movement },

@@ -16,6 +16,8 @@ export interface SegmentFits {
   score(result: Extract<SetResult, { status: 'fitted' }>, lot: number): LotScore | null;
   /** Baseline at the segment's start by the data up to `endAt`, as deviation from nominal; null when nothing can be fitted. */
   startLevel(endAt: number): number | null;
+  /** True once later lots can no longer change the start level. */
+  isStartComplete: boolean;
 }
 
 /** @param knownStartLevel used instead of a fit of the first lots when it is a number */
@@ -48,7 +50,8 @@ export function segmentFits(
     levels.set(set.key, level);
     return level;
   };
-  return { timeline, at, score: scoreIn, startLevel };
+  const isStartComplete = knownStartLevel !== null || timeline.newestEndAt > firstSpanEndAt;
+  return { timeline, at, score: scoreIn, startLevel, isStartComplete };
 }
 
 function scoreIn(result: Extract<SetResult, { status: 'fitted' }>, lot: number): LotScore | null {
@@ -73,7 +76,7 @@ function orIllPosed(compute: () => TwoPassResult): SetResult {
   }
 }
 
-/** End of the lots that the level at the segment's start is told from: one T_eff of them, and at least the fewest that can be judged by. */
+/** End of the lots that the level at the segment's start is told from: one T_eff of them, and at least twice the fewest that can be judged by. */
 function endOfFirstSpan(
   lots: readonly LotOnChannel[],
   pulls: Uint8Array,
@@ -81,8 +84,7 @@ function endOfFirstSpan(
   plan: PlanParameters,
 ): number {
   const order = [...new Set(lotOfPoints)].filter((lot) => pulls[lot] === 1);
-  if (order.length === 0) return -Infinity;
+  if (order.length < 2 * LEAST_LOTS) return Infinity;
   const spanEndAt = lots[order[0]].firstAt + Math.min(plan.effectivePeriodSeconds, plan.windowSeconds);
-  const least = order[Math.min(2 * LEAST_LOTS, order.length) - 1];
-  return Math.max(spanEndAt, lots[least].lastAt);
+  return Math.max(spanEndAt, lots[order[2 * LEAST_LOTS - 1]].lastAt);
 }

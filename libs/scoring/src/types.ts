@@ -148,8 +148,8 @@ export interface SegmentJudgement {
   /** Set when so many lots in a row are held that the process may have changed for good. */
   askForBreak?: AskForBreak;
   /**
-   * Deviation from nominal that movements are counted from; null when it could not be computed. Keep it and hand it in again
-   * once the segment's first lots are no longer loaded.
+   * Deviation from nominal that movements are counted from; null until the segment's first T_eff (and sixteen lots) is complete.
+   * Keep it and hand it in again once the segment's first lots are no longer loaded.
    */
   startLevel?: number | null;
 }
