@@ -7,7 +7,7 @@ import { Sheet } from '../shared/ui/sheet';
 export function ErrorPage() {
   const error = useRouteError();
   return (
-    <main className="page">
+    <>
       <PageHeading
         title="This page failed"
         lead="Nothing was changed by it. Load it again, or go to the desk and come back."
@@ -15,6 +15,6 @@ export function ErrorPage() {
       <Sheet>
         <ProblemNotice problem={error} onRetry={() => window.location.reload()} />
       </Sheet>
-    </main>
+    </>
   );
 }

@@ -10,11 +10,18 @@ import { routes } from './urls';
 
 const page = (path: string, lazy: RouteObject['lazy']): RouteObject => ({ path, lazy, errorElement: <ErrorPage /> });
 
+/** Where the frame itself failed. */
+const bareErrorPage = (
+  <main className="page">
+    <ErrorPage />
+  </main>
+);
+
 export const router = createBrowserRouter([
-  { path: routes.signIn, element: <SignInPage />, errorElement: <ErrorPage /> },
+  { path: routes.signIn, element: <SignInPage />, errorElement: bareErrorPage },
   {
     element: <SignedIn />,
-    errorElement: <ErrorPage />,
+    errorElement: bareErrorPage,
     hydrateFallbackElement: <Skeleton lines={3} />,
     children: [
       { path: routes.desk, element: <DeskPage />, errorElement: <ErrorPage /> },

@@ -27,7 +27,7 @@ export function SignedIn() {
         </main>
       );
     case 'signed_out':
-      return <Navigate to={urls.signIn(pathname + search)} replace />;
+      return <Navigate to={urls.signIn(state.how === 'left' ? undefined : pathname + search)} replace />;
     case 'signed_in':
       return (
         <SessionProvider me={state.me} nowhere={<NoPlant />}>

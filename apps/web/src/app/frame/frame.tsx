@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
 import './frame.css';
+import { ScrollRestoration } from 'react-router-dom';
 import { useSession } from '../../shared/session/session';
 import { Header } from './header';
 import { LineNavigation } from './line-navigation';
@@ -16,6 +17,7 @@ export function Frame({ children }: { children: ReactNode }) {
       <Header />
       <LineStrip />
       <LineNavigation />
+      <ScrollRestoration />
       <main className="page" id="page" tabIndex={-1}>
         {children}
       </main>

@@ -12,8 +12,9 @@ export function LineNavigation() {
   return (
     <div className="line-bar">
       <nav className="line-bar__pages" aria-label={`Pages of ${line.name}`}>
-        <span className="line-bar__line" title={heldWords(line.heldCount)}>
+        <span className="line-bar__line">
           {line.name}
+          {line.heldCount > 0 && <span className="line-bar__held"> {heldWords(line.heldCount)}</span>}
         </span>
         <NavLink to={urls.desk()} end>
           Desk

@@ -8,15 +8,6 @@ export const GROUP_WORDS: Record<DeskGroup, string> = {
   set_aside: 'Set aside',
 };
 
-/** What the time beside an item counts. */
-export const SINCE_WORDS: Record<DeskGroup, string> = {
-  decide: 'Held',
-  fix: 'Waiting',
-  approve: 'Proposed',
-  check: 'Due',
-  set_aside: 'Held',
-};
-
 /** The groups that hold anything, in the desk's order, each with its oldest first. */
 export function groupsOf(items: readonly DeskItem[]): { group: DeskGroup; items: DeskItem[] }[] {
   return DESK_GROUPS.map((group) => ({

@@ -3,13 +3,16 @@ import { plantInstant } from '../../shared/time/plant-time';
 
 export const PAGE_SIZE = 50;
 export const NEWEST_FIRST = '-startsAt';
+const SORTS = ['startsAt', '-startsAt', 'number', '-number', 'score', '-score'];
 
 export const STATE_CHOICES = [
-  { value: '', label: 'any verdict' },
+  { value: '', label: 'any' },
   { value: 'outside_control_limits', label: 'outside control limits' },
   { value: 'outside_specification', label: 'outside specification' },
   { value: 'not_scored', label: 'not scored' },
   { value: 'within_control_limits', label: 'within control limits' },
+  { value: 'released', label: 'released' },
+  { value: 'scrapped', label: 'scrapped' },
 ];
 
 export const HELD_CHOICES = [
@@ -32,7 +35,7 @@ export function filtersIn(search: URLSearchParams): LotFilters {
     from: day(search.get('from')),
     to: day(search.get('to')),
     text: search.get('text'),
-    sort: search.get('sort') ?? NEWEST_FIRST,
+    sort: SORTS.find((sort) => sort === search.get('sort')) ?? NEWEST_FIRST,
     page: Number.isInteger(page) && page > 1 ? page : 1,
   };
 }

@@ -39,6 +39,6 @@ export function showProblem<T extends FieldValues>(
   });
   if (placed.length > 0 && rest.length === 0) return;
   const sentences = rest.length > 0 ? rest.map((item) => item.detail) : [problem.detail];
-  if (problem.correlationId !== null) sentences.push(`(Reference ${problem.correlationId})`);
+  if (problem.status >= 500 && problem.correlationId !== null) sentences.push(`(Reference ${problem.correlationId})`);
   form.setError('root', { type: 'server', message: sentences.join(' ') });
 }

@@ -7,7 +7,7 @@ import { endSession, keepToken, onSessionEnd, refreshToken } from '../api/token'
 export type AuthState =
   | { kind: 'checking' }
   | { kind: 'unreachable'; error: unknown }
-  | { kind: 'signed_out'; hasExpired: boolean }
+  | { kind: 'signed_out'; how: 'not_yet' | 'expired' | 'left' }
   | { kind: 'signed_in'; me: Me };
 
 interface Auth {
@@ -40,7 +40,7 @@ export function AuthProvider({ children }: { children: ReactNode }) {
   useEffect(() => {
     return onSessionEnd(() => {
       queryClient.clear();
-      setState((before) => ({ kind: 'signed_out', hasExpired: before.kind === 'signed_in' }));
+      setState((before) => ({ kind: 'signed_out', how: before.kind === 'signed_in' ? 'expired' : 'not_yet' }));
     });
   }, []);
 
@@ -54,7 +54,7 @@ export function AuthProvider({ children }: { children: ReactNode }) {
   const signOut = useCallback(async () => {
     await apiSend<void>('POST', '/auth/sign-out').catch(() => undefined);
     endSession();
-    setState({ kind: 'signed_out', hasExpired: false });
+    setState({ kind: 'signed_out', how: 'left' });
   }, []);
 
   const checkAgain = useCallback(() => {
@@ -69,7 +69,7 @@ export function AuthProvider({ children }: { children: ReactNode }) {
 /** Picks up the session that the refresh cookie stands for, if any. */
 async function resume(): Promise<AuthState> {
   try {
-    if (!(await refreshToken())) return { kind: 'signed_out', hasExpired: false };
+    if (!(await refreshToken())) return { kind: 'signed_out', how: 'not_yet' };
     return { kind: 'signed_in', me: await apiGet<Me>('/me') };
   } catch (error) {
     return { kind: 'unreachable', error };

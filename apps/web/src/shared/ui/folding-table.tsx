@@ -1,5 +1,4 @@
 import type { ReactNode } from 'react';
-import './folding-table.css';
 
 export interface FoldingColumn<T> {
   name: string;
@@ -20,7 +19,7 @@ interface FoldingTableProps<T> {
 export function FoldingTable<T>({ caption, columns, items, keyOf }: FoldingTableProps<T>) {
   return (
     <div className="table__wrap">
-      <table className="plain folding-table">
+      <table className="plain folds">
         <caption className="visually-hidden">{caption}</caption>
         <thead>
           <tr>
@@ -37,7 +36,7 @@ export function FoldingTable<T>({ caption, columns, items, keyOf }: FoldingTable
               {columns.map((column) => (
                 <td
                   key={column.name}
-                  className={column.isLead ? 'is-lead' : column.isNumber ? 'is-number' : undefined}
+                  className={column.isLead ? 'folds__first' : column.isNumber ? 'is-number' : undefined}
                   data-label={column.isLead ? undefined : column.name}
                 >
                   {column.cell(item)}

@@ -10,12 +10,13 @@ interface ProblemNoticeProps {
 
 /** What failed, why, what now; the reference number small below. */
 export function ProblemNotice({ problem, what, onRetry }: ProblemNoticeProps) {
-  const { detail, correlationId } = asProblem(problem);
+  const { detail, correlationId, status } = asProblem(problem);
+  const mayPass = status === 0 || status === 429 || status >= 500;
   return (
     <div className="problem" role="alert">
       {what !== undefined && <p className="problem__what">{what}</p>}
       <p className="problem__why">{detail}</p>
-      {onRetry !== undefined && (
+      {onRetry !== undefined && mayPass && (
         <Action kind="quiet" onPress={onRetry}>
           Try again
         </Action>

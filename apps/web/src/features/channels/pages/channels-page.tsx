@@ -1,4 +1,3 @@
-import '../channels.css';
 import { useParams } from 'react-router-dom';
 import { useLine } from '../../../shared/line-context/line-context';
 import { EmptyNote } from '../../../shared/ui/empty-note';
@@ -22,11 +21,7 @@ export function ChannelsPage() {
           query={query}
           failure="The channels could not be loaded."
           isEmpty={(channels) => channels.length === 0}
-          empty={
-            <div className="channels__empty">
-              <EmptyNote>This line measures nothing yet. An administrator sets up its channels.</EmptyNote>
-            </div>
-          }
+          empty={<EmptyNote>This line measures nothing yet. An administrator sets up its channels.</EmptyNote>}
         >
           {(channels) => <ChannelTable channels={channels} />}
         </Loaded>

@@ -1,8 +1,7 @@
 import type { DeskGroup, DeskItem } from '@app/contracts';
 import { useId } from 'react';
 import { ActionLink } from '../../../shared/ui/action';
-import { Age } from '../../../shared/ui/age';
-import { GROUP_WORDS, SINCE_WORDS } from '../groups';
+import { GROUP_WORDS } from '../groups';
 
 /** One group of the desk: sentences, each with the one action that ends it. */
 export function DeskGroupList({ group, items }: { group: DeskGroup; items: DeskItem[] }) {
@@ -15,12 +14,7 @@ export function DeskGroupList({ group, items }: { group: DeskGroup; items: DeskI
       <ul className="desk-group__items">
         {items.map((item) => (
           <li key={`${item.action.path} ${item.sentence}`} className="desk-item">
-            <p className="desk-item__sentence">
-              {item.sentence}{' '}
-              <span className="soft">
-                {SINCE_WORDS[group]} <Age since={item.since} />.
-              </span>
-            </p>
+            <p className="desk-item__sentence">{item.sentence}</p>
             <ActionLink kind="quiet" to={item.action.path} label={`${item.action.label}: ${item.sentence}`}>
               {item.action.label}
             </ActionLink>

@@ -1,6 +1,6 @@
 import { Dropdown } from 'primereact/dropdown';
 import { InputText } from 'primereact/inputtext';
-import { useEffect, useState } from 'react';
+import { useEffect, useId, useState } from 'react';
 import type { LotFilters } from '../../../app/urls';
 import { useLine } from '../../../shared/line-context/line-context';
 import { Action } from '../../../shared/ui/action';
@@ -19,7 +19,7 @@ export function LotFilterBar({ filters, onChange }: LotFilterBarProps) {
   ];
   return (
     <form className="filters" role="search" aria-label="Filter the lots" onSubmit={(event) => event.preventDefault()}>
-      <LotText key={filters.text ?? ''} text={filters.text ?? ''} onChange={(text) => onChange({ text })} />
+      <LotText text={filters.text ?? ''} onChange={(text) => onChange({ text })} />
       <Choice
         label="Line"
         value={filters.line == null ? '' : String(filters.line)}
@@ -27,7 +27,7 @@ export function LotFilterBar({ filters, onChange }: LotFilterBarProps) {
         onChange={(value) => onChange({ line: value === '' ? null : Number(value) })}
       />
       <Choice
-        label="Verdict"
+        label="Verdict or fate"
         value={filters.state ?? ''}
         choices={STATE_CHOICES}
         onChange={(state) => onChange({ state })}
@@ -49,6 +49,11 @@ const TYPING_PAUSE_MS = 350;
 /** Asks once typing pauses. */
 function LotText({ text, onChange }: { text: string; onChange: (text: string) => void }) {
   const [draft, setDraft] = useState(text);
+  const [inAddress, setInAddress] = useState(text);
+  if (text !== inAddress) {
+    setInAddress(text);
+    setDraft(text);
+  }
   useEffect(() => {
     if (draft === text) return;
     const timer = setTimeout(() => onChange(draft), TYPING_PAUSE_MS);
@@ -70,7 +75,7 @@ interface ChoiceProps {
 }
 
 function Choice({ label, value, choices, onChange }: ChoiceProps) {
-  const inputId = `filter-${label.toLowerCase()}`;
+  const inputId = useId();
   return (
     <div className="filters__field">
       <label htmlFor={inputId}>{label}</label>
@@ -80,6 +85,7 @@ function Choice({ label, value, choices, onChange }: ChoiceProps) {
         options={choices}
         optionLabel="label"
         optionValue="value"
+        scrollHeight="320px"
         onChange={(event) => onChange(String(event.value))}
       />
     </div>

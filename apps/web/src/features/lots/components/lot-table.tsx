@@ -37,7 +37,7 @@ export function LotTable({ lots, sort, onSort }: LotTableProps) {
         bodyClassName="is-number lots__quantity"
       />
       <Column header="Verdict" body={(lot: LotListItem) => verdictWords(lot.mark)} bodyClassName="lots__verdict" />
-      <Column header="Stands out most in" body={farthestCell} bodyClassName="lots__farthest" />
+      <Column header="Stands out most in" field="score" sortable body={farthestCell} bodyClassName="lots__farthest" />
       <Column header="Fate" body={fateCell} bodyClassName="lots__fate" />
     </DataTable>
   );

@@ -90,5 +90,6 @@ function footing(verdict: VerdictView): string {
   const words = bothVerdicts(verdict);
   const plan = verdict.planRevision === null ? 'no plan in force' : `plan revision ${verdict.planRevision}`;
   const readings = verdict.readingCount === 1 ? '1 reading' : `${verdict.readingCount} readings`;
-  return `${words.charAt(0).toUpperCase()}${words.slice(1)}. ${readings} by gauge ${verdict.channel.gaugeAssetNumber}, ${plan}, method ${verdict.methodVersion}.`;
+  const gauge = verdict.channel.gaugeAssetNumber === '' ? '' : ` by gauge ${verdict.channel.gaugeAssetNumber}`;
+  return `${words.charAt(0).toUpperCase()}${words.slice(1)}. ${readings}${gauge}, ${plan}, method ${verdict.methodVersion}.`;
 }

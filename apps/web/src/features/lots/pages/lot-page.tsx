@@ -6,9 +6,9 @@ import { urls } from '../../../app/urls';
 import { useShowsLine } from '../../../shared/line-context/line-context';
 import { ActionLink } from '../../../shared/ui/action';
 import { EmptyNote } from '../../../shared/ui/empty-note';
-import { Loaded } from '../../../shared/ui/loaded';
 import { Mark } from '../../../shared/ui/mark';
 import { PageHeading } from '../../../shared/ui/page-heading';
+import { ProblemNotice } from '../../../shared/ui/problem-notice';
 import { Sheet } from '../../../shared/ui/sheet';
 import { Skeleton } from '../../../shared/ui/skeleton';
 import { useLot } from '../api/lots';
@@ -22,14 +22,22 @@ export function LotPage() {
   const lotId = Number(useParams().lotId);
   const query = useLot(lotId);
   useShowsLine(query.data?.line.id, query.data?.plantId);
+  if (query.data !== undefined) return <LotContent lot={query.data} />;
   return (
-    <Loaded
-      query={query}
-      failure="The lot could not be loaded."
-      skeleton={<Skeleton lines={9} label="Loading the lot" />}
-    >
-      {(lot) => <LotContent lot={lot} />}
-    </Loaded>
+    <>
+      <PageHeading title="Lot" />
+      <Sheet>
+        {query.isError ? (
+          <ProblemNotice
+            problem={query.error}
+            what="The lot could not be loaded."
+            onRetry={() => void query.refetch()}
+          />
+        ) : (
+          <Skeleton lines={9} label="Loading the lot" />
+        )}
+      </Sheet>
+    </>
   );
 }
 
@@ -56,9 +64,7 @@ function LotContent({ lot }: { lot: LotView }) {
         isFlush
       >
         {lot.verdicts.length === 0 ? (
-          <div className="lots__empty">
-            <EmptyNote>No channel has judged this lot yet. Verdicts appear once its workbook is scored.</EmptyNote>
-          </div>
+          <EmptyNote>No channel has judged this lot yet. Verdicts appear once its workbook is scored.</EmptyNote>
         ) : (
           <VerdictTable lot={lot} />
         )}

@@ -22,7 +22,10 @@ export function LotsPage() {
   const query = useLots(filters, plant);
   const change = (next: Partial<LotFilters>) => {
     const address = urls.lots({ ...filters, page: null, ...next });
-    setSearch(new URLSearchParams(address.split('?')[1] ?? ''), { replace: true });
+    setSearch(new URLSearchParams(address.split('?')[1] ?? ''), {
+      replace: true,
+      preventScrollReset: next.page === undefined,
+    });
   };
   return (
     <>
@@ -50,12 +53,10 @@ export function LotsPage() {
 
 function NoLots({ isFiltered }: { isFiltered: boolean }) {
   return (
-    <div className="lots__empty">
-      <EmptyNote>
-        {isFiltered
-          ? 'No lot fits all of these filters. Take one away to see more.'
-          : 'No lots yet. They appear once a shift’s workbook is in.'}
-      </EmptyNote>
-    </div>
+    <EmptyNote>
+      {isFiltered
+        ? 'No lot fits all of these filters. Take one away to see more.'
+        : 'No lots yet. They appear once a shift’s workbook is in.'}
+    </EmptyNote>
   );
 }

@@ -22,7 +22,7 @@ export function SignInPage() {
           that does not fit decided.
         </p>
         {state.kind === 'unreachable' && <ProblemNotice problem={state.error} onRetry={checkAgain} />}
-        {state.kind === 'signed_out' && state.hasExpired && (
+        {state.kind === 'signed_out' && state.how === 'expired' && (
           <p className="sign-in__expired" role="status">
             Your session has ended. Sign in again to go on where you were.
           </p>
