@@ -1,7 +1,10 @@
 import react from '@vitejs/plugin-react';
+import { resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { defineConfig } from 'vite';
 
+/** Beside the server programs, wherever those are built to. */
+const dist = process.env.EBBLINE_DIST || 'dist';
 const here = (path: string) => fileURLToPath(new URL(path, import.meta.url));
 
 export default defineConfig({
@@ -9,7 +12,7 @@ export default defineConfig({
   plugins: [react()],
   resolve: { alias: { '@app/contracts': here('../../libs/contracts/src/index.ts') } },
   build: {
-    outDir: here('../../dist/apps/web'),
+    outDir: resolve(here('../..'), dist, 'apps/web'),
     emptyOutDir: true,
     // Data URLs and the preload helper's inline code would need a looser content security policy.
     assetsInlineLimit: 0,

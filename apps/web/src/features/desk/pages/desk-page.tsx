@@ -14,7 +14,10 @@ import { countWords, groupsOf } from '../groups';
 export function DeskPage() {
   const { plant } = useSession();
   const query = useDesk(plant.id);
-  const lead = query.data === undefined ? undefined : `${countWords(query.data.items.length)} at ${plant.name}.`;
+  const lead =
+    query.data === undefined || query.data.items.length === 0
+      ? undefined
+      : `${countWords(query.data.items.length)} at ${plant.name}.`;
   return (
     <>
       <PageHeading title="Desk" lead={lead} />
