@@ -19,8 +19,8 @@ function temporaryFolder(user) {
   return folder;
 }
 
-/** Starts a cluster of its own in a temporary folder; `stop()` ends it and removes the folder. */
-export async function startThrowAwayCluster(programs) {
+/** Starts a cluster of its own in a temporary folder; `stop()` ends it and removes the folder. A bench hands in options that do wait for the disk. */
+export async function startThrowAwayCluster(programs, options = OPTIONS) {
   const [newest] = listPostgres();
   if (!newest) throw new Failure(`PostgreSQL is not installed. Run \`${installCommand(['postgresql'])}\` as root.`);
   const user = serverUser('');
@@ -35,7 +35,7 @@ export async function startThrowAwayCluster(programs) {
     log: path.join(folder, 'postgresql.log'),
   };
   await createCluster({ ...place, password, isThrowAway: true });
-  const { server, port } = await startCluster({ ...place, options: OPTIONS });
+  const { server, port } = await startCluster({ ...place, options });
   const stop = async () => {
     await server.stop();
     rmSync(folder, { recursive: true, force: true, maxRetries: 5, retryDelay: 100 });
