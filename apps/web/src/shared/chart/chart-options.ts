@@ -6,6 +6,7 @@ import type { PanePlugin, PaneSurface } from './pane-plugin';
 import type { TimeRange } from './range';
 import { timeLabels } from './time-labels';
 import { axisEnds, joinSpans } from './value-scale';
+import { zonedDate } from './zoned-date';
 
 /** What a chart shows; may change at any time and is read when it draws. */
 export interface ChartContent {
@@ -28,7 +29,7 @@ export interface ChartFrame {
 }
 
 export const TIME_AXIS_PX = 38;
-const TOP_PX = 18;
+const TOP_PX = 26;
 
 /** uPlot draws axes, grid and cursor and owns scales and zone; everything else on the pane is drawn by its plugins. */
 export function chartOptions(frame: ChartFrame, size: { width: number; height: number }, content: () => ChartContent) {
@@ -38,7 +39,7 @@ export function chartOptions(frame: ChartFrame, size: { width: number; height: n
   const options: uPlot.Options = {
     ...size,
     ms: 1,
-    tzDate: (at) => uPlot.tzDate(new Date(at), frame.zone),
+    tzDate: (at) => zonedDate(at, frame.zone),
     padding: [TOP_PX, frame.gutters.right, frame.hasTimeAxis ? 0 : 6, 0],
     legend: { show: false },
     cursor: {
@@ -138,6 +139,6 @@ function drawLayers(u: uPlot, frame: ChartFrame, { plugins, range, theme }: Char
   ctx.fillStyle = theme.colour('ink-soft');
   ctx.textAlign = 'left';
   ctx.textBaseline = 'alphabetic';
-  ctx.fillText(frame.unit, Math.max(left - frame.gutters.left * ratio, 0) + 2 * ratio, top - 6 * ratio);
+  ctx.fillText(frame.unit, Math.max(left - frame.gutters.left * ratio, 0) + 2 * ratio, top - 11 * ratio);
   ctx.restore();
 }

@@ -1,4 +1,4 @@
-import { useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
+import { memo, useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
 import { mergeColumns, type Columns } from './columns';
 import { guttersOf } from './pane-stack';
 import { clampRange, panRange, SHORTEST_SPAN_MS, type TimeRange } from './range';
@@ -68,7 +68,7 @@ export function RangeBrush({ range, bounds, columns, breaks, format, onRange }: 
       {width > 0 && (
         <>
           <svg width={width} height={HEIGHT} aria-hidden="true">
-            {columns !== null && <path className="range-brush-ink" d={inkPath(columns, bounds, inner, left)} />}
+            {columns !== null && <Ink columns={columns} bounds={bounds} inner={inner} left={left} />}
             {breaks.map((at) => (
               <line key={at} className="range-brush-break" x1={place(at)} x2={place(at)} y1={0} y2={HEIGHT} />
             ))}
@@ -92,6 +92,18 @@ export function RangeBrush({ range, bounds, columns, breaks, format, onRange }: 
     </div>
   );
 }
+
+interface InkProps {
+  columns: Columns;
+  bounds: TimeRange;
+  inner: number;
+  left: number;
+}
+
+/** Drawn once, not with every move of the window. */
+const Ink = memo(function Ink({ columns, bounds, inner, left }: InkProps) {
+  return <path className="range-brush-ink" d={inkPath(columns, bounds, inner, left)} />;
+});
 
 function inkPath(columns: Columns, bounds: TimeRange, inner: number, left: number): string {
   const { at, low, high } = mergeColumns(columns, bounds.from, bounds.to, inner / 1.5);

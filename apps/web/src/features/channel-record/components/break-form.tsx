@@ -10,6 +10,11 @@ import { useToast } from '../../../shared/ui/toast';
 import { useDeclareBreak } from '../api/use-declare-break';
 import { BREAK_WORDS } from '../../../shared/record/record-words';
 
+/** Typed rather than picked: a browser's own date field may swap day and month, and show 2 PM for 14:00. */
+const TIME = /^([01]\d|2[0-3]):[0-5]\d$/;
+const isDay = (text: string) =>
+  (/^\d{4}-\d{2}-\d{2}$/.test(text) && !Number.isNaN(Date.parse(text))) || 'Give the day as 2026-12-01.';
+
 interface BreakFields {
   day: string;
   time: string;
@@ -64,23 +69,28 @@ export function BreakForm({ channel, suggestedAt, onDone }: BreakFormProps) {
         known.
       </p>
       <div className="break-form__row">
-        <Field label="Day" error={errors.day?.message}>
+        <Field label="Day, year-month-day" error={errors.day?.message}>
           {(control) => (
             <input
               {...control}
               className="input"
-              type="date"
-              {...form.register('day', { required: 'Say on which day it was done.' })}
+              placeholder="2026-12-01"
+              autoComplete="off"
+              {...form.register('day', { validate: isDay })}
             />
           )}
         </Field>
-        <Field label={`Time (${plant.timeZone})`} error={errors.time?.message}>
+        <Field label={`Time, 24 h, ${plant.timeZone}`} error={errors.time?.message}>
           {(control) => (
             <input
               {...control}
               className="input"
-              type="time"
-              {...form.register('time', { required: 'Say at what time it was done.' })}
+              placeholder="14:05"
+              autoComplete="off"
+              {...form.register('time', {
+                pattern: { value: TIME, message: 'Give the time as 14:05.' },
+                required: 'Say at what time it was done.',
+              })}
             />
           )}
         </Field>

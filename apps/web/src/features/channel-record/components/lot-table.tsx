@@ -1,4 +1,4 @@
-import { decimalsOf, formatNumber, type RecordLot, type RecordView } from '@app/contracts';
+import { decimalsOf, formatNumber, type RecordLot } from '@app/contracts';
 import { useState } from 'react';
 import { Link } from 'react-router-dom';
 import { urls } from '../../../app/urls';
@@ -10,17 +10,24 @@ import { Mark } from '../../../shared/ui/mark';
 import { markWords } from '../../../shared/ui/mark-words';
 import { When } from '../../../shared/ui/when';
 import { limitsText, scoreText } from '../../../shared/record/record-words';
+import type { ChannelRecord } from '../../../shared/record/use-channel-record';
 
 const STEP = 50;
 
 /** The figures of the panes as a table, newest lot first. */
-export function LotTable({ record, range }: { record: RecordView; range: TimeRange }) {
+export function LotTable({ record, range }: { record: ChannelRecord; range: TimeRange }) {
   const [count, setCount] = useState(STEP);
   const lots = record.lots.filter((lot) => lot.endsAt >= range.from && lot.startsAt <= range.to).reverse();
   const { unit, resolution } = record.channel.characteristic;
   if (lots.length === 0) return <EmptyNote>No lot lies in this range. Zoom out, or press 0 on the chart.</EmptyNote>;
   return (
     <>
+      {record.lotCount !== undefined && record.lotCount > record.lots.length && (
+        <p className="record-more soft">
+          {record.lots.length} of {record.lotCount} lots are drawn and listed: all that stand out, and every so many of
+          the others. Zoom in to see each.
+        </p>
+      )}
       <FoldingTable
         caption={`Lots of ${record.channel.name} in the shown range`}
         columns={columnsOf(unit, decimalsOf(resolution) + 1)}

@@ -1,4 +1,3 @@
-import type { RecordView } from '@app/contracts';
 import { useMemo, useState } from 'react';
 import { useParams, useSearchParams } from 'react-router-dom';
 import { clampRange, isSameRange, type TimeRange } from '../../../shared/chart/range';
@@ -12,7 +11,7 @@ import { Sheet } from '../../../shared/ui/sheet';
 import { Skeleton } from '../../../shared/ui/skeleton';
 import { urls } from '../../../app/urls';
 import { columnsFor, parseRange, withMargin } from '../api/record-range';
-import { useChannelRecord } from '../../../shared/record/use-channel-record';
+import { useChannelRecord, type ChannelRecord } from '../../../shared/record/use-channel-record';
 import { BreakForm } from '../components/break-form';
 import { LotTable } from '../components/lot-table';
 import { RecordChart } from '../components/record-chart';
@@ -64,7 +63,7 @@ export function ChannelRecordPage() {
   );
 }
 
-function Record({ record, asked, home }: { record: RecordView; asked: TimeRange | null; home: TimeRange }) {
+function Record({ record, asked, home }: { record: ChannelRecord; asked: TimeRange | null; home: TimeRange }) {
   const { can } = useSession();
   const [, setSearch] = useSearchParams();
   const [isDeclaring, setIsDeclaring] = useState(false);

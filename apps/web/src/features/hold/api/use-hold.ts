@@ -21,7 +21,7 @@ export function useSetAside(holdId: number) {
   const renew = useRenewEverything();
   return useMutation({
     mutationFn: (body: { place?: string }) => apiSend<unknown>('POST', `/holds/${holdId}/set-aside`, body),
-    onSuccess: renew,
+    onSettled: renew,
   });
 }
 

@@ -18,7 +18,10 @@ export function useIntakeProgress(intakeId: number, isOn: boolean): IntakeProgre
     };
     // Without a stream the page still finds the end by asking.
     apiEvents<IntakeProgress>(`/intakes/${intakeId}/events`, onEvent, listening.signal).catch(() => undefined);
-    return () => listening.abort();
+    return () => {
+      listening.abort();
+      setProgress(null);
+    };
   }, [client, intakeId, isOn]);
   return isOn ? progress : null;
 }
