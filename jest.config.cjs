@@ -18,6 +18,7 @@ const base = {
   rootDir: __dirname,
   roots: ['apps', 'database', 'libs', 'test', 'tools'].map((folder) => `<rootDir>/${folder}`),
   testEnvironment: 'node',
+  setupFilesAfterEnv: ['<rootDir>/test/support/patience.cjs'],
   transform: swc,
   moduleNameMapper: Object.fromEntries(libs.map((name) => [`^@app/${name}$`, `<rootDir>/libs/${name}/src/index.ts`])),
 };

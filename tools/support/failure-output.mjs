@@ -6,7 +6,18 @@ const LINES_EACH = 30;
 // Colours in a terminal's codes, which jest writes into its messages.
 const COLOURS = new RegExp(`${String.fromCharCode(27)}\\[[0-9;]*m`, 'g');
 
-const clip = (text, lines) => text.replaceAll(COLOURS, '').split('\n').slice(0, lines).join('\n');
+/** Frames outside our own code and the same error told again as its own cause say nothing more. */
+const isTelling = (line) => !/^\s+at .*(node_modules|node:internal|<anonymous>)/.test(line);
+
+const clip = (text, lines) =>
+  text
+    .replaceAll(COLOURS, '')
+    .split(/^\[cause\]/m)[0]
+    .split('\n')
+    .filter(isTelling)
+    .slice(0, lines)
+    .join('\n')
+    .trimEnd();
 
 /** The failed tests of a jest report, each with the start of its message; an empty text when none failed. */
 export function describeJestFailures(report) {
