@@ -48,7 +48,7 @@ describe('readSheetRows', () => {
       { name: 'S', xml: '<worksheet><sheetData><row><c t="s"><v>1</v></c></row></sheetData></worksheet>' },
     ]);
     const relations = parts.find((part) => part.name.endsWith('workbook.xml.rels'))!;
-    relations.data = String(relations.data).replace(
+    relations.data = (relations.data as string).replace(
       '</Relationships>',
       '<Relationship Id="t" Type="x/sharedStrings" Target="/xl/sharedStrings.xml"/></Relationships>',
     );

@@ -40,11 +40,19 @@ export class Findings {
     if (count) count.count += 1;
     else this.counts.set(key, { code, severity, count: 1, firstSheet: place.sheet, firstRow: row });
     const isListed = severity !== 'notice' || (count?.count ?? 1) <= MAX_NOTICES_PER_CODE;
-    if (!isListed || this.problems.length >= MAX_LISTED) return;
+    if (!isListed || !this.makeRoom(severity)) return;
     const column = place.column === undefined ? null : columnLetters(place.column);
     const sentence = `${placeText(place)} ${say()}`;
     const detail = ownText(/[.?!]$/.test(sentence) ? sentence : `${sentence}.`);
     this.problems.push({ sheet: place.sheet, row, column, code, detail, severity });
+  }
+
+  /** What stops the whole workbook is listed even when the list is full. */
+  private makeRoom(severity: Severity): boolean {
+    if (this.problems.length < MAX_LISTED) return true;
+    const last = severity === 'blocking' ? this.problems.findLastIndex((one) => one.severity !== 'blocking') : -1;
+    if (last >= 0) this.problems.splice(last, 1);
+    return last >= 0;
   }
 
   countOf(severity: Severity): number {

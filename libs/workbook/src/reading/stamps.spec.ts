@@ -6,6 +6,8 @@ const number = (value: number): Cell => ({ kind: 'number', number: value, text: 
 const text = (value: string): Cell => ({ kind: 'text', number: NaN, text: value, format: GENERAL });
 const local = (iso: string) => ({ kind: 'local', ms: Date.parse(`${iso}Z`) });
 
+const special = (kind: Cell['kind'], text: string): Cell => ({ kind, number: NaN, text, format: GENERAL });
+
 describe('serialToLocal', () => {
   // Facts of Excel's two date systems as Microsoft documents them (support article "Date systems in Excel").
   it('reads 40729 as 5 July 2011 in the 1900 system', () => {
@@ -79,7 +81,7 @@ describe('parseStamp', () => {
     [number(60), 'date-does-not-exist'],
     [number(20260105), 'not-a-date'],
     [number(-3), 'not-a-date'],
-    [{ kind: 'error', number: NaN, text: '#VALUE!', format: GENERAL } as Cell, 'error-cell'],
+    [special('error', '#VALUE!'), 'error-cell'],
   ])('refuses %p with %p', (cell, code) => {
     expect(parseStamp(cell, 1900)).toMatchObject({ kind: 'bad', code });
   });

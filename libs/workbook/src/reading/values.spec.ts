@@ -6,6 +6,8 @@ const habits = () => ({ sawDecimalComma: false });
 const text = (value: string): Cell => ({ kind: 'text', number: NaN, text: value, format: GENERAL });
 const number = (value: number, format = GENERAL): Cell => ({ kind: 'number', number: value, text: '', format });
 
+const special = (kind: Cell['kind'], text: string): Cell => ({ kind, number: NaN, text, format: GENERAL });
+
 describe('parseNumberText', () => {
   it.each([
     ['10125', 10125],
@@ -97,9 +99,9 @@ describe('parseValue', () => {
     [text('12 ± 3'), 'not-a-number'],
     [number(46027, { ...GENERAL, isDate: true }), 'value-is-a-date'],
     [number(Infinity), 'not-a-number'],
-    [{ kind: 'error', number: NaN, text: '#DIV/0!', format: GENERAL } as Cell, 'error-cell'],
-    [{ kind: 'formula-without-result', number: NaN, text: '', format: GENERAL } as Cell, 'formula-without-result'],
-    [{ kind: 'boolean', number: NaN, text: 'TRUE', format: GENERAL } as Cell, 'not-a-number'],
+    [special('error', '#DIV/0!'), 'error-cell'],
+    [special('formula-without-result', ''), 'formula-without-result'],
+    [special('boolean', 'TRUE'), 'not-a-number'],
   ])('refuses %p with %p', (cell, code) => {
     expect(parseValue(cell, 'µm', habits())).toMatchObject({ kind: 'bad', code });
   });
