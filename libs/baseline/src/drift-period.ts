@@ -29,7 +29,7 @@ export function pointDensity(t: Float64Array, weight: Float64Array, periodSecond
   let first = 0;
   let end = 0;
   for (let s = 0; s < positions; count++) {
-    while (t[first] - t[0] <= s && s > 0) first++;
+    while (t[first] - t[0] <= s) first++;
     while (end < n && t[end] - t[0] - periodSeconds <= s) end++;
     const leaves = t[first] - t[0];
     const enters = end < n ? t[end] - t[0] - periodSeconds : Infinity;

@@ -84,6 +84,10 @@ export function notScoredSentence(reason: string): string {
       return 'the slow movement is beyond what the plan allows; check the gauge';
     case 'no_values':
       return 'the lot has no reading with a value';
+    case 'censored':
+      return 'readings off the scale are missing from its mean';
+    case 'constant_data':
+      return 'the readings since the baseline’s start are all the same';
     case 'non_finite':
       return 'its readings are not all finite numbers';
     default:
