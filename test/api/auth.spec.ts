@@ -4,8 +4,7 @@ import { PASSWORD, signIn } from '../support/factories/people';
 import { insertPlant, type TestPlant } from '../support/factories/plant';
 
 const ENGINEER = 'engineer@marrowby.example';
-const cookieOf = (response: { headers: Record<string, unknown> }) =>
-  (response.headers['set-cookie'] as unknown as string[])[0];
+const cookieOf = (response: { headers: Record<string, unknown> }) => (response.headers['set-cookie'] as string[])[0];
 const tokenOf = (response: { headers: Record<string, unknown> }) => cookieOf(response).split(';')[0];
 
 describe('signing in', () => {

@@ -71,14 +71,16 @@ const HELD_CONDITIONS: Record<(typeof HELD_FILTERS)[number], string> = {
   never: `not ${EVER_HELD}`,
 };
 
-const SCORE = `(select max(abs(v.score)) from verdicts v where v.lot_id = l.id and v.is_current)`;
+/** Joined only when it is sorted by; one pass over the current verdicts instead of a look-up a lot. */
+const SCORES = `left join (select v.lot_id, max(abs(v.score)) as score from verdicts v where v.is_current group by v.lot_id) z
+  on z.lot_id = l.id`;
 const ORDERS: Record<(typeof LOT_SORTS)[number], string> = {
   startsAt: 'l.starts_at, l.id',
   '-startsAt': 'l.starts_at desc, l.id desc',
   number: 'l.number, l.run, l.id',
   '-number': 'l.number desc, l.run desc, l.id desc',
-  score: `${SCORE} nulls first, l.id`,
-  '-score': `${SCORE} desc nulls last, l.id desc`,
+  score: 'z.score nulls first, l.id',
+  '-score': 'z.score desc nulls last, l.id desc',
 };
 
 function where(filter: LotFilter): { sql: string; bindings: Record<string, unknown> } {
@@ -125,7 +127,7 @@ export function listLots(
     db,
     `with page as (
        select l.id, row_number() over (order by ${ORDERS[page.sort]}) as place
-       from lots l join products p on p.id = l.product_id where ${sql}
+       from lots l join products p on p.id = l.product_id ${page.sort.endsWith('score') ? SCORES : ''} where ${sql}
        order by place limit :limit offset :offset
      ), farthest as (
        select distinct on (v.lot_id) v.lot_id, c.id, c.name, v.score from verdicts v join channels c on c.id = v.channel_id

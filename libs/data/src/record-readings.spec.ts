@@ -92,9 +92,10 @@ describe('the columns of a record', () => {
     const channel = plant.channels[1];
     const lot = await insertLot(db, plant, { number: 'A', startsAt: new Date(START) });
     await insertReadings(db, plant, { channel, lot, intakeId: 1 }, [25, 99]);
-    const [first, second] = (await db('readings').where({ channel_id: channel.id }).orderBy('id').select('id')) as {
-      id: number;
-    }[];
+    const [first, second] = await db<{ id: number; channel_id: number }>('readings')
+      .where({ channel_id: channel.id })
+      .orderBy('id')
+      .select('id');
     await db('readings').where({ id: second.id }).update({ superseded_by: first.id });
     const columns = await listReadingColumns(db, { ...span(4, START, START + 4 * HOUR), channelId: channel.id }, 0);
     expect(columns).toEqual([{ column: 0, low: 0, high: 0 }]);

@@ -6,8 +6,11 @@ import express, { type NextFunction, type Request, type Response } from 'express
 
 /** Where the built pages lie: beside this program's bundle, or in the project's dist/ when it runs from its sources. */
 export function webFolder(): string | undefined {
+  const hasPages = (folder: string) => existsSync(join(folder, 'index.html'));
   const beside = join(__dirname, '..', 'web');
-  return [beside, join(projectRoot(), 'dist', 'apps', 'web')].find((folder) => existsSync(join(folder, 'index.html')));
+  if (hasPages(beside)) return beside;
+  const built = join(projectRoot(), 'dist', 'apps', 'web');
+  return hasPages(built) ? built : undefined;
 }
 
 /** Serves the pages: hashed assets for good, and for every other address that a browser opens the one page that routes by itself. */
@@ -22,7 +25,7 @@ export function serveWebPages(app: NestExpressApplication, folder: string): void
     const isPage = (request.method === 'GET' || request.method === 'HEAD') && request.accepts('html');
     if (isApi(request) || !isPage || request.path.startsWith('/assets/')) return next();
     response.setHeader('cache-control', 'no-cache');
-    response.sendFile(join(folder, 'index.html'), (error) => error && next(error));
+    response.sendFile('index.html', { root: folder }, (error) => error && next(error));
   });
 }
 
