@@ -9,7 +9,7 @@ export function History({ entries }: { entries: readonly HistoryEntry[] }) {
         <li key={`${entry.at} ${entry.sentence}`}>
           <span className="soft">
             <When at={entry.at} form="short" />
-            {entry.by !== null && `, ${entry.by}:`}
+            {entry.by !== null && !entry.sentence.includes(entry.by) && `, ${entry.by}:`}
           </span>{' '}
           {entry.sentence}
         </li>

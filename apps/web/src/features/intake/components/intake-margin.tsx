@@ -23,8 +23,14 @@ export function IntakeMargin({ intake }: { intake: IntakeView }) {
           Confirmed by {intake.confirmedBy} on <When at={intake.confirmedAt} form="short" />.
         </p>
       )}
-      <p>Times without a zone are read in the plant’s: {plant.timeZone}. Compare the first rows with the workbook.</p>
-      <p>Who confirms an intake decides none of the holds that come from it.</p>
+      {intake.state !== 'refused' && (
+        <>
+          <p>
+            Times without a zone are read in the plant’s: {plant.timeZone}. Compare the first rows with the workbook.
+          </p>
+          <p>Who confirms an intake decides none of the holds that come from it.</p>
+        </>
+      )}
       <p>
         {sizeWords(intake.byteCount)}, SHA-256 <code title={intake.sha256}>{intake.sha256.slice(0, 12)}…</code>
       </p>

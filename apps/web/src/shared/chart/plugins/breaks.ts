@@ -34,6 +34,7 @@ export function breakRules(breaks: readonly BreakRule[]): PanePlugin {
       ctx.font = `${11 * ratio}px ${theme.fontFamily}`;
       ctx.fillStyle = theme.colour('ink-soft');
       ctx.textBaseline = 'bottom';
+      ctx.textAlign = 'left';
       visible.forEach((rule, i) => {
         if (rule.words === null) return;
         const end = i + 1 < visible.length ? x(visible[i + 1].at) : left + width;
