@@ -24,5 +24,6 @@ dt { color: var(--ink-soft); }
 dd { margin: 0; overflow-wrap: anywhere; }
 iframe { display: block; width: 100%; height: 720px; border: 0; background: #ffffff; resize: vertical; }
 pre { margin: 0; padding: 12px; font: 13px/1.5 ui-monospace, monospace; white-space: pre-wrap; overflow-wrap: anywhere; }
+main > p:last-child { margin-top: 16px; }
 summary { padding: 8px 12px; cursor: pointer; }
 `;
