@@ -99,7 +99,14 @@ function ShiftLabel({ shift, before, after }: { shift: Shift; before?: Shift; af
   const dayWords = tellsMonth ? day : formatInstant(shift.startsAt, plant.timeZone, 'weekday');
   return (
     <div
-      className={`tape__label${isNewDay ? ' tape__label--day' : ''}${isAlone ? ' tape__label--alone' : ''}`}
+      className={[
+        'tape__label',
+        isNewDay && 'tape__label--day',
+        tellsMonth && isNewDay && 'tape__label--month',
+        isAlone && 'tape__label--alone',
+      ]
+        .filter(Boolean)
+        .join(' ')}
       aria-hidden="true"
     >
       {isNewDay && <strong>{dayWords} </strong>}

@@ -17,12 +17,12 @@ const diamond = (r: number) => `M0,${-r}L${r},0L0,${r}L${-r},0Z`;
 
 const DOT = circle(2.8);
 const DOT_OUTLINE = circle(5.2);
-const DIAMOND = diamond(4.2);
-const DIAMOND_OUTLINE = diamond(7.2);
+const DIAMOND = diamond(4);
+const DIAMOND_OUTLINE = diamond(6.6);
 const DASH = 'M-3.5,0H3.5';
 const DASH_OUTLINE = 'M-5.5,-2.5H5.5V2.5H-5.5Z';
 const TICK = 'M0,-10V-6.5';
-const BRACKETS = 'M-5.5,-8H-8.5V8H-5.5M5.5,-8H8.5V8H5.5';
+const BRACKETS = 'M-6.8,-8H-9.2V8H-6.8M6.8,-8H9.2V8H6.8';
 const RING_WITH_GAP = 'M3.4,-7.6A8.3,8.3 0 1 1 -3.4,-7.6';
 const SALTIRE = 'M-7,-7L7,7M7,-7L-7,7';
 const RING_WITH_ARROW = 'M8.3,0A8.3,8.3 0 1 1 2.8,-7.8M-0.6,-9.8L3.6,-7.5L0.6,-3.9';
