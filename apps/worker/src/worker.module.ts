@@ -8,6 +8,8 @@ import { MailProcessor } from './mail/mail.processor';
 import { MailSendingService } from './mail/mail-sending.service';
 import { OWED_JOB_HANDLERS, type OwedJobHandler } from './owed/owed-job-handler';
 import { OwedWorkService } from './owed/owed-work.service';
+import { RunningWork } from './owed/running-work';
+import { StopService } from './owed/stop.service';
 import { WorkProcessor } from './owed/work.processor';
 import { ProposePlanHandler } from './plans/propose-plan.handler';
 
@@ -27,7 +29,9 @@ export class WorkerModule {
         HeldLotsMailService,
         ...HANDLERS,
         { provide: OWED_JOB_HANDLERS, inject: HANDLERS, useFactory: (...handlers: OwedJobHandler[]) => handlers },
+        RunningWork,
         WorkProcessor,
+        StopService,
         ...(isMailing ? MAILING : []),
         OwedWorkService,
       ],

@@ -37,8 +37,11 @@ export interface MailJobPayload {
 }
 export const SEND_MAIL_JOB = 'send-mail';
 
-/** Attempts by the queue itself; beyond them the timer queues the owed row again. Job ids are `owed-<id>` and `mail-<id>`. */
-export const JOB_OPTIONS = { attempts: 3, backoff: { type: 'exponential', delay: 2_000 } } as const;
+/**
+ * Attempts, with 2, 6, 14, 30, … s between them: some eight minutes in all, over all queues and restarts; then a person must look.
+ * Job ids are `owed-<id>` and `mail-<id>`.
+ */
+export const JOB_OPTIONS = { attempts: 8, backoff: { type: 'exponential', delay: 2_000 } } as const;
 
 export const PROGRESS_STAGES = ['reading', 'storing', 'judging', 'recording', 'done', 'failed'] as const;
 

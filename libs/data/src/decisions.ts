@@ -35,8 +35,16 @@ export async function findHoldForDecision(db: Queryable, id: number): Promise<Ho
   return hold && { ...hold, confirmerIds: hold.confirmerIds.map(Number) };
 }
 
-/** The hold as it is now, locked until the transaction ends. */
+/**
+ * The hold as it is now, locked until the transaction ends. The lot's channels are locked before it, as recording verdicts does, so
+ * that a decision and a scoring never wait for each other in a circle.
+ */
 export async function lockHold(tx: Transaction, id: number): Promise<HoldForDecision | undefined> {
+  await tx.raw(
+    `select 1 from channels where id in (select lc.channel_id from holds h join lot_channels lc on lc.lot_id = h.lot_id where h.id = ?)
+     order by id for update`,
+    [id],
+  );
   await tx.raw('select 1 from holds where id = ? for update', [id]);
   return findHoldForDecision(tx, id);
 }

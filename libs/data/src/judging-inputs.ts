@@ -67,7 +67,7 @@ async function listLotRows(
          and not exists (select 1 from holds h join decision_parts p on p.hold_id = h.id where h.lot_id = lc.lot_id and p.disposition = 'scrap')
          and not exists (select 1 from exclusions e where e.channel_id = lc.channel_id and e.lot_id = lc.lot_id and not e.is_withdrawn
            and not exists (select 1 from exclusions c where c.corrects_id = e.id)) as pulls,
-       coalesce(not v.is_provisional and v.not_scored_reason is distinct from 'no_plan_in_force', false) as "isSettled"
+       coalesce(not v.is_provisional and v.not_scored_reason is distinct from 'no_plan_in_force' and v.reading_count = lc.count, false) as "isSettled"
      from lot_channels lc
      left join specifications s on s.id = lc.specification_id
      left join verdicts v on v.channel_id = lc.channel_id and v.lot_id = lc.lot_id and v.is_current
@@ -137,7 +137,7 @@ const DEFAULT_PERIOD_SECONDS = 3 * 86_400;
 
 /**
  * Everything a judging of the channel needs, read in one snapshot by the caller's transaction. Segments without a lot to judge are left
- * out. Settled lots are judged again only from `rejudgeFrom` (epoch s) on.
+ * out. Settled lots are judged again only from `rejudgeFrom` (epoch s) on, or when readings came late to them.
  */
 export async function getChannelInputs(
   db: Queryable,
@@ -168,7 +168,7 @@ export async function getChannelInputs(
     `select extract(epoch from min(coalesce(lc.mean_at, lc.first_at)))::float8 as "from" from lot_channels lc
      left join verdicts v on v.channel_id = lc.channel_id and v.lot_id = lc.lot_id and v.is_current
      where lc.channel_id = :channelId and lc.first_at is not null
-       and (v.id is null or v.is_provisional or v.not_scored_reason = 'no_plan_in_force' or lc.last_at >= to_timestamp(cast(:rejudgeFrom as float8)))`,
+       and (v.id is null or v.is_provisional or v.not_scored_reason = 'no_plan_in_force' or v.reading_count <> lc.count or lc.last_at >= to_timestamp(cast(:rejudgeFrom as float8)))`,
     { channelId, rejudgeFrom },
   );
   const inputs: ChannelInputs = { channelId, ...channel, plan: plan ?? null, segments: [] };

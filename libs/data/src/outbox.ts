@@ -15,14 +15,17 @@ export interface WaitingMail extends OutboxMail {
   attempts: number;
 }
 
-/** Writes mails in the transaction of the event that they tell of. The same event, recipient and kind is one mail. Returns the new ids. */
+/**
+ * Writes mails in the transaction of the event that they tell of. The same event, recipient and kind is one mail. Returns the new ids.
+ * The Message-ID is made here, once: two installations number their events alike, but none may pass for the other's.
+ */
 export async function insertMails(tx: Transaction, plantId: number, mails: OutboxMail[], at: Date): Promise<number[]> {
   if (mails.length === 0) return [];
   const inserted = await rows<{ id: number }>(
     tx,
     `insert into outbox (plant_id, event, kind, recipient, subject, html, plain_text, message_id, next_attempt_at, created_at)
      select :plantId, m.event, m.kind, m.recipient, m.subject, m.html, m.text,
-       '<' || encode(sha256(convert_to(m.event || ' ' || m.kind || ' ' || m.recipient || ' ' || :plantId, 'UTF8')), 'hex') || '@ebbline>', :at, :at
+       '<' || gen_random_uuid() || '@ebbline>', :at, :at
      from jsonb_to_recordset(:mails) as m(event text, kind text, recipient text, subject text, html text, text text)
      on conflict (event, recipient, kind) do nothing returning id`,
     { plantId, at, mails: JSON.stringify(mails) },
@@ -44,6 +47,19 @@ export async function leaseMail(
      returning id, event, kind, recipient, subject, html, plain_text as text, message_id as "messageId", attempts`,
     { id, now, leaseSeconds },
   );
+}
+
+/** Keeps a lease for as long as the attempt lasts. */
+export async function updateMailLease(db: Queryable, id: number, now: Date, leaseSeconds: number): Promise<void> {
+  await db('outbox')
+    .where({ id, state: 'waiting' })
+    .whereNotNull('leased_until')
+    .update({ leased_until: new Date(now.getTime() + leaseSeconds * 1000) });
+}
+
+/** Takes every lease back. Only for a program that is the outbox's only sender, before it sends: who held them has ended. */
+export async function updateMailLeasesEnded(db: Queryable): Promise<void> {
+  await db('outbox').where({ state: 'waiting' }).whereNotNull('leased_until').update({ leased_until: null });
 }
 
 export async function updateMailSent(db: Queryable, id: number, at: Date): Promise<void> {

@@ -1,11 +1,12 @@
 import type { JobName, OwedJobSubject } from '@app/contracts';
-import { type Queryable, rows, type Transaction } from './database';
+import { findRow, type Queryable, rows, type Transaction } from './database';
 
 export interface OwedJob {
   id: number;
   plantId: number;
   name: JobName;
   subject: OwedJobSubject[JobName];
+  /** With the one under way. */
   attempts: number;
 }
 
@@ -23,14 +24,23 @@ export async function insertOwedJob<N extends JobName>(
   return row.id;
 }
 
-/** The job if it is still owed. */
-export async function findOwedJob(db: Queryable, id: number): Promise<OwedJob | undefined> {
-  const [row] = await rows<OwedJob>(
+/**
+ * Takes the job for one attempt, counted at its begin, so that work that ends its process is counted too; undefined when it is no
+ * longer owed. Waits while another worker writes its outcome.
+ */
+export async function beginOwedJob(db: Queryable, id: number): Promise<OwedJob | undefined> {
+  return findRow<OwedJob>(
     db,
-    `select id, plant_id as "plantId", name, subject, attempts from owed_jobs where id = :id and state = 'owed'`,
+    `update owed_jobs set attempts = attempts + 1 where id = :id and state = 'owed'
+     returning id, plant_id as "plantId", name, subject, attempts`,
     { id },
   );
-  return row;
+}
+
+/** Takes the job for the transaction that writes its outcome; false when it was ended meanwhile: nothing may be written then. */
+export async function lockOwedJob(tx: Transaction, id: number): Promise<boolean> {
+  const job = await findRow(tx, `select id from owed_jobs where id = :id and state = 'owed' for update`, { id });
+  return job !== undefined;
 }
 
 /** Ids of all that is owed, oldest first. */
@@ -53,8 +63,14 @@ export async function updateOwedJobEnded(
     .update({ state, ended_at: at, last_error: error ?? null });
 }
 
-export async function updateOwedJobAttempt(db: Queryable, id: number, error: string | null): Promise<void> {
+/** Says why the attempt under way failed. */
+export async function updateOwedJobError(db: Queryable, id: number, error: string): Promise<void> {
+  await db('owed_jobs').where({ id, state: 'owed' }).update({ last_error: error });
+}
+
+/** An attempt that a stop of the program cut short does not count. */
+export async function updateOwedJobInterrupted(db: Queryable, id: number): Promise<void> {
   await db('owed_jobs')
-    .where({ id })
-    .update({ attempts: db.raw('attempts + 1'), last_error: error });
+    .where({ id, state: 'owed' })
+    .update({ attempts: db.raw('attempts - 1') });
 }

@@ -18,8 +18,8 @@ export interface StagedReading {
   position: string | null;
 }
 
-const SPECIAL = /[\\\t\n\r]/g;
-const ESCAPES: Record<string, string> = { '\\': '\\\\', '\t': '\\t', '\n': '\\n', '\r': '\\r' };
+const SPECIAL = /[\\\t\n\r\0]/g;
+const ESCAPES: Record<string, string> = { '\\': '\\\\', '\t': '\\t', '\n': '\\n', '\r': '\\r', '\0': '' };
 const text = (value: string) => value.replace(SPECIAL, (character) => ESCAPES[character]);
 const optional = (value: string | number | null) =>
   value === null ? '\\N' : typeof value === 'number' ? String(value) : text(value);
@@ -27,6 +27,7 @@ const optional = (value: string | number | null) =>
 /** Writes readings to `staged_readings` by COPY, batch by batch, on a connection of its own inside the caller's transaction. */
 export class StagedReadingWriter {
   private ordinal = 0;
+  private failure?: Error;
   private readonly stream;
 
   constructor(
@@ -40,6 +41,9 @@ export class StagedReadingWriter {
          channel_id, measured_at, value, censoring, serial, position) from stdin`,
       ),
     );
+    this.stream.on('error', (error: Error) => {
+      this.failure ??= error;
+    });
   }
 
   async write(batch: StagedReading[]): Promise<void> {
@@ -52,24 +56,38 @@ export class StagedReadingWriter {
         `${reading.channelId}\t${new Date(reading.at).toISOString()}\t${optional(reading.value)}\t${optional(reading.censoring)}\t` +
         `${optional(reading.serial)}\t${optional(reading.position)}\n`;
     }
-    if (lines !== '' && !this.stream.write(lines))
-      await new Promise<void>((resolve) => this.stream.once('drain', resolve));
+    if (this.failure) throw this.failure;
+    if (lines !== '' && !this.stream.write(lines)) await this.until('drain');
   }
 
-  /** Gives up what was written so far. */
+  /** Gives up what was written so far; after a failure there is nothing left to give up. */
   async abort(): Promise<void> {
+    if (this.failure || this.stream.destroyed) return;
     await new Promise<void>((resolve) => {
-      this.stream.once('error', () => resolve());
-      this.stream.once('close', () => resolve());
+      this.stream.once('close', resolve);
       this.stream.destroy(new Error('reading was given up'));
     });
   }
 
   async end(): Promise<void> {
-    await new Promise<void>((resolve, reject) => {
-      this.stream.once('finish', resolve);
-      this.stream.once('error', reject);
-      this.stream.end();
+    if (this.failure) throw this.failure;
+    const finished = this.until('finish');
+    this.stream.end();
+    await finished;
+  }
+
+  /** PostgreSQL may refuse a row at any time: then nothing drains or finishes any more. */
+  private until(event: 'drain' | 'finish'): Promise<void> {
+    return new Promise((resolve, reject) => {
+      const settle = (done: () => void) => {
+        this.stream.off(event, succeed);
+        this.stream.off('error', fail);
+        done();
+      };
+      const succeed = () => settle(resolve);
+      const fail = (error: Error) => settle(() => reject(error));
+      this.stream.once(event, succeed);
+      this.stream.once('error', fail);
     });
   }
 }

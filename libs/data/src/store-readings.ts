@@ -38,6 +38,9 @@ export async function storeReadings(
      from incoming where not is_there and drop_code is null`,
   );
   await tx.raw(
+    `select 1 from channels where id in (select channel_id from incoming where not is_there and drop_code is null) order by id for update`,
+  );
+  await tx.raw(
     `update channels set inputs_version = inputs_version + 1
      where id in (select distinct channel_id from incoming where not is_there and drop_code is null)`,
   );
@@ -72,16 +75,20 @@ async function gatherIncoming(tx: Transaction, ids: Ids): Promise<void> {
   await tx.raw('analyze incoming');
 }
 
+/** What the first row that gives a quantity says, with its unit; none where the workbook names none. Nothing is a lot of 0. */
+const FIRST_QUANTITY = `
+  (array_agg(quantity order by ordinal) filter (where quantity > 0))[1] as quantity,
+  (array_agg(coalesce(quantity_unit, '') order by ordinal) filter (where quantity > 0))[1] as quantity_unit`;
+
 /** Makes the lots that are new. The first row of a lot says its product and quantity. */
 async function makeLots(tx: Transaction, ids: Ids): Promise<void> {
   await tx.raw(
     `insert into lots (plant_id, line_id, number, product_id, quantity, quantity_unit, starts_at, ends_at)
-     select :plantId, :lineId, lot,
-       (array_agg(product_id order by ordinal) filter (where product_id is not null))[1],
-       (array_agg(quantity order by ordinal) filter (where quantity is not null))[1],
-       (array_agg(quantity_unit order by ordinal) filter (where quantity is not null))[1],
-       min(measured_at), max(measured_at)
-     from incoming group by lot having count(product_id) > 0
+     select :plantId, :lineId, i.lot, f.product_id, ${FIRST_QUANTITY}, min(i.measured_at), max(i.measured_at)
+     from incoming i join (
+       select lot, (array_agg(product_id order by ordinal) filter (where product_id is not null))[1] as product_id from incoming group by lot
+     ) f on f.lot = i.lot and (i.product_id is null or i.product_id = f.product_id)
+     where f.product_id is not null group by i.lot, f.product_id
      on conflict (line_id, number, run) do nothing`,
     ids,
   );
@@ -182,9 +189,7 @@ async function updateLotSpans(tx: Transaction, ids: Ids): Promise<void> {
     `update lots l set starts_at = least(l.starts_at, n.starts_at), ends_at = greatest(l.ends_at, n.ends_at),
        quantity = coalesce(l.quantity, n.quantity), quantity_unit = coalesce(l.quantity_unit, n.quantity_unit)
      from (
-       select lot_id, min(measured_at) as starts_at, max(measured_at) as ends_at,
-         (array_agg(quantity order by ordinal) filter (where quantity is not null))[1] as quantity,
-         (array_agg(quantity_unit order by ordinal) filter (where quantity is not null))[1] as quantity_unit
+       select lot_id, min(measured_at) as starts_at, max(measured_at) as ends_at, ${FIRST_QUANTITY}
        from incoming where not is_there and drop_code is null group by lot_id
      ) n where l.id = n.lot_id and l.plant_id = :plantId`,
     ids,

@@ -5,3 +5,4 @@ export * from './project-root';
 export * from './queue/queue.module';
 export * from './queue/dispatcher';
 export * from './thread-pools';
+export * from './within';

@@ -12,9 +12,11 @@ const IDLE_MS = 30_000;
 @Injectable()
 export class ThreadPools implements OnApplicationShutdown {
   private readonly pools = new Map<string, Piscina>();
+  private isClosed = false;
 
   /** Runs the default export of `<name>.ts` in a thread. */
   async run<T>(name: string, task: unknown, signal?: AbortSignal): Promise<T> {
+    if (this.isClosed) throw new Error('the program is stopping');
     return (await this.pool(name).run(task, { signal })) as T;
   }
 
@@ -33,7 +35,13 @@ export class ThreadPools implements OnApplicationShutdown {
     return pool;
   }
 
-  async onApplicationShutdown(): Promise<void> {
+  /** Ends the threads; what runs in them is rejected, and nothing runs in them any more. */
+  async close(): Promise<void> {
+    this.isClosed = true;
     await Promise.all([...this.pools.values()].map((pool) => pool.destroy()));
+  }
+
+  async onApplicationShutdown(): Promise<void> {
+    await this.close();
   }
 }

@@ -2,15 +2,17 @@ import { Inject, Injectable } from '@nestjs/common';
 import { DomainError, JOBS } from '@app/contracts';
 import {
   type Database,
-  findIntake,
   insertAuditEntry,
+  lockIntake,
+  lockOwedJob,
   notifyProgress,
   type OwedJob,
+  type Transaction,
   updateIntakeRefused,
   updateOwedJobEnded,
 } from '@app/data';
 import { CLOCK, type Clock, CONFIG, type Config, DATABASE, ThreadPools } from '@app/platform';
-import type { HandlerOutcome, OwedJobHandler } from '../owed/owed-job-handler';
+import { type HandlerOutcome, NoLongerOwedError, type OwedJobHandler } from '../owed/owed-job-handler';
 import type { ReadIntakeOutcome, ReadIntakeTask } from './read-intake.thread';
 
 type Job = OwedJob & { subject: { intakeId: number } };
@@ -21,6 +23,7 @@ const MAX_READING_MS = 5 * 60_000;
 @Injectable()
 export class ReadIntakeHandler implements OwedJobHandler<'read-intake'> {
   readonly jobName = JOBS.readIntake;
+  private former: Promise<unknown> = Promise.resolve();
 
   constructor(
     @Inject(DATABASE) private readonly database: Database,
@@ -36,20 +39,49 @@ export class ReadIntakeHandler implements OwedJobHandler<'read-intake'> {
       owedJobId: job.id,
       now: this.clock.now().getTime(),
     };
-    const outcome = await this.read(task);
-    if (outcome.status === 'refused') {
-      await this.refuse(job, outcome.sentence);
-      return { done: true };
-    }
-    if (outcome.status === 'skipped') {
-      await updateOwedJobEnded(this.database, job.id, 'done', this.clock.now());
-      return { done: false, reason: 'the intake was read already' };
-    }
-    return { done: true };
+    const outcome = await this.inTurn(() => this.read(task));
+    if (outcome.status === 'read') return { done: true };
+    const at = this.clock.now();
+    await this.database.transaction(async (tx) => {
+      if (!(await lockOwedJob(tx, job.id))) throw new NoLongerOwedError(job.id);
+      if (outcome.status === 'refused') await this.fail(tx, job, outcome.sentence, at);
+      await updateOwedJobEnded(tx, job.id, 'done', at);
+    });
+    return outcome.status === 'refused' ? { done: true } : { done: false, reason: 'the intake was read already' };
   }
 
-  async fail(job: Job, sentence: string): Promise<void> {
-    await this.refuse(job, sentence);
+  /** Refuses the workbook, which is kept. */
+  async fail(tx: Transaction, job: Job, sentence: string, at: Date): Promise<void> {
+    const { intakeId } = job.subject;
+    const intake = await lockIntake(tx, intakeId);
+    if (intake?.state !== 'received') return;
+    await updateIntakeRefused(tx, intakeId, sentence);
+    await insertAuditEntry(tx, {
+      plantId: job.plantId,
+      at,
+      actor: null,
+      action: 'refuse',
+      thingKind: 'intake',
+      thingId: intakeId,
+      sentence: `Ebbline refused ${intake.fileName}: ${sentence}`,
+      before: { state: intake.state },
+      after: { state: 'refused' },
+    });
+    await notifyProgress(tx, {
+      intakeId,
+      stage: 'failed',
+      rowsRead: 0,
+      channelsScored: 0,
+      channelsTotal: 0,
+      sentence,
+    });
+  }
+
+  /** One workbook at a time in this process; the time that one may take begins with its turn. */
+  private inTurn<T>(read: () => Promise<T>): Promise<T> {
+    const turn = this.former.then(read);
+    this.former = turn.catch(() => undefined);
+    return turn;
   }
 
   private async read(task: ReadIntakeTask): Promise<ReadIntakeOutcome> {
@@ -71,34 +103,5 @@ export class ReadIntakeHandler implements OwedJobHandler<'read-intake'> {
         );
       throw error;
     }
-  }
-
-  private async refuse(job: Job, sentence: string): Promise<void> {
-    const at = this.clock.now();
-    const { intakeId } = job.subject;
-    await this.database.transaction(async (tx) => {
-      const intake = await findIntake(tx, intakeId);
-      await updateIntakeRefused(tx, intakeId, sentence);
-      await insertAuditEntry(tx, {
-        plantId: job.plantId,
-        at,
-        actor: null,
-        action: 'refuse',
-        thingKind: 'intake',
-        thingId: intakeId,
-        sentence: `Ebbline refused ${intake?.fileName ?? 'the workbook'}: ${sentence}`,
-        before: { state: intake?.state },
-        after: { state: 'refused' },
-      });
-      await updateOwedJobEnded(tx, job.id, 'done', at);
-      await notifyProgress(tx, {
-        intakeId,
-        stage: 'failed',
-        rowsRead: 0,
-        channelsScored: 0,
-        channelsTotal: 0,
-        sentence,
-      });
-    });
   }
 }

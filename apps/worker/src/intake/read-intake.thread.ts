@@ -5,6 +5,7 @@ import {
   getLineContext,
   insertAuditEntry,
   insertIntakeProblems,
+  lockOwedJob,
   notifyProgress,
   stageIntake,
   updateIntakeRead,
@@ -46,11 +47,10 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
       }).catch(() => undefined);
     };
     const at = new Date(task.now);
-    await stageIntake(
-      db,
-      intake,
-      (write) => readWorkbook(bytes, context, write, { onProgress: tell }),
-      async (tx, report) => {
+    const isRead = await stageIntake(db, intake, {
+      take: (tx) => lockOwedJob(tx, task.owedJobId),
+      read: (write) => readWorkbook(bytes, context, write, { onProgress: tell }),
+      record: async (tx, report) => {
         const { problems, ...rest } = report;
         await insertIntakeProblems(tx, intake.plantId, intake.id, problems);
         await updateIntakeRead(tx, intake.id, {
@@ -80,8 +80,8 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
           sentence: `Read ${report.rowsRead} rows. Look at what was recognised, then confirm.`,
         });
       },
-    );
-    return { status: 'read' };
+    });
+    return { status: isRead ? 'read' : 'skipped' };
   } catch (error) {
     if (error instanceof WorkbookRefusedError) return { status: 'refused', sentence: error.detail };
     throw error;

@@ -6,6 +6,7 @@ import {
   insertAuditEntry,
   type IntakeRow,
   lockIntake,
+  lockOwedJob,
   notifyProgress,
   type OwedJob,
   type Recorded,
@@ -17,7 +18,7 @@ import {
   updateOwedJobEnded,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE, Dispatcher } from '@app/platform';
-import type { HandlerOutcome, OwedJobHandler } from '../owed/owed-job-handler';
+import { type HandlerOutcome, NoLongerOwedError, type OwedJobHandler } from '../owed/owed-job-handler';
 import { auditHolds } from './audit-holds';
 import { HeldLotsMailService } from './held-lots-mail.service';
 import { JudgingService } from './judging.service';
@@ -59,23 +60,23 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
     return { done: true };
   }
 
-  async fail(job: Job, sentence: string): Promise<void> {
-    const at = this.clock.now();
-    await this.database.transaction(async (tx) => {
-      const intake = await lockIntake(tx, job.subject.intakeId);
-      await updateIntakeRefused(tx, job.subject.intakeId, sentence);
-      await insertAuditEntry(tx, {
-        plantId: job.plantId,
-        at,
-        actor: null,
-        action: 'refuse',
-        thingKind: 'intake',
-        thingId: job.subject.intakeId,
-        sentence: `Ebbline could not score ${intake?.fileName ?? 'the intake'}: ${sentence}`,
-        before: { state: intake?.state },
-        after: { state: 'refused' },
-      });
+  /** Refuses the intake; readings that are stored already stay and are judged with the next intake. */
+  async fail(tx: Transaction, job: Job, sentence: string, at: Date): Promise<void> {
+    const intake = await lockIntake(tx, job.subject.intakeId);
+    if (intake?.state !== 'queued' && intake?.state !== 'working') return;
+    await updateIntakeRefused(tx, intake.id, sentence);
+    await insertAuditEntry(tx, {
+      plantId: job.plantId,
+      at,
+      actor: null,
+      action: 'refuse',
+      thingKind: 'intake',
+      thingId: intake.id,
+      sentence: `Ebbline could not score ${intake.fileName}: ${sentence}`,
+      before: { state: intake.state },
+      after: { state: 'refused' },
     });
+    await notifyProgress(tx, this.progress(intake, 'failed', 0, 0, sentence));
   }
 
   /** Stores the readings unless that is done; undefined when the intake does not wait for it. */
@@ -103,9 +104,8 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
   }
 
   private async finish(tx: Transaction, job: Job, intake: IntakeRow, recorded: Recorded): Promise<number[]> {
+    if (!(await lockOwedJob(tx, job.id))) throw new NoLongerOwedError(job.id);
     const at = this.clock.now();
-    const current = await lockIntake(tx, intake.id);
-    if (current?.state !== 'working') throw new Error(`intake ${intake.id} left the state working meanwhile`);
     await updateIntakeScored(tx, intake.id, at);
     await insertAuditEntry(tx, {
       plantId: intake.plantId,

@@ -1,9 +1,18 @@
 import { Inject, Injectable, Logger, type OnApplicationShutdown } from '@nestjs/common';
-import { type Database, leaseMail, updateMailFailed, updateMailSent } from '@app/data';
+import {
+  type Database,
+  leaseMail,
+  updateMailFailed,
+  updateMailLease,
+  updateMailSent,
+  type WaitingMail,
+} from '@app/data';
 import { createMailTransport, MailSendError, type MailTransport } from '@app/mail';
 import { CLOCK, type Clock, CONFIG, type Config, DATABASE } from '@app/platform';
 
-const LEASE_SECONDS = 60;
+/** Kept up while an attempt lasts: a mail whose sender was ended is sent again by another one this much later. */
+const LEASE_SECONDS = 20;
+const KEEP_UP_MS = 6_000;
 const FIRST_DELAY_SECONDS = 5;
 const LONGEST_DELAY_SECONDS = 3600;
 /** About a day of trying. */
@@ -29,18 +38,26 @@ export class MailSendingService implements OnApplicationShutdown {
     const mail = await leaseMail(this.database, outboxId, this.clock.now(), LEASE_SECONDS);
     if (!mail) return { sent: false, reason: 'sent already, not yet due, or with another worker' };
     try {
-      await this.transport.send({
-        messageId: mail.messageId,
-        to: mail.recipient,
-        subject: mail.subject,
-        html: mail.html,
-        text: mail.text,
-      });
+      await this.transmit(mail);
     } catch (error) {
       return this.putOff(mail.id, mail.attempts, error);
     }
     await updateMailSent(this.database, mail.id, this.clock.now());
     return { sent: true };
+  }
+
+  private async transmit(mail: WaitingMail): Promise<void> {
+    const keepUp = setInterval(() => {
+      updateMailLease(this.database, mail.id, this.clock.now(), LEASE_SECONDS).catch((error: unknown) =>
+        this.logger.warn(`Could not keep up the lease of mail ${mail.id}: ${String(error)}`),
+      );
+    }, KEEP_UP_MS);
+    try {
+      const { messageId, recipient, subject, html, text } = mail;
+      await this.transport.send({ messageId, to: recipient, subject, html, text });
+    } finally {
+      clearInterval(keepUp);
+    }
   }
 
   private async putOff(id: number, attempts: number, error: unknown): Promise<SendOutcome> {

@@ -9,6 +9,10 @@ import {
   SEND_MAIL_JOB,
   WORK_QUEUE,
 } from '@app/contracts';
+import { within } from '../within';
+
+/** A request waits no longer than this for a queue that is away. */
+const PATIENCE_MS = 3_000;
 
 /**
  * Puts what is owed on the queues, after its transaction has committed. A failure here loses nothing: the timer finds the row.
@@ -22,28 +26,36 @@ export class Dispatcher {
     @InjectQueue(MAIL_QUEUE) private readonly mail: Queue<MailJobPayload>,
   ) {}
 
+  /** For whoever must go on soon: a queue that is away or fails is only said. */
   async owedJobs(ids: number[]): Promise<void> {
-    await this.add(ids, (owedJobId) =>
-      this.work.add(
-        { owedJobId },
-        { ...JOB_OPTIONS, jobId: `owed-${owedJobId}`, removeOnComplete: true, removeOnFail: true },
-      ),
-    );
+    await this.soon(this.queueOwedJobs(ids));
   }
 
   async mails(ids: number[]): Promise<void> {
-    await this.add(ids, (outboxId) =>
-      this.mail.add(
+    await this.soon(this.queueMails(ids));
+  }
+
+  /** For the timer: waits as long as it takes, throws what goes wrong. */
+  async queueOwedJobs(ids: number[]): Promise<void> {
+    for (const owedJobId of ids)
+      await this.work.add(
+        { owedJobId },
+        { ...JOB_OPTIONS, jobId: `owed-${owedJobId}`, removeOnComplete: true, removeOnFail: true },
+      );
+  }
+
+  async queueMails(ids: number[]): Promise<void> {
+    for (const outboxId of ids)
+      await this.mail.add(
         SEND_MAIL_JOB,
         { outboxId },
         { jobId: `mail-${outboxId}`, removeOnComplete: true, removeOnFail: true },
-      ),
-    );
+      );
   }
 
-  private async add(ids: number[], add: (id: number) => Promise<unknown>): Promise<void> {
+  private async soon(adding: Promise<void>): Promise<void> {
     try {
-      for (const id of ids) await add(id);
+      if (!(await within(PATIENCE_MS, adding))) this.logger.warn('The queue does not answer; the timer will queue it.');
     } catch (error) {
       this.logger.warn(`Could not queue what is owed now, the timer will: ${String(error)}`);
     }
