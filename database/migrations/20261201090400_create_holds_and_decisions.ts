@@ -114,6 +114,7 @@ export async function up(knex: Knex): Promise<void> {
         or ((concession_quantity is not null or concession_expires_at is not null) and allowed_by is not null)),
       constraint decision_parts_regrade_check check ((disposition = 'regrade') = (regrade_product_id is not null))
     );
+    create index decision_parts_hold_index on decision_parts (hold_id);
     create trigger decision_parts_append_only before update or delete or truncate on decision_parts for each statement execute function refuse_change();
     create function check_decision_parts() returns trigger language plpgsql as $$
     declare

@@ -77,6 +77,8 @@ export interface RecordView {
   /** The fitted slow movement with its 95 % band, as deviation; a null value parts segments. */
   baseline: { at: number[]; value: (number | null)[]; low: (number | null)[]; high: (number | null)[] };
   lots: RecordLot[];
+  /** Lots in the span when there are more than are answered: those that stand out stay, the rest are thinned evenly. */
+  lotCount?: number;
   /** Limit on the scores, of the plan in force. */
   limit: number | null;
   breaks: BreakView[];
