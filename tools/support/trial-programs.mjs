@@ -17,6 +17,7 @@ export function trialEnvironment({ env, settings, secrets, ports, cluster }) {
     EBBLINE_SECRET_ORIGIN: env.EBBLINE_JWT_SECRET ? 'environment' : 'generated',
     SMTP_URL: `smtp://127.0.0.1:${ports.smtp}`,
     EBBLINE_MAIL_CATCHER: '1',
+    EBBLINE_MAIL_CATCHER_URL: `http://127.0.0.1:${ports.mailPage}`,
     EBBLINE_PUBLIC_URL: `http://127.0.0.1:${settings.port}`,
     EBBLINE_DATA_DIR: settings.dataDir,
     EBBLINE_SEED: settings.seed,

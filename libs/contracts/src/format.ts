@@ -1,6 +1,6 @@
-/** Numbers as Ebbline shows them: the characteristic's own resolution, U+2212 for minus, a thin space before the unit. */
+/** Numbers as Ebbline shows them: the characteristic's own resolution, U+2212 for minus, a narrow no-break space before the unit. */
 const MINUS = '\u2212';
-const THIN_SPACE = '\u2009';
+const NARROW_SPACE = '\u202f';
 
 /** Decimals that a resolution needs: 0.01 → 2, 0.5 → 1, 1 → 0, 10 → 0. */
 export function decimalsOf(resolution: number): number {
@@ -20,7 +20,7 @@ export function formatNumber(value: number, decimals: number): string {
 
 /** A characteristic such as pH has no unit. */
 function withUnit(number: string, unit: string): string {
-  return unit === '' ? number : number + THIN_SPACE + unit;
+  return unit === '' ? number : number + NARROW_SPACE + unit;
 }
 
 export function formatValue(value: number, characteristic: { unit: string; resolution: number }): string {

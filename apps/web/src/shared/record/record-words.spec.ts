@@ -11,16 +11,16 @@ describe('signed', () => {
 
 describe('scoreText', () => {
   it('shows sigmas with their sign, and a dash for none', () => {
-    expect(scoreText(-4.31)).toBe('\u22124.3\u2009σ');
-    expect(scoreText(2)).toBe('+2.0\u2009σ');
+    expect(scoreText(-4.31)).toBe('\u22124.3\u202fσ');
+    expect(scoreText(2)).toBe('+2.0\u202fσ');
     expect(scoreText(null)).toBe('–');
   });
 });
 
 describe('limitsText', () => {
   it('shows both, one or none', () => {
-    expect(limitsText(1, 2, 1)).toBe('1.0\u2009…\u20092.0');
-    expect(limitsText(null, 2, 0)).toBe('–\u2009…\u20092');
+    expect(limitsText(1, 2, 1)).toBe('1.0\u202f…\u202f2.0');
+    expect(limitsText(null, 2, 0)).toBe('–\u202f…\u202f2');
     expect(limitsText(null, null, 0)).toBeNull();
   });
 });
@@ -55,10 +55,10 @@ describe('lotFigures', () => {
 
   it('names what is known and the verdict in words', () => {
     expect(lotFigures(lot, characteristic)).toEqual([
-      'mean 41.20\u2009g/m²',
-      'baseline 42.05\u2009g/m²',
-      'control limits 41.40\u2009…\u200942.70',
-      'score \u22124.3\u2009σ',
+      'mean 41.20\u202fg/m²',
+      'baseline 42.05\u202fg/m²',
+      'control limits 41.40\u202f…\u202f42.70',
+      'score \u22124.3\u202fσ',
       'outside control limits, provisional',
     ]);
   });

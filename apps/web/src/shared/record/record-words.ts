@@ -23,13 +23,13 @@ export function signed(value: number, resolution: number): string {
 }
 
 export const scoreText = (score: number | null) =>
-  score === null ? '–' : `${score > 0 ? '+' : ''}${formatNumber(score, 1)}\u2009σ`;
+  score === null ? '–' : `${score > 0 ? '+' : ''}${formatNumber(score, 1)}\u202fσ`;
 
 /** Two limits as "41.90 … 42.50 g/m²", with a dash for one that is not there; null when there is neither. */
 export function limitsText(low: number | null, high: number | null, decimals: number): string | null {
   if (low === null && high === null) return null;
   const text = (value: number | null) => (value === null ? '–' : formatNumber(value, decimals));
-  return `${text(low)}\u2009…\u2009${text(high)}`;
+  return `${text(low)}\u202f…\u202f${text(high)}`;
 }
 
 /** One lot's figures in a line: what the pointer reads off the panes. */
