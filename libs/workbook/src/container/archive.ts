@@ -87,9 +87,13 @@ export class Archive {
     if (sum !== entry.crc32 || size !== entry.uncompressedSize) throw corrupt(new Error(`part ${name} is damaged`));
   }
 
-  private async *pieces(entry: Entry): AsyncGenerator<Buffer> {
+  private async packed(entry: Entry): Promise<Buffer> {
     const { fileDataStart } = await this.zip.readLocalFileHeaderPromise(entry, { minimal: true });
-    const packed = this.bytes.subarray(fileDataStart, fileDataStart + entry.compressedSize);
+    return this.bytes.subarray(fileDataStart, fileDataStart + entry.compressedSize);
+  }
+
+  private async *pieces(entry: Entry): AsyncGenerator<Buffer> {
+    const packed = await this.packed(entry);
     if (entry.compressionMethod === 0) {
       for (let at = 0; at < packed.length; at += CHUNK) yield packed.subarray(at, at + CHUNK);
     } else if (entry.compressionMethod === 8) {
@@ -99,6 +103,16 @@ export class Archive {
     } else {
       throw new Error(`compression method ${entry.compressionMethod}`);
     }
+  }
+
+  /** All parts as they lie in the file, still compressed. */
+  async packedParts(): Promise<{ name: string; method: number; packed: Buffer; size: number; sum: number }[]> {
+    const parts = [];
+    for (const entry of this.entries.values()) {
+      const { fileName: name, compressionMethod: method, uncompressedSize: size, crc32: sum } = entry;
+      parts.push({ name, method, packed: await this.packed(entry), size, sum });
+    }
+    return parts;
   }
 
   /** Turns away at once what admits its size; what lies about it is caught while inflating. */

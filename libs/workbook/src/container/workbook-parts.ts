@@ -16,6 +16,8 @@ export interface SheetPart {
 /** A workbook opened for reading: everything but the sheets' cells. */
 export interface OpenWorkbook {
   archive: Archive;
+  /** Name of the part that lists the sheets, as a rule xl/workbook.xml. */
+  mainPart: string;
   sheets: SheetPart[];
   dateSystem: 1900 | 1904;
   formats: CellFormat[];
@@ -50,6 +52,7 @@ export async function openWorkbook(bytes: Buffer, limits: ReadLimits): Promise<O
   const shared = partOf('sharedStrings');
   return {
     archive,
+    mainPart: main,
     ...book,
     formats: styles ? await readFormats(archive, styles) : [],
     texts: shared ? await readSharedTexts(archive, shared, limits) : [],
