@@ -39,8 +39,13 @@ export function signalPhrase(facts: SignalFacts): string {
       return `has ${low + high} readings off the scale in ${name} (${low} at the low end, ${high} at the high end)`;
     }
     case 'baseline_moved':
-      return `lies where the slow movement of ${name} has gone ${formatValue(Number(facts.facts.movement ?? 0), size)} since the baseline's start, beyond the plan's allowance`;
+      return `lies where the slow movement of ${name} has gone ${formatValue(Number(facts.facts.movement ?? 0), size)} since the baseline’s start${noticeClause(facts.facts.notice, size)}`;
   }
+}
+
+/** The plan's notice: how far the movement may go before it is pointed out. */
+function noticeClause(notice: number | string | null | undefined, size: { unit: string; resolution: number }): string {
+  return typeof notice === 'number' ? `; the plan points out more than ${formatValue(notice, size)}` : '';
 }
 
 /** One decimal, or as many more as it takes to see that the score is not the limit. */
