@@ -123,7 +123,7 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
       tx,
       recorded.held,
       `intake-${intake.id}`,
-      `intake of ${intake.fileName}`,
+      `the intake of ${intake.fileName}`,
       at,
     );
     await updateOwedJobEnded(tx, job.id, 'done', at);

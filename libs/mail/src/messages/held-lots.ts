@@ -33,7 +33,7 @@ export interface HeldLotFacts {
 export interface HeldLotsFacts {
   plantName: string;
   lineName: string;
-  /** What was scored: "intake of coater-2.xlsx" or "new look after a break". */
+  /** What was scored: "the intake of coater-2.xlsx" or "a new look after a break". */
   occasion: string;
   lots: HeldLotFacts[];
 }
@@ -46,7 +46,8 @@ export function heldLotsMail(facts: HeldLotsFacts): Mail {
     lots.length === 1
       ? `Lot ${numbers[0]} held, ${facts.lineName}`
       : `${lots.length} lots held, ${facts.lineName}: ${numbers.slice(0, 5).join(', ')}${numbers.length > 5 ? ' …' : ''}`;
-  const opening = `${lots.length === 1 ? 'One lot' : `${lots.length} lots`} of ${facts.lineName} (${facts.plantName}) may not move on until decided: ${facts.occasion}.`;
+  const isOne = lots.length === 1;
+  const opening = `${isOne ? 'One lot' : `${lots.length} lots`} of ${facts.lineName} (${facts.plantName}) may not move on until ${isOne ? 'it is' : 'they are'} decided. Held by ${facts.occasion}.`;
   const html = page(
     subject,
     paragraph(escapeHtml(opening)) + lots.map((lot) => sheet(lotHtml(lot), PAPER.held)).join(''),
@@ -65,17 +66,23 @@ const reasonOf = (lot: HeldLotFacts) =>
 const headOf = (lot: HeldLotFacts) =>
   `Product ${lot.product}, ${lot.span}.${lot.isLate ? ' Held late: it was within its control limits before later readings arrived.' : ''}`;
 
+/** One cause a channel: all signals of a channel share its figures. */
+const channelsOf = (lot: HeldLotFacts) =>
+  [...new Map([...lot.causes].reverse().map((cause) => [cause.channelName, cause])).values()].reverse();
+
 function lotHtml(lot: HeldLotFacts): string {
   return (
     paragraph(`<strong>${escapeHtml(reasonOf(lot))}</strong>`) +
     paragraph(escapeHtml(headOf(lot)), `color:${PAPER.inkSoft}`) +
-    lot.causes.map((cause) => figures(causeFigures(cause))).join('') +
+    channelsOf(lot)
+      .map((cause) => figures(causeFigures(cause)))
+      .join('') +
     paragraph(link(lot.url, `Open the hold of lot ${lot.lotNumber}`))
   );
 }
 
 function lotText(lot: HeldLotFacts): string {
-  const causes = lot.causes.map((cause) =>
+  const causes = channelsOf(lot).map((cause) =>
     causeFigures(cause)
       .map(([label, value]) => `  ${label}: ${value}`)
       .join('\n'),
