@@ -1,3 +1,4 @@
+import { setImmediate } from 'node:timers/promises';
 import type { Client } from 'pg';
 import { from as copyFrom } from 'pg-copy-streams';
 
@@ -58,6 +59,7 @@ export class StagedReadingWriter {
     }
     if (this.failure) throw this.failure;
     if (lines !== '' && !this.stream.write(lines)) await this.until('drain');
+    else await setImmediate(); // so that a refusal is heard although the socket always takes more
   }
 
   /** Gives up what was written so far; after a failure there is nothing left to give up. */
