@@ -34,6 +34,8 @@ export async function up(knex: Knex): Promise<void> {
       confirmed_at timestamptz,
       readings_stored_at timestamptz,
       channel_ids bigint[],
+      lot_ids bigint[],
+      lots_scored integer,
       scored_at timestamptz,
       constraint intakes_line_fkey foreign key (plant_id, line_id) references lines (plant_id, id),
       constraint intakes_layout_fkey foreign key (plant_id, layout_id) references layouts (plant_id, id),
@@ -49,6 +51,8 @@ export async function up(knex: Knex): Promise<void> {
     comment on column intakes.report is 'What was recognised: columns, lots, first rows, as read.';
     comment on column intakes.rows_read is 'Data rows of the workbook = used + already there + not used, once its readings are stored.';
 
+    comment on column intakes.lot_ids is 'Lots to which it brought new readings; set with readings_stored_at.';
+    comment on column intakes.lots_scored is 'How many of these had a score on any channel when it was scored.';
     comment on column intakes.channel_ids is 'Channels on which it brought new readings; set with readings_stored_at.';
 
     create table intake_bytes (

@@ -48,7 +48,7 @@ describe('intakes', () => {
   const find = async (id: number) => (await findIntake(place.db, id)) as IntakeRow;
   const read = { report: { layout: 'long' }, rowsRead: 10, rowsNotUsed: 2, at: AT };
   const counts = {
-    channelIds: [3, 1],
+    channelIds: [3, 1], lotIds: [],
     rowsUsed: 7,
     rowsAlreadyThere: 1,
     rowsNotUsed: 2,

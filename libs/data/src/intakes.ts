@@ -154,6 +154,7 @@ export async function updateIntakeStored(
   id: number,
   stored: {
     channelIds: number[];
+    lotIds: number[];
     rowsUsed: number;
     rowsAlreadyThere: number;
     rowsNotUsed: number;
@@ -179,7 +180,13 @@ export async function updateIntakeState(db: Queryable, id: number, from: IntakeS
 }
 
 export async function updateIntakeScored(tx: Transaction, id: number, at: Date): Promise<void> {
-  await tx('intakes').where({ id }).update({ state: 'scored', scored_at: at });
+  await tx.raw(
+    `update intakes set state = 'scored', scored_at = :at, lots_scored = (
+       select count(distinct v.lot_id) from verdicts v
+       where v.lot_id = any(intakes.lot_ids) and v.is_current and v.control_state <> 'not_scored')
+     where id = :id`,
+    { id, at },
+  );
 }
 
 export async function insertIntakeProblems(
@@ -210,18 +217,16 @@ export async function getIntakeOutcome(
   db: Queryable,
   intakeId: number,
 ): Promise<{ lotsScored: number; held: { holdId: number; lotNumber: string; sentences: string[] }[] }> {
-  const scored = await findRow<{ lots: number }>(
+  const scored = await findRow<{ lots: number | null }>(
     db,
-    `select count(distinct v.lot_id) as lots from fits f join verdicts v on v.fit_id = f.id
-     where f.intake_id = :intakeId and v.lot_id in (select lot_id from readings where intake_id = :intakeId)
-       and v.control_state <> 'not_scored'`,
+    'select lots_scored as lots from intakes where id = :intakeId',
     { intakeId },
   );
   const held = await rows<{ holdId: number; lotNumber: string; sentences: string[] }>(
     db,
     `select h.id as "holdId", l.number as "lotNumber", array_agg(c.sentence order by c.id) as sentences
      from hold_causes c join holds h on h.id = c.hold_id join lots l on l.id = h.lot_id
-     where c.intake_id = :intakeId group by h.id, l.number order by h.id`,
+     where c.intake_id = :intakeId group by h.id, l.number, l.starts_at order by l.starts_at, h.id`,
     { intakeId },
   );
   return { lotsScored: scored?.lots ?? 0, held };
