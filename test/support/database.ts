@@ -45,28 +45,38 @@ function templateName(): string {
   return `ebbline_template_${hash.digest('hex').slice(0, 16)}`;
 }
 
-let template: Promise<string> | undefined;
-
-/** Makes the migrated template once a cluster: under another name first, so that a half-migrated one is never used. */
-async function makeTemplate(): Promise<string> {
-  const name = templateName();
+/**
+ * Makes a database that others are copied from, once a cluster: under another name first, so that a half-made one is never used.
+ * @param fill gets its address; with `source` it begins as a copy of that one. Nobody may be connected to it once this returns.
+ */
+export async function makeTemplate(
+  name: string,
+  fill: (url: string) => Promise<unknown>,
+  source = 'template1',
+): Promise<string> {
   await asAdmin(async (client) => {
-    await client.query('select pg_advisory_lock($1)', [TEMPLATE_LOCK]);
+    await client.query('select pg_advisory_lock($1, hashtext($2))', [TEMPLATE_LOCK, name]);
     const { rowCount } = await client.query('select 1 from pg_database where datname = $1', [name]);
     if (rowCount !== 0) return;
     const unfinished = `${name}_unfinished`;
     await client.query(`drop database if exists ${unfinished} with (force)`);
-    await client.query(`create database ${unfinished}`);
-    await migrateToLatest(urlOf(unfinished));
+    await client.query(`create database ${unfinished} template ${source}`);
+    await fill(urlOf(unfinished));
     await client.query(`alter database ${unfinished} rename to ${name}`);
   });
   return name;
 }
 
-/** An empty migrated database of its own, and the way to drop it. */
-export async function createTestDatabase(): Promise<TestDatabase> {
-  template ??= makeTemplate();
-  const source = await template;
+let migrated: Promise<string> | undefined;
+
+/** Name of the template that is migrated and otherwise empty. */
+export function migratedTemplate(): Promise<string> {
+  return (migrated ??= makeTemplate(templateName(), migrateToLatest));
+}
+
+/** A database of its own, migrated and empty or a copy of another template, and the way to drop it. */
+export async function createTestDatabase(template?: string): Promise<TestDatabase> {
+  const source = template ?? (await migratedTemplate());
   const name = `ebbline_test_${randomBytes(8).toString('hex')}`;
   await asAdmin((client) => client.query(`create database ${name} template ${source}`));
   const drop = async (): Promise<void> => {

@@ -62,6 +62,10 @@ export async function holdLots(
     if (candidate.onlyAfter !== null && place.endsAt <= candidate.onlyAfter) return [];
     return [{ ...candidate, place }];
   });
+  // Channels are judged side by side and end in any order; people read the lots in theirs.
+  fresh.sort(
+    (a, b) => a.place.endsAt.getTime() - b.place.endsAt.getTime() || a.lotId - b.lotId || a.channelId - b.channelId,
+  );
   const before = await openHolds(tx, [...new Set([...changedLotIds, ...fresh.map((cause) => cause.lotId)])]);
   await tx.raw('update holds set evidence_version = evidence_version + 1 where id = any(:ids)', {
     ids: [...before.values()],

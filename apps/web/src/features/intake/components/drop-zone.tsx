@@ -4,7 +4,6 @@ import { urls } from '../../../app/urls';
 import { ProblemNotice } from '../../../shared/ui/problem-notice';
 import { ApiProblem } from '../../../shared/api/client';
 import { LARGEST_FILE_BYTES, uploadWorkbook } from '../api/upload';
-import { sizeWords } from './intake-words';
 
 interface DropZoneProps {
   lineId: number;
@@ -95,5 +94,5 @@ const tooLarge = (file: File) =>
   new ApiProblem({
     status: 413,
     code: 'file-too-large',
-    detail: `${file.name} has ${sizeWords(file.size)}; up to ${sizeWords(LARGEST_FILE_BYTES)} are taken. Split it by shift and upload the parts.`,
+    detail: `${file.name} is larger than 30 MB. Split it by shift and upload the parts.`,
   });
