@@ -211,8 +211,8 @@ async function updateLotChannels(tx: Transaction): Promise<void> {
        where not i.is_there and i.drop_code is null
      ), active as (
        select t.channel_id, t.lot_id, t.specification_id, t.lower, t.upper, r.value, r.censoring, r.measured_at,
-         extract(epoch from r.measured_at)::float8 as at,
-         min(r.measured_at) over lot as first_at, max(r.measured_at) over lot as last_at
+         date_part('epoch', r.measured_at) as at,
+         min(date_part('epoch', r.measured_at)) over lot as first_at, max(date_part('epoch', r.measured_at)) over lot as last_at
        from touched t join readings r on r.channel_id = t.channel_id and r.lot_id = t.lot_id and r.superseded_by is null
          and r.measured_at between t.starts_at and t.ends_at
        window lot as (partition by t.channel_id, t.lot_id)
@@ -221,7 +221,7 @@ async function updateLotChannels(tx: Transaction): Promise<void> {
          'sumSquares', coalesce(var_pop(value), 0) * count(*)) as figures
        from (
          select channel_id, lot_id, at, value, case when last_at > first_at then
-             least(15, floor(16 * extract(epoch from measured_at - first_at) / extract(epoch from last_at - first_at))::integer) else 0 end as block
+             least(15, floor(16 * (at - first_at) / (last_at - first_at)))::integer else 0 end as block
          from active where value is not null
        ) b group by channel_id, lot_id, block
      ), lists as (

@@ -4,8 +4,10 @@ import { Piscina } from 'piscina';
 import { threadFile } from './project-root';
 
 /** A reader that grows beyond this is ended by the runtime, and the file refused. */
-const READER_HEAP_MB = 384;
-const JUDGE_HEAP_MB = 256;
+const READER_HEAP_MB = 256;
+const JUDGE_HEAP_MB = 128;
+/** Small, since every thread has its own: what lives long moves on soon enough. */
+const YOUNG_HEAP_MB = 16;
 const IDLE_MS = 30_000;
 
 /** Worker threads, so that no event loop that serves anybody reads a workbook or fits a baseline. */
@@ -29,7 +31,10 @@ export class ThreadPools implements OnApplicationShutdown {
       minThreads: 0,
       maxThreads: isReader ? 1 : Math.max(1, availableParallelism()),
       idleTimeout: IDLE_MS,
-      resourceLimits: { maxOldGenerationSizeMb: isReader ? READER_HEAP_MB : JUDGE_HEAP_MB },
+      resourceLimits: {
+        maxOldGenerationSizeMb: isReader ? READER_HEAP_MB : JUDGE_HEAP_MB,
+        maxYoungGenerationSizeMb: YOUNG_HEAP_MB,
+      },
     });
     this.pools.set(name, pool);
     return pool;

@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type { IncomingMessage } from 'node:http';
-import type { DynamicModule } from '@nestjs/common';
+import { type DynamicModule, RequestMethod } from '@nestjs/common';
 import type { Config } from '@app/platform';
 import { LoggerModule } from 'nestjs-pino';
 
@@ -10,6 +10,7 @@ const SECRETS = ['req.headers.authorization', 'req.headers.cookie', 'res.headers
 export function loggingModule(config: Config): DynamicModule {
   const isTest = process.env.NODE_ENV === 'test';
   return LoggerModule.forRoot({
+    forRoutes: [{ path: '{*path}', method: RequestMethod.ALL }],
     pinoHttp: {
       level: isTest ? 'silent' : config.isDemo ? 'warn' : 'info',
       redact: { paths: SECRETS, remove: true },
