@@ -34,10 +34,10 @@ module.exports = {
       'unit',
       ['<rootDir>/libs/**/*.spec.ts', '<rootDir>/apps/**/*.spec.{ts,tsx}', '<rootDir>/tools/**/*.spec.ts'],
       {
-        testPathIgnorePatterns: ['/node_modules/', '<rootDir>/libs/data/'],
+        testPathIgnorePatterns: ['/node_modules/', '<rootDir>/libs/data/', '<rootDir>/apps/worker/'],
       },
     ),
-    project('data', ['<rootDir>/libs/data/**/*.spec.ts', '<rootDir>/test/migrations/**/*.spec.ts'], database),
+    project('data', ['<rootDir>/{libs/data,apps/worker,test/migrations}/**/*.spec.ts'], database),
     project('api', ['<rootDir>/test/api/**/*.spec.ts'], database),
     project('reliability', ['<rootDir>/test/reliability/**/*.spec.ts'], database),
     project('browser', ['<rootDir>/test/browser/tests/**/*.spec.ts'], database),

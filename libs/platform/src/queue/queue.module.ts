@@ -12,7 +12,7 @@ import { BullOnIoredisMock } from './bull-on-ioredis-mock';
 const CLIENT_OPTIONS = { maxRetriesPerRequest: null, enableReadyCheck: false };
 const CLOSING_MS = 1000;
 /** A job whose worker was killed goes to another one within some twenty seconds. Its attempts are counted in the database. */
-const SETTINGS = { drainDelay: 1, lockDuration: 15_000, stalledInterval: 5_000, maxStalledCount: 100 };
+export const QUEUE_SETTINGS = { drainDelay: 1, lockDuration: 15_000, stalledInterval: 5_000, maxStalledCount: 100 };
 
 let processStores = 0;
 
@@ -69,7 +69,7 @@ export class QueueModule {
           inject: [QueueClients],
           useFactory: (clients: QueueClients) => ({
             createClient: () => clients.create(),
-            settings: SETTINGS,
+            settings: QUEUE_SETTINGS,
           }),
         }),
         QueueClientsModule,
