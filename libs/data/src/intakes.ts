@@ -166,6 +166,7 @@ export async function updateIntakeStored(
   await tx('intakes').where({ id }).update({
     state: 'working',
     channel_ids: stored.channelIds,
+    lot_ids: stored.lotIds,
     rows_used: stored.rowsUsed,
     rows_already_there: stored.rowsAlreadyThere,
     rows_not_used: stored.rowsNotUsed,
