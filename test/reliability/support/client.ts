@@ -47,6 +47,19 @@ export class RouteClient {
     return this.send<IntakeView>(`intakes/${intakeId}`, {});
   }
 
+  /** Begins to watch; `ended` resolves when the stream is over, also when it breaks. */
+  async watch(intakeId: number): Promise<{ ended: Promise<void> }> {
+    const answer = await fetch(this.url(`intakes/${intakeId}/events`), {
+      headers: { authorization: `Bearer ${this.token}` },
+    });
+    const reader = answer.body?.getReader();
+    await reader?.read();
+    const drain = async (): Promise<void> => {
+      while (!(await reader?.read())?.done);
+    };
+    return { ended: drain().catch(() => undefined) };
+  }
+
   private async send<T>(path: string, init: RequestInit): Promise<T> {
     const answer = await fetch(this.url(path), { ...init, headers: { authorization: `Bearer ${this.token}` } });
     const body = (await answer.json()) as T;

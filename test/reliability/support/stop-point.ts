@@ -14,11 +14,12 @@ export class StopPoint {
   private constructor(
     private readonly holder: Client,
     private readonly watcher: Client,
+    private readonly locker: Client,
   ) {}
 
   static async open(url: string): Promise<StopPoint> {
-    const [holder, watcher] = [new Client({ connectionString: url }), new Client({ connectionString: url })];
-    await Promise.all([holder.connect(), watcher.connect()]);
+    const [holder, watcher, locker] = [1, 2, 3].map(() => new Client({ connectionString: url }));
+    await Promise.all([holder, watcher, locker].map((client) => client.connect()));
     await watcher.query(`
       create function wait_for_test() returns trigger language plpgsql as $$
       begin
@@ -26,7 +27,7 @@ export class StopPoint {
         return new;
       end $$`);
     await holder.query('select pg_advisory_lock($1)', [KEY]);
-    const point = new StopPoint(holder, watcher);
+    const point = new StopPoint(holder, watcher, locker);
     watcher.on('notification', ({ payload }) => point.progress.push(JSON.parse(payload ?? '{}') as IntakeProgress));
     await watcher.query('listen intake_progress');
     return point;
@@ -46,7 +47,7 @@ export class StopPoint {
 
   /** Ends that, but whoever locks a channel waits: recording verdicts begins with it. */
   async atChannelsInstead(): Promise<void> {
-    await this.watcher.query('begin; select 1 from channels for update');
+    await this.locker.query('begin; select 1 from channels for update');
     await this.holder.query('commit');
   }
 
@@ -63,6 +64,6 @@ export class StopPoint {
 
   /** Lets everything go on. */
   async release(): Promise<void> {
-    await Promise.all([this.holder.end(), this.watcher.end()]);
+    await Promise.all([this.holder, this.watcher, this.locker].map((client) => client.end()));
   }
 }

@@ -16,12 +16,20 @@ export interface JudgeChannelTask {
   rejudgeFrom: number | null;
 }
 
+/** Lives as long as the thread. */
 let database: Database | undefined;
 
-/** Reads a channel's inputs in one snapshot and judges its segments. Writes nothing. */
 export default async function judgeChannel(task: JudgeChannelTask): Promise<JudgedChannel> {
   database ??= createDatabase(task.databaseUrl, { min: 0, max: 1 });
-  const inputs = await database.transaction((tx) => getChannelInputs(tx, task.channelId, task.rejudgeFrom), {
+  return judgeFrom(database, task);
+}
+
+/** Reads a channel's inputs in one snapshot and judges its segments. Writes nothing. */
+export async function judgeFrom(
+  db: Database,
+  { channelId, rejudgeFrom }: Pick<JudgeChannelTask, 'channelId' | 'rejudgeFrom'>,
+): Promise<JudgedChannel> {
+  const inputs = await db.transaction((tx) => getChannelInputs(tx, channelId, rejudgeFrom), {
     isolationLevel: 'repeatable read',
     readOnly: true,
   });

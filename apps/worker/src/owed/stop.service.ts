@@ -21,7 +21,7 @@ export class StopService implements BeforeApplicationShutdown {
 
   async beforeApplicationShutdown(): Promise<void> {
     this.running.beginToStop();
-    await within(PAUSE_MS, Promise.all([this.work.pause(true, true), this.mail.pause(true, true)]));
+    await within(PAUSE_MS, Promise.allSettled([this.work.pause(true, true), this.mail.pause(true, true)]));
     await this.running.settled(GRACE_MS);
     await this.threads.close();
     await this.running.settled(CUT_SHORT_MS);

@@ -48,7 +48,7 @@ class QueueCloser implements BeforeApplicationShutdown {
   ) {}
 
   async beforeApplicationShutdown(): Promise<void> {
-    await within(CLOSING_MS, Promise.all([this.work.close(true), this.mail.close(true)]));
+    await within(CLOSING_MS, Promise.allSettled([this.work.close(true), this.mail.close(true)]));
     this.clients.end();
   }
 }
