@@ -8,10 +8,17 @@ export type Queryable = Knex | Knex.Transaction;
 
 const INT8 = 20;
 
-/** Opens a pool on PostgreSQL. Ids are bigint below 2^53 and come back as numbers. */
+/**
+ * Opens a pool on PostgreSQL. Ids are bigint below 2^53 and come back as numbers. Statements here are many and short: compiling them
+ * (`jit`) costs more than it saves.
+ */
 export function createDatabase(url: string, pool: { min: number; max: number } = { min: 0, max: 10 }): Database {
   types.setTypeParser(INT8, Number);
-  return knex({ client: 'pg', connection: { connectionString: url, application_name: 'ebbline' }, pool });
+  return knex({
+    client: 'pg',
+    connection: { connectionString: url, application_name: 'ebbline', options: '-c jit=off' },
+    pool,
+  });
 }
 
 /** Rows of a raw query. */

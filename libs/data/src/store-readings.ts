@@ -201,45 +201,46 @@ async function updateLotSpans(tx: Transaction, ids: Ids): Promise<void> {
   );
 }
 
-/** What each touched lot comes to on each touched channel, with its sixteen time blocks and the specification of its start. */
+/**
+ * What each touched lot comes to on each touched channel, with its sixteen time blocks and the specification of its start. The readings
+ * are looked up lot by lot through the identity index inside one statement: joined as a set, fresh tables mislead the planner.
+ */
 async function updateLotChannels(tx: Transaction): Promise<void> {
   await tx.raw(
-    `with touched as (
-       select distinct i.channel_id, i.lot_id, l.starts_at, l.ends_at, s.id as specification_id, s.lower, s.upper
-       from incoming i join lots l on l.id = i.lot_id join channels c on c.id = i.channel_id
-       left join specifications s on s.product_id = l.product_id and s.characteristic_id = c.characteristic_id and s.valid @> l.starts_at
-       where not i.is_there and i.drop_code is null
-     ), active as (
-       select t.channel_id, t.lot_id, t.specification_id, t.lower, t.upper, r.value, r.censoring, r.measured_at,
-         date_part('epoch', r.measured_at) as at,
-         min(date_part('epoch', r.measured_at)) over lot as first_at, max(date_part('epoch', r.measured_at)) over lot as last_at
-       from touched t join readings r on r.channel_id = t.channel_id and r.lot_id = t.lot_id and r.superseded_by is null
-         and r.measured_at between t.starts_at and t.ends_at
-       window lot as (partition by t.channel_id, t.lot_id)
-     ), blocks as (
-       select channel_id, lot_id, block, jsonb_build_object('index', block, 'at', avg(at), 'count', count(*), 'mean', avg(value),
-         'sumSquares', coalesce(var_pop(value), 0) * count(*)) as figures
-       from (
-         select channel_id, lot_id, at, value, case when last_at > first_at then
-             least(15, floor(16 * (at - first_at) / (last_at - first_at)))::integer else 0 end as block
-         from active where value is not null
-       ) b group by channel_id, lot_id, block
-     ), lists as (
-       select channel_id, lot_id, jsonb_agg(figures order by block) as blocks from blocks group by channel_id, lot_id
-     ), whole as (
-       select channel_id, lot_id, specification_id, count(value) as count,
-         count(*) filter (where censoring = 'below') as censored_low, count(*) filter (where censoring = 'above') as censored_high,
-         min(measured_at) as first_at, max(measured_at) as last_at, to_timestamp(avg(at) filter (where value is not null)) as mean_at,
-         avg(value) as mean, var_pop(value) * count(value) as sum_squares, min(value) as minimum, max(value) as maximum,
-         count(*) filter (where value < lower) as count_below, count(*) filter (where value > upper) as count_above
-       from active group by channel_id, lot_id, specification_id
-     )
-     update lot_channels lc set count = w.count, censored_low = w.censored_low, censored_high = w.censored_high, first_at = w.first_at,
-       last_at = w.last_at, mean_at = w.mean_at, mean = w.mean, sum_squares = w.sum_squares, minimum = w.minimum, maximum = w.maximum,
-       count_below = w.count_below, count_above = w.count_above, specification_id = w.specification_id,
-       blocks = b.blocks
-     from whole w left join lists b using (channel_id, lot_id) where lc.channel_id = w.channel_id and lc.lot_id = w.lot_id`,
+    `create temporary table touched on commit drop as
+     select i.channel_id, i.lot_id, l.starts_at, l.ends_at, s.id as specification_id, s.lower, s.upper
+     from (select distinct channel_id, lot_id from incoming where ${IS_NEW}) i
+     join lots l on l.id = i.lot_id join channels c on c.id = i.channel_id
+     left join specifications s on s.product_id = l.product_id and s.characteristic_id = c.characteristic_id and s.valid @> l.starts_at`,
   );
+  await tx.raw('analyze touched');
+  await tx.raw(
+    `update lot_channels lc set count = w.count, censored_low = w.censored_low, censored_high = w.censored_high, first_at = w.first_at,
+       last_at = w.last_at, mean_at = w.mean_at, mean = w.mean, sum_squares = w.sum_squares, minimum = w.minimum, maximum = w.maximum,
+       count_below = w.count_below, count_above = w.count_above, specification_id = t.specification_id, blocks = w.blocks
+     from touched t cross join lateral (
+       with active as materialized (
+         select r.value, r.censoring, r.measured_at, date_part('epoch', r.measured_at) as at from readings r
+         where r.channel_id = t.channel_id and r.measured_at between t.starts_at and t.ends_at and r.lot_id = t.lot_id and r.superseded_by is null
+       ), span as (
+         select min(at) as first_at, nullif(max(at) - min(at), 0) as length from active
+       ), blocks as (
+         select least(15, coalesce(floor(16 * (a.at - s.first_at) / s.length), 0))::integer as block, count(*) as count, avg(a.at) as at,
+           avg(a.value) as mean, var_pop(a.value) * count(*) as sum_squares
+         from active a cross join span s where a.value is not null group by 1
+       )
+       select count(value) as count, count(*) filter (where censoring = 'below') as censored_low,
+         count(*) filter (where censoring = 'above') as censored_high, min(measured_at) as first_at, max(measured_at) as last_at,
+         to_timestamp(avg(at) filter (where value is not null)) as mean_at, avg(value) as mean, var_pop(value) * count(value) as sum_squares,
+         min(value) as minimum, max(value) as maximum, count(*) filter (where value < t.lower) as count_below,
+         count(*) filter (where value > t.upper) as count_above,
+         (select jsonb_agg(jsonb_build_object('index', block, 'at', b.at, 'count', b.count, 'mean', b.mean, 'sumSquares', b.sum_squares) order by block)
+          from blocks b) as blocks
+       from active
+     ) w
+     where lc.channel_id = t.channel_id and lc.lot_id = t.lot_id`,
+  );
+  await tx.raw('drop table touched');
 }
 
 /** A sheet's row is used when it brought a reading, already there when all that it brings is there. */
