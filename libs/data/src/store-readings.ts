@@ -222,7 +222,7 @@ async function updateLotChannels(tx: Transaction): Promise<void> {
        with active as materialized (
          select r.value, r.censoring, r.measured_at, date_part('epoch', r.measured_at) as at from readings r
          where r.channel_id = t.channel_id and r.measured_at between t.starts_at and t.ends_at and r.lot_id = t.lot_id and r.superseded_by is null
-       ), span as (
+       ), span as materialized (
          select min(at) as first_at, nullif(max(at) - min(at), 0) as length from active
        ), blocks as (
          select least(15, coalesce(floor(16 * (a.at - s.first_at) / s.length), 0))::integer as block, count(*) as count, avg(a.at) as at,
