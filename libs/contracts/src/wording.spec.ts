@@ -17,9 +17,11 @@ const facts = (changed: Partial<SignalFacts>): SignalFacts => ({
 
 describe('the words of a signal', () => {
   it('say how far, on which side, in what, and what the limit is', () => {
-    expect(signalPhrase(facts({}))).toBe('lies 4.3 σ below its baseline in coat weight (control limit 3.0 σ)');
+    expect(signalPhrase(facts({}))).toBe(
+      'lies 4.3\u202fσ below its baseline in coat weight (control limit 3.0\u202fσ)',
+    );
     expect(signalPhrase(facts({ score: 3.02, channelName: 'pH' }))).toBe(
-      'lies 3.02 σ above its baseline in pH (control limit 3.00 σ)',
+      'lies 3.02\u202fσ above its baseline in pH (control limit 3.00\u202fσ)',
     );
   });
 

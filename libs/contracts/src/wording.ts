@@ -27,7 +27,7 @@ export function signalPhrase(facts: SignalFacts): string {
       const side = score < 0 ? 'below' : 'above';
       const limit = facts.limit ?? 0;
       const decimals = decimalsApart(Math.abs(score), limit);
-      return `lies ${formatNumber(Math.abs(score), decimals)} σ ${side} its baseline in ${name} (control limit ${formatNumber(limit, decimals)} σ)`;
+      return `lies ${formatNumber(Math.abs(score), decimals)}\u202fσ ${side} its baseline in ${name} (control limit ${formatNumber(limit, decimals)}\u202fσ)`;
     }
     case 'outside_specification':
       return `is outside its specification in ${name}${specificationDetail(facts, size)}`;

@@ -82,8 +82,8 @@ describe('holding lots', () => {
       }),
     ]);
     expect(held[0].causes.map(({ sentence }) => sentence)).toEqual([
-      'lies 4.3 σ below its baseline in coat weight (control limit 3.0 σ)',
-      'lies 5.1 σ above its baseline in web thickness (control limit 3.0 σ)',
+      'lies 4.3\u202fσ below its baseline in coat weight (control limit 3.0\u202fσ)',
+      'lies 5.1\u202fσ above its baseline in web thickness (control limit 3.0\u202fσ)',
     ]);
     expect(await holds()).toMatchObject([{ lot_id: lotId, state: 'open', evidence_version: 1, opened_at: AT }]);
   });

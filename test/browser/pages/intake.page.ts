@@ -34,6 +34,11 @@ export class IntakePage {
     );
   }
 
+  /** The sentence about a scored workbook's lots. */
+  cameOfIt(): Promise<string> {
+    return this.page.getByRole('region', { name: 'What came of it' }).getByText('scored').first().innerText();
+  }
+
   openHold(lot: string): Promise<void> {
     return this.page.getByRole('link', { name: `Open the hold of lot ${lot}` }).click();
   }

@@ -25,6 +25,9 @@ export interface IntakeReadingPreview {
   at: Instant;
   lot: string;
   product: string | null;
+  quantity: number | null;
+  serial: string | null;
+  position: string | null;
   channelName: string;
   unit: string;
   value: number | null;

@@ -99,8 +99,8 @@ function causeFigures(cause: HeldCause): [string, string][] {
   pairs.push(['Lot mean as corrected', 'No gauge checks: not corrected']);
   if (cause.baseline !== null) pairs.push(['Baseline without the lot', formatMean(cause.baseline, cause)]);
   if (cause.score !== null)
-    pairs.push(['Score', `${formatNumber(cause.score, 1)} σ${cause.isProvisional ? ' (provisional)' : ''}`]);
-  if (cause.limit !== null) pairs.push(['Control limits of the score', `±${formatNumber(cause.limit, 1)} σ`]);
+    pairs.push(['Score', `${formatNumber(cause.score, 1)}\u202fσ${cause.isProvisional ? ' (provisional)' : ''}`]);
+  if (cause.limit !== null) pairs.push(['Control limits of the score', `±${formatNumber(cause.limit, 1)}\u202fσ`]);
   if (cause.controlLow !== null && cause.controlHigh !== null)
     pairs.push([
       'Control limits of the lot mean',

@@ -119,16 +119,15 @@ function drawLayers(u: uPlot, frame: ChartFrame, { plugins, range, theme }: Char
     y: (value) => u.valToPos(value, 'y', true),
   };
   const { ctx, ratio, left, top, width, height } = surface;
-  ctx.save();
-  ctx.beginPath();
-  ctx.rect(left, top, width, height);
-  ctx.clip();
   for (const plugin of plugins) {
+    const reach = (plugin.reach ?? 0) * ratio;
     ctx.save();
+    ctx.beginPath();
+    ctx.rect(left - reach, top, width + 2 * reach, height);
+    ctx.clip();
     plugin.draw(surface);
     ctx.restore();
   }
-  ctx.restore();
   ctx.save();
   drawEndWords(
     surface,

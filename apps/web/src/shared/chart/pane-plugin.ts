@@ -27,8 +27,10 @@ export interface EndWord {
   token: ColourToken;
 }
 
-/** One kind of thing on a pane. Drawing is clipped to the pane. */
+/** One kind of thing on a pane. Drawing is clipped to the pane, give or take `reach` at its left and right. */
 export interface PanePlugin {
+  /** CSS pixels by which a mark at the pane's very end may stand out of it; 0 unless given. */
+  reach?: number;
   draw(surface: PaneSurface): void;
   /** What the value axis must hold while [from, to] is shown. */
   span?(from: number, to: number): ValueSpan | null;

@@ -19,11 +19,14 @@ export const breakWords = ({ kind, reason }: Pick<BreakView, 'kind' | 'reason'>)
 
 /** A deviation with its sign, in the resolution's decimals. */
 export function signed(value: number, resolution: number): string {
-  return `${value > 0 ? '+' : ''}${formatNumber(value, decimalsOf(resolution))}`;
+  return withSign(value, decimalsOf(resolution));
 }
 
-export const scoreText = (score: number | null) =>
-  score === null ? '–' : `${score > 0 ? '+' : ''}${formatNumber(score, 1)}\u202fσ`;
+/** A rounded zero carries no sign. */
+const withSign = (value: number, decimals: number) =>
+  `${Number(value.toFixed(decimals)) > 0 ? '+' : ''}${formatNumber(value, decimals)}`;
+
+export const scoreText = (score: number | null) => (score === null ? '–' : `${withSign(score, 1)}\u202fσ`);
 
 /** Two limits as "41.90 … 42.50 g/m²", with a dash for one that is not there; null when there is neither. */
 export function limitsText(low: number | null, high: number | null, decimals: number): string | null {

@@ -61,7 +61,7 @@ describe('constantSentence', () => {
   it('gives limits, unit and score', () => {
     expect(constantSentence(verdict)).toBe(
       'With the slow movement left in, coat weight would have been within control limits ' +
-        '(control limits 11.800\u2009…\u200913.000\u2009g/m²; \u22121.5\u2009σ).',
+        '(control limits 11.800\u202f…\u202f13.000\u202fg/m²; \u22121.5\u202fσ).',
     );
   });
   it('says so when there was no verdict', () => {
@@ -74,8 +74,8 @@ describe('constantSentence', () => {
 
 describe('quantityText', () => {
   it('shows whole and broken quantities, and none', () => {
-    expect(quantityText(1840, 'm')).toBe('1840\u2009m');
-    expect(quantityText(12.5, 'kg')).toBe('12.5\u2009kg');
+    expect(quantityText(1840, 'm')).toBe('1840\u202fm');
+    expect(quantityText(12.5, 'kg')).toBe('12.5\u202fkg');
     expect(quantityText(null, 'm')).toBeNull();
   });
 });

@@ -51,7 +51,7 @@ export function constantSentence({ constant, channel }: VerdictView): string {
   const decimals = decimalsOf(channel.characteristic.resolution) + 1;
   const limits = limitsText(constant.low, constant.high, decimals);
   const figures = [
-    limits !== null && `control limits ${limits}\u2009${channel.characteristic.unit}`,
+    limits !== null && `control limits ${limits}\u202f${channel.characteristic.unit}`,
     constant.score !== null && scoreText(constant.score),
   ].filter((part) => part !== false);
   const detail = figures.length > 0 ? ` (${figures.join('; ')})` : '';
@@ -59,4 +59,4 @@ export function constantSentence({ constant, channel }: VerdictView): string {
 }
 
 export const quantityText = (quantity: number | null, unit: string | null) =>
-  quantity === null ? null : `${formatNumber(quantity, Number.isInteger(quantity) ? 0 : 1)}\u2009${unit ?? ''}`.trim();
+  quantity === null ? null : `${formatNumber(quantity, Number.isInteger(quantity) ? 0 : 1)}\u202f${unit ?? ''}`.trim();

@@ -12,7 +12,7 @@ export function SimilarLots({ similar }: { similar: HoldView['similar'] }) {
     <ul className="sentences">
       {similar.map((item) => (
         <li key={item.holdId}>
-          <Link to={urls.hold(item.holdId)}>Lot {item.lotNumber}</Link> {item.sentence}{' '}
+          <Link to={urls.hold(item.holdId)}>Lot {item.lotNumber}</Link> {withoutName(item)}{' '}
           <span className={`fate fate--${item.disposition}`}>
             {FATE_WORDS[item.disposition]} <When at={item.decidedAt} form="day" />
           </span>
@@ -20,4 +20,10 @@ export function SimilarLots({ similar }: { similar: HoldView['similar'] }) {
       ))}
     </ul>
   );
+}
+
+/** The reason without the lot's name, which the link says already. */
+function withoutName({ sentence, lotNumber }: HoldView['similar'][number]): string {
+  const name = `Lot ${lotNumber} `;
+  return sentence.startsWith(name) ? sentence.slice(name.length) : sentence;
 }

@@ -58,7 +58,7 @@ describe('roleWords', () => {
 describe('sizeWords', () => {
   it('uses bytes, kB and MB', () => {
     expect(sizeWords(999)).toBe('999 bytes');
-    expect(sizeWords(84_213)).toBe('84\u2009kB');
-    expect(sizeWords(2_310_000)).toBe('2.3\u2009MB');
+    expect(sizeWords(84_213)).toBe('84\u202fkB');
+    expect(sizeWords(2_310_000)).toBe('2.3\u202fMB');
   });
 });

@@ -65,7 +65,7 @@ export const counted = (count: number, one: string, many = `${one}s`) =>
 /** Size of a file: "84 kB", "2.3 MB". */
 export function sizeWords(bytes: number): string {
   if (bytes < 1_000) return `${bytes} bytes`;
-  return bytes < 1_000_000 ? `${Math.round(bytes / 1_000)}\u2009kB` : `${(bytes / 1_000_000).toFixed(1)}\u2009MB`;
+  return bytes < 1_000_000 ? `${Math.round(bytes / 1_000)}\u202fkB` : `${(bytes / 1_000_000).toFixed(1)}\u202fMB`;
 }
 
 /** "2,240 rows read = 2,196 used + 32 already there + 12 not used": each row is accounted for. */

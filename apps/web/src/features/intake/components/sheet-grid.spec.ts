@@ -15,6 +15,9 @@ const reading = (row: number, channelName: string, value: number | null): Intake
   at: '2026-12-01T05:00:00Z',
   lot: '24118',
   product: null,
+  quantity: 2080,
+  serial: null,
+  position: 'left',
   channelName,
   unit: 'µm',
   value,
@@ -24,11 +27,13 @@ const format = { time: (at: string, form: string) => `${form} ${at.slice(11, 16)
 
 describe('sheetGrids', () => {
   it('lays a reading a row on the long layout', () => {
-    const columns = [column('A', 'time'), column('B', 'lot'), column('C', 'channel'), column('D', 'value')];
+    const columns = ['time', 'lot', 'quantity', 'position', 'channel', 'value'].map((role, index) =>
+      column('ABCDEF'[index], role),
+    );
     const [grid] = sheetGrids(columns, [reading(2, 'Thickness', 25.1 + 0.1), reading(3, 'Thickness', null)], format);
     expect(grid.rows).toEqual([
-      { row: 2, cells: ['seconds 05:00', '24118', 'Thickness', '25.2'] },
-      { row: 3, cells: ['seconds 05:00', '24118', 'Thickness', 'off scale, low'] },
+      { row: 2, cells: ['seconds 05:00', '24118', '2080', 'left', 'Thickness', '25.2'] },
+      { row: 3, cells: ['seconds 05:00', '24118', '2080', 'left', 'Thickness', 'off scale, low'] },
     ]);
   });
 

@@ -51,6 +51,12 @@ function cellText(column: IntakeColumn, readings: readonly IntakeReadingPreview[
       return first.lot;
     case 'product':
       return first.product ?? '';
+    case 'quantity':
+      return first.quantity === null ? '' : formatNumber(first.quantity, decimalsWritten(first.quantity));
+    case 'serial':
+      return first.serial ?? '';
+    case 'position':
+      return first.position ?? '';
     case 'channel':
       return first.channelName;
     case 'unit':

@@ -1,8 +1,9 @@
-import { formatNumber, type LotListItem } from '@app/contracts';
+import type { LotListItem } from '@app/contracts';
 import { Column } from 'primereact/column';
 import { DataTable } from 'primereact/datatable';
 import { Link } from 'react-router-dom';
 import { urls } from '../../../app/urls';
+import { scoreText } from '../../../shared/record/record-words';
 import { Mark } from '../../../shared/ui/mark';
 import { fateWords, verdictWords } from '../../../shared/ui/mark-words';
 import { When } from '../../../shared/ui/when';
@@ -57,7 +58,7 @@ const farthestCell = (lot: LotListItem) =>
     <span className="soft">–</span>
   ) : (
     <>
-      {lot.farthest.channelName} <span className="number">{formatNumber(lot.farthest.score, 1)} σ</span>
+      {lot.farthest.channelName} <span className="number">{scoreText(lot.farthest.score)}</span>
     </>
   );
 

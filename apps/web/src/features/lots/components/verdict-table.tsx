@@ -1,6 +1,7 @@
 import { formatMean, formatNumber, type LotView, type VerdictView } from '@app/contracts';
 import { Link } from 'react-router-dom';
 import { urls } from '../../../app/urls';
+import { scoreText } from '../../../shared/record/record-words';
 import { Mark } from '../../../shared/ui/mark';
 import { CONTROL_WORDS } from '../../../shared/ui/mark-words';
 import { recordSpanAround } from '../record-span';
@@ -58,7 +59,7 @@ function VerdictRows({ verdict, lot }: { verdict: VerdictView; lot: LotView }) {
         </td>
         <td data-label="Constant baseline">
           {CONTROL_WORDS[constant.state]}
-          {constant.score !== null && <span className="soft"> {formatNumber(constant.score, 1)} σ</span>}
+          {constant.score !== null && <span className="soft"> {scoreText(constant.score)}</span>}
         </td>
       </tr>
       <tr className="verdict__said">
@@ -81,7 +82,7 @@ function VerdictRows({ verdict, lot }: { verdict: VerdictView; lot: LotView }) {
 }
 
 function scoreWords({ score, limit }: VerdictView): string {
-  const value = score === null ? '–' : `${formatNumber(score, 2)} σ`;
+  const value = score === null ? '–' : `${formatNumber(score, 2)}\u202fσ`;
   return limit === null ? value : `${value}, ±${formatNumber(limit, 2)}`;
 }
 

@@ -42,16 +42,16 @@ const textOf = (name: string, of: PlanView) => PARAMETER_ROWS.find((item) => ite
 
 describe('spanText', () => {
   it('uses days, and hours below two days', () => {
-    expect(spanText(3 * 86_400)).toBe('3.0\u2009d');
-    expect(spanText(30 * 3_600)).toBe('30.0\u2009h');
+    expect(spanText(3 * 86_400)).toBe('3.0\u202fd');
+    expect(spanText(30 * 3_600)).toBe('30.0\u202fh');
   });
 });
 
 describe('PARAMETER_ROWS', () => {
   it('shows numbers with unit, sign and resolution', () => {
-    expect(textOf('SD between lots', plan(1, 'in_force'))).toBe('0.0712\u2009g/m²');
+    expect(textOf('SD between lots', plan(1, 'in_force'))).toBe('0.0712\u202fg/m²');
     expect(textOf('Centre of the scores', plan(1, 'in_force'))).toBe('\u22120.03');
-    expect(textOf('Control limits', plan(1, 'in_force'))).toBe('±3.0\u2009σ');
+    expect(textOf('Control limits', plan(1, 'in_force'))).toBe('±3.0\u202fσ');
     expect(textOf('Allowance, cap', plan(1, 'in_force'))).toBe('none stated');
   });
   it('shows a dash while a draft is being worked out', () => {

@@ -29,15 +29,15 @@ const row = (
 /** A span in days, or in hours below two days. */
 export function spanText(seconds: number): string {
   const days = seconds / 86_400;
-  return days < 2 ? `${formatNumber(seconds / 3_600, 1)}\u2009h` : `${formatNumber(days, 1)}\u2009d`;
+  return days < 2 ? `${formatNumber(seconds / 3_600, 1)}\u202fh` : `${formatNumber(days, 1)}\u202fd`;
 }
 
 /** Standard deviations show two decimals more than a reading: they are compared with its resolution. */
 const sd = (value: number, { unit, resolution }: PlanView) =>
-  `${formatNumber(value, decimalsOf(resolution) + 2)}\u2009${unit}`;
+  `${formatNumber(value, decimalsOf(resolution) + 2)}\u202f${unit}`;
 
 const allowance = (value: number | null, { unit, resolution }: PlanView) =>
-  value === null ? 'none stated' : `${formatNumber(value, decimalsOf(resolution))}\u2009${unit}`;
+  value === null ? 'none stated' : `${formatNumber(value, decimalsOf(resolution))}\u202f${unit}`;
 
 export const PARAMETER_ROWS: readonly ParameterRow[] = [
   row('Baseline', 'The curve fitted to the slow movement.', () => 'smoothing spline'),
@@ -53,7 +53,7 @@ export const PARAMETER_ROWS: readonly ParameterRow[] = [
   row('SD between readings', 'From reading to reading.', (p, plan) => sd(p.betweenReadingsSd, plan)),
   row('Centre of the scores', 'Mean score of the reference lots.', (p) => formatNumber(p.centre, 2)),
   row('Scale of the scores', 'Their standard deviation; 1 is as expected.', (p) => formatNumber(p.scale, 2)),
-  row('Control limits', 'Lots beyond them are held.', (p) => `±${formatNumber(p.limit, 1)}\u2009σ`),
+  row('Control limits', 'Lots beyond them are held.', (p) => `±${formatNumber(p.limit, 1)}\u202fσ`),
   row('Reference lots', 'Lots that scale and centre come from.', (p) => String(p.referenceLotCount)),
   row('Allowance, notice', 'Movement since the baseline’s start that is told.', (p, plan) =>
     allowance(p.allowanceNotice, plan),

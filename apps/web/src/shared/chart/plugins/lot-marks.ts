@@ -21,6 +21,7 @@ export function lotMarks(lots: readonly MarkedLot[]): PanePlugin {
   const drawn = lots.filter((lot) => lot.value !== null);
   const inOrder = [...drawn].sort((a, b) => weight(a.mark) - weight(b.mark));
   return {
+    reach: LARGE / 2,
     span(from, to): ValueSpan | null {
       const seen = drawn.filter((lot) => lot.at >= from && lot.at <= to).map((lot) => lot.value as number);
       return seen.length === 0 ? null : { low: Math.min(...seen), high: Math.max(...seen) };
