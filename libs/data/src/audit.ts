@@ -37,19 +37,19 @@ export async function listHistory(
   things: { kind: string; id: number }[],
 ): Promise<{ at: Date; actorName: string; actorId: number | null; sentence: string }[]> {
   if (things.length === 0) return [];
-  const entries = (await db('audit_entries')
+  const entries = await db('audit_entries')
     .whereIn(
       ['thing_kind', 'thing_id'],
       things.map(({ kind, id }) => [kind, id]),
     )
     .orderBy('at')
     .orderBy('id')
-    .select('at', 'actor_name', 'actor_id', 'sentence')) as {
-    at: Date;
-    actor_name: string;
-    actor_id: number | null;
-    sentence: string;
-  }[];
+    .select<{ at: Date; actor_name: string; actor_id: number | null; sentence: string }[]>(
+      'at',
+      'actor_name',
+      'actor_id',
+      'sentence',
+    );
   return entries.map((entry) => ({
     at: entry.at,
     actorName: entry.actor_name,

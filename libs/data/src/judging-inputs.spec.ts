@@ -31,7 +31,7 @@ describe('what judging a channel reads', () => {
         })),
       ),
     );
-    const lots = (await place.db('lots')) as { id: number; number: string }[];
+    const lots = await place.db('lots').select<{ id: number; number: string }[]>('id', 'number');
     ids = Object.fromEntries(lots.map((lot) => [lot.number, lot.id]));
   });
 

@@ -74,7 +74,7 @@ async function insertFit(
   context: { intakeId: number | null; methodVersion: string; at: Date },
 ): Promise<number> {
   const { fit } = judgement;
-  const [row] = (await tx('fits')
+  const [row] = await tx('fits')
     .insert({
       plant_id: channel.plantId,
       channel_id: channel.channelId,
@@ -92,7 +92,7 @@ async function insertFit(
       method_version: context.methodVersion,
       judged_at: context.at,
     })
-    .returning('id')) as { id: number }[];
+    .returning<{ id: number }[]>('id');
   return row.id;
 }
 

@@ -4,7 +4,7 @@ import { type StagedReading, StagedReadingWriter } from './staged-readings';
 
 /** The connection that a transaction runs on, for COPY. */
 async function connectionOf(tx: Transaction): Promise<Client> {
-  return (await (tx.client as { acquireConnection(): Promise<Client> }).acquireConnection()) as Client;
+  return await (tx.client as { acquireConnection(): Promise<Client> }).acquireConnection();
 }
 
 export interface Staging<R> {

@@ -1,6 +1,7 @@
 import { type DynamicModule, Global, Inject, Injectable, Module, type OnApplicationShutdown } from '@nestjs/common';
 import { createDatabase, type Database } from '@app/data';
 import type { Config } from './config';
+import { ProductionGuard } from './production-guard';
 import { ThreadPools } from './thread-pools';
 import { type Clock, CLOCK, CONFIG, DATABASE } from './tokens';
 
@@ -26,6 +27,7 @@ export class PlatformModule {
         { provide: CLOCK, useValue: clock },
         { provide: DATABASE, useFactory: () => createDatabase(config.databaseUrl) },
         DatabaseCloser,
+        ProductionGuard,
         ThreadPools,
       ],
       exports: [CONFIG, CLOCK, DATABASE, ThreadPools],

@@ -143,7 +143,7 @@ describe('sending mails', () => {
     await begun;
     const at = timers.mock.calls.findIndex(([, every]) => every === 6_000);
     bench.clock.advance(15_000);
-    (timers.mock.calls[at][0] as () => void)();
+    timers.mock.calls[at][0]();
     const in19Seconds = () => leaseMail(bench.db, id, new Date(bench.clock.now().getTime() + 19_000), 20);
     while ((await row()).leased_until.getTime() < bench.clock.now().getTime() + 20_000)
       await new Promise((resolve) => setTimeout(resolve, 5));

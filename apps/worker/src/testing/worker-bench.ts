@@ -32,9 +32,9 @@ export class WorkerBench {
   private constructor(readonly place: PlantDatabase) {
     const config = { databaseUrl: place.url, publicUrl: 'http://127.0.0.1:3000' } as Config;
     this.threads = {
-      'read-intake.thread': readIntake as never,
+      'read-intake.thread': readIntake,
       'judge-channel.thread': (task: JudgeChannelTask) => judgeFrom(this.db, task),
-      'propose-plan.thread': proposePlan as never,
+      'propose-plan.thread': proposePlan,
     };
     const pools = { run: (name: string, task: never) => this.threads[name](task) } as unknown as ThreadPools;
     const dispatcher = {
@@ -47,7 +47,7 @@ export class WorkerBench {
       new ScoreIntakeHandler(this.db, this.clock, judging, mails, dispatcher),
       new ScoreChannelsHandler(this.clock, judging, mails, dispatcher),
       new ProposePlanHandler(this.db, config, this.clock, pools),
-    ] as unknown as OwedJobHandler[];
+    ];
     this.processor = new WorkProcessor(this.handlers, this.db, this.clock, this.running);
   }
 

@@ -139,7 +139,7 @@ export class BullOnIoredisMock extends RedisMock {
 
   private prepareScripts(): void {
     const commands = this.commands;
-    const define = commands.defineCommand.bind(this) as MockInternals['defineCommand'];
+    const define = commands.defineCommand.bind(commands);
     commands.defineCommand = (name, definition) => {
       const lua = `${LUA_PRELUDE}\nlocal function __main()\n${definition.lua}\nend\nlocal __r = __main() if __r == nil then return false end return __r`;
       define(name, { ...definition, lua });
