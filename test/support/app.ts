@@ -43,7 +43,7 @@ export async function startTestApp({ extraImports = [], config = {} }: TestAppOp
   };
 }
 
-function testConfig(databaseUrl: string, config: Partial<Config>): Config {
+export function testConfig(databaseUrl: string, config: Partial<Config> = {}): Config {
   return {
     isProduction: false,
     port: 0,

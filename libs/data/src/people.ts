@@ -65,3 +65,8 @@ export function listMemberships(db: Queryable, personId: number): Promise<Member
     { personId },
   );
 }
+
+/** Whether anybody signs in with the demo's shared password. */
+export async function hasDemoPeople(db: Queryable): Promise<boolean> {
+  return (await findRow(db, 'select 1 from people where is_demo limit 1')) !== undefined;
+}
