@@ -13,8 +13,10 @@ const CHROMIUM = process.env.CHROMIUM ?? '/usr/bin/chromium';
 const FLAGS =
   '--no-sandbox --disable-gpu --disable-quic --no-first-run --disable-background-networking --disable-component-update --disable-sync';
 /** A busy machine is no failure. */
-const PATIENCE_MS = 30_000;
+const PATIENCE_MS = 60_000;
 const POLL_MS = 50;
+
+jest.setTimeout(2 * PATIENCE_MS);
 
 /** The program at a played plant, a mail catcher, and a browser. */
 export class Trial {

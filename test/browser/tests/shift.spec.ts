@@ -48,7 +48,7 @@ describe('an ordinary shift', () => {
     const held = await intake.outcome.getByRole('listitem').allInnerTexts();
     expect(held).toHaveLength(2);
     expect(await intake.cameOfIt()).toMatch(/^4 lots scored on .*; 2 are held:/);
-    expect(held[0]).toMatch(new RegExp(`Lot ${LIGHT_LOT} lies .* σ below its baseline in coat weight`));
+    expect(held[0]).toMatch(new RegExp(`Lot ${LIGHT_LOT} lies [\\d.]+\u202fσ below its baseline in coat weight`));
     expect(held[1]).toMatch(new RegExp(`Lot ${THICK_LOT} .* above its baseline in web thickness`));
     expect(await intake.accounting.innerText()).toMatch(/560 rows read = 560 used \+ 0 already there \+ 0 not used/);
   });
