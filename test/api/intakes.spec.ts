@@ -84,9 +84,7 @@ describe('intakes', () => {
       [received.id],
     );
     expect(audit.map((entry) => entry.action)).toEqual(['upload', 'read', 'confirm', 'store', 'score']);
-    const mails = (await app.database('outbox').where({ kind: 'held-lots' }).select('recipient')) as {
-      recipient: string;
-    }[];
+    const mails = await app.database<{ kind: string; recipient: string }>('outbox').where({ kind: 'held-lots' });
     expect(mails.map((mail) => mail.recipient).sort()).toEqual(
       ['engineer', 'engineer2', 'lead', 'manager'].map((name) => `${name}@marrowby.example`).sort(),
     );

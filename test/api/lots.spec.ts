@@ -190,7 +190,7 @@ describe('lots', () => {
         {
           signal: 'lot_mean',
           action: 'holds',
-          sentence: 'lies 3.4 σ above its baseline in coat weight (control limit 3.0 σ)',
+          sentence: 'lies 3.4\u202fσ above its baseline in coat weight (control limit 3.0\u202fσ)',
         },
       ],
       planRevision: 1,
