@@ -43,7 +43,8 @@ export const SEND_MAIL_JOB = 'send-mail';
  */
 export const JOB_OPTIONS = { attempts: 8, backoff: { type: 'exponential', delay: 2_000 } } as const;
 
-export const PROGRESS_STAGES = ['reading', 'storing', 'judging', 'recording', 'done', 'failed'] as const;
+/** `read` waits for a person to confirm; `done` and `failed` are the end. */
+export const PROGRESS_STAGES = ['reading', 'read', 'storing', 'judging', 'done', 'failed'] as const;
 
 /** One line of GET intakes/:id/events. */
 export interface IntakeProgress {

@@ -2,7 +2,7 @@ import { Inject, Injectable, type MessageEvent } from '@nestjs/common';
 import type { IntakeProgress } from '@app/contracts';
 import { type Database, findIntake, type IntakeRow, type Person } from '@app/data';
 import { DATABASE } from '@app/platform';
-import { concat, defer, exhaustMap, interval, map, merge, type Observable, takeWhile } from 'rxjs';
+import { concat, defer, exhaustMap, interval, map, merge, type Observable, scan, takeWhile } from 'rxjs';
 import { IntakesService } from './intakes.service';
 import { ProgressHub } from './progress-hub';
 
@@ -23,6 +23,7 @@ export class IntakeEventsService {
     const look = () => this.look(id);
     const looks = concat(defer(look), interval(LOOK_EVERY_MS).pipe(exhaustMap(look)));
     return merge(this.hub.of(id), looks).pipe(
+      scan(neverBack),
       takeWhile((progress) => !isOver(progress), true),
       map((progress) => ({ data: progress })),
     );
@@ -33,8 +34,13 @@ export class IntakeEventsService {
   }
 }
 
-const isOver = ({ stage, channelsTotal, sentence }: IntakeProgress) =>
-  stage === 'failed' || (stage === 'done' && (channelsTotal > 0 || sentence.startsWith('Scored')));
+const isOver = ({ stage }: IntakeProgress) => stage === 'failed' || stage === 'done';
+
+/** A look at the state knows no count of scored channels: what was told before stands. */
+function neverBack(told: IntakeProgress, next: IntakeProgress): IntakeProgress {
+  const isBehind = next.stage === told.stage && next.channelsScored < told.channelsScored;
+  return isBehind ? told : next;
+}
 
 function asProgress(intake: IntakeRow): IntakeProgress {
   const total = intake.channelIds?.length ?? 0;
@@ -45,7 +51,7 @@ function asProgress(intake: IntakeRow): IntakeProgress {
     case 'needs_attention':
       return {
         ...progress,
-        stage: 'done',
+        stage: 'read',
         sentence: `Read ${intake.rowsRead} rows. Look at what was recognised, then confirm.`,
       };
     case 'queued':

@@ -73,7 +73,7 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
         await updateOwedJobEnded(tx, task.owedJobId, 'done', at);
         await notifyProgress(tx, {
           intakeId: intake.id,
-          stage: 'done',
+          stage: 'read',
           rowsRead: report.rowsRead,
           channelsScored: 0,
           channelsTotal: 0,

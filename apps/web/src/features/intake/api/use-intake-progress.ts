@@ -12,7 +12,7 @@ export function useIntakeProgress(intakeId: number, isOn: boolean): IntakeProgre
     const listening = new AbortController();
     const onEvent = (event: IntakeProgress) => {
       setProgress(event);
-      if (event.stage !== 'done' && event.stage !== 'failed') return;
+      if (!['read', 'done', 'failed'].includes(event.stage)) return;
       listening.abort();
       void client.invalidateQueries();
     };
