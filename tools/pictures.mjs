@@ -57,6 +57,10 @@ async function main() {
     await engineer.waitForTimeout(1500);
     await take(engineer, 'record');
     const lead = await signedIn(browser, address, 'lead', password);
+    await lead
+      .getByRole('link', { name: /^Set lot/ })
+      .first()
+      .waitFor();
     await take(lead, 'desk');
     const manager = await signedIn(browser, address, 'manager', password);
     await manager

@@ -1,5 +1,5 @@
-import type { IntakeProblem } from '@app/contracts';
-import { cellName, counted, groupProblems, roleWords, sizeWords } from './intake-words';
+import type { IntakeProblem, IntakeView } from '@app/contracts';
+import { accountingWords, cellName, counted, groupProblems, roleWords, sizeWords } from './intake-words';
 
 const problem = (code: string, severity: IntakeProblem['severity'], row: number | null = 1): IntakeProblem => ({
   sheet: 'Readings',
@@ -60,5 +60,18 @@ describe('sizeWords', () => {
     expect(sizeWords(999)).toBe('999 bytes');
     expect(sizeWords(84_213)).toBe('84\u202fkB');
     expect(sizeWords(2_310_000)).toBe('2.3\u202fMB');
+  });
+});
+
+describe('the accounting of rows', () => {
+  const rows = { rowsRead: 2240, rowsUsed: 2196, rowsAlreadyThere: 32, rowsNotUsed: 12 } as IntakeView;
+
+  it('adds up before and after the readings are stored', () => {
+    expect(accountingWords({ ...rows, state: 'scored' })).toBe(
+      '2,240 rows read = 2,196 used + 32 already there + 12 not used',
+    );
+    expect(accountingWords({ ...rows, state: 'needs_attention', rowsUsed: 0, rowsAlreadyThere: 0 })).toBe(
+      '2,240 rows read = 2,228 to be stored or there already + 12 not used',
+    );
   });
 });

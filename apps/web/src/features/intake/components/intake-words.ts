@@ -68,8 +68,15 @@ export function sizeWords(bytes: number): string {
   return bytes < 1_000_000 ? `${Math.round(bytes / 1_000)}\u202fkB` : `${(bytes / 1_000_000).toFixed(1)}\u202fMB`;
 }
 
-/** "2,240 rows read = 2,196 used + 32 already there + 12 not used": each row is accounted for. */
-export function accountingWords({ rowsRead, rowsUsed, rowsAlreadyThere, rowsNotUsed }: IntakeView): string {
+/**
+ * Each row is accounted for. Once the readings are stored: "2,240 rows read = 2,196 used + 32 already there + 12 not used"; before that
+ * nobody knows yet what is there: "2,240 rows read = 2,228 to be stored or there already + 12 not used".
+ */
+export function accountingWords({ state, rowsRead, rowsUsed, rowsAlreadyThere, rowsNotUsed }: IntakeView): string {
   const number = (count: number) => count.toLocaleString('en-GB');
-  return `${counted(rowsRead, 'row')} read = ${number(rowsUsed)} used + ${number(rowsAlreadyThere)} already there + ${number(rowsNotUsed)} not used`;
+  const isStored = state === 'working' || state === 'scored';
+  const usable = isStored
+    ? `${number(rowsUsed)} used + ${number(rowsAlreadyThere)} already there`
+    : `${number(rowsRead - rowsNotUsed)} to be stored or there already`;
+  return `${counted(rowsRead, 'row')} read = ${usable} + ${number(rowsNotUsed)} not used`;
 }
