@@ -18,6 +18,9 @@ export interface StoredReadings {
 
 const MAX_LISTED = 500;
 
+/** So that the readings of a large workbook are sorted in memory. */
+const SORT_MEMORY_MB = 64;
+
 export async function storeReadings(
   tx: Transaction,
   intake: { id: number; plantId: number; lineId: number; rowsRead: number },
@@ -25,6 +28,7 @@ export async function storeReadings(
   await tx.raw(`select pg_advisory_xact_lock(hashtext('store readings'), cast(:lineId as integer))`, {
     lineId: intake.lineId,
   });
+  await tx.raw(`set local work_mem = '${SORT_MEMORY_MB}MB'`);
   const ids: Ids = { intakeId: intake.id, plantId: intake.plantId, lineId: intake.lineId };
   await makeLots(tx, ids);
   await gatherIncoming(tx, ids);
@@ -65,17 +69,22 @@ const FIRST_QUANTITY = `
   (array_agg(quantity order by ordinal) filter (where quantity > 0))[1] as quantity,
   (array_agg(coalesce(quantity_unit, '') order by ordinal) filter (where quantity > 0))[1] as quantity_unit`;
 
-/** Makes the lots that are new. The first row that names a product says the lot's; rows that name another are none of it. */
+/**
+ * Makes the lots that are new. The first row that names a product says the lot's; rows that name another are none of it. Rows alike but for
+ * time are gathered first, so that only some few a lot are put in order.
+ */
 async function makeLots(tx: Transaction, ids: Ids): Promise<void> {
   await tx.raw(
-    `with staged as (
-       select s.lot, s.ordinal, s.quantity, s.quantity_unit, s.measured_at, p.id as product_id,
-         first_value(p.id) over (partition by s.lot order by p.id is null, s.ordinal) as lot_product_id
-       from staged_readings s left join products p on p.plant_id = :plantId and p.code = s.product where s.intake_id = :intakeId
+    `with alike as (
+       select lot, product, quantity, quantity_unit, min(ordinal) as ordinal, min(measured_at) as starts_at, max(measured_at) as ends_at
+       from staged_readings where intake_id = :intakeId group by lot, product, quantity, quantity_unit
+     ), known as (
+       select a.*, p.id as product_id, first_value(p.id) over (partition by a.lot order by p.id is null, a.ordinal) as lot_product_id
+       from alike a left join products p on p.plant_id = :plantId and p.code = a.product
      )
      insert into lots (plant_id, line_id, number, product_id, quantity, quantity_unit, starts_at, ends_at)
-     select :plantId, :lineId, lot, lot_product_id, ${FIRST_QUANTITY}, min(measured_at), max(measured_at)
-     from staged where lot_product_id is not null and (product_id is null or product_id = lot_product_id)
+     select :plantId, :lineId, lot, lot_product_id, ${FIRST_QUANTITY}, min(starts_at), max(ends_at)
+     from known where lot_product_id is not null and (product_id is null or product_id = lot_product_id)
      group by lot, lot_product_id
      on conflict (line_id, number, run) do nothing`,
     ids,
