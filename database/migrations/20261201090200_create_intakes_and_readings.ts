@@ -155,6 +155,18 @@ export async function up(knex: Knex): Promise<void> {
     comment on column lot_channels.sum_squares is 'Sum of squared deviations of the readings from their mean, unit squared.';
     comment on column lot_channels.blocks is 'Sixteen equal time blocks from first_at to last_at: [{index, at (s), count, mean, sumSquares}], empty blocks absent.';
 
+    create table intake_lots (
+      plant_id bigint not null,
+      channel_id bigint not null,
+      lot_id bigint not null,
+      intake_id bigint not null,
+      constraint intake_lots_key primary key (plant_id, channel_id, lot_id, intake_id),
+      constraint intake_lots_lot_channel_fkey foreign key (plant_id, channel_id, lot_id) references lot_channels (plant_id, channel_id, lot_id),
+      constraint intake_lots_intake_fkey foreign key (plant_id, intake_id) references intakes (plant_id, id)
+    );
+    create index intake_lots_intake_index on intake_lots (intake_id);
+    comment on table intake_lots is 'To which lots on which channels an intake brought readings. A reading refers to its row: one look instead of one at the lot and one at the intake.';
+
     create table readings (
       id bigint generated always as identity primary key,
       plant_id bigint not null,
@@ -168,8 +180,7 @@ export async function up(knex: Knex): Promise<void> {
       serial text not null default '',
       position text not null default '',
       superseded_by bigint constraint readings_superseder_fkey references readings,
-      constraint readings_lot_channel_fkey foreign key (plant_id, channel_id, lot_id) references lot_channels (plant_id, channel_id, lot_id),
-      constraint readings_intake_fkey foreign key (plant_id, intake_id) references intakes (plant_id, id),
+      constraint readings_intake_lot_fkey foreign key (plant_id, channel_id, lot_id, intake_id) references intake_lots (plant_id, channel_id, lot_id, intake_id),
       constraint readings_value_or_censoring check ((value is null) <> (censoring is null)),
       constraint readings_finite_check check (value is null or (value > '-Infinity' and value < 'Infinity'))
     );
@@ -182,6 +193,6 @@ export async function up(knex: Knex): Promise<void> {
 
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
-    drop table readings, lot_channels, lots, staged_readings, intake_problems, intake_bytes, intakes;
+    drop table readings, intake_lots, lot_channels, lots, staged_readings, intake_problems, intake_bytes, intakes;
   `);
 }

@@ -191,6 +191,11 @@ async function insertReadings(tx: Transaction, ids: Ids): Promise<void> {
     ids,
   );
   await tx.raw(
+    `insert into intake_lots (plant_id, channel_id, lot_id, intake_id)
+     select distinct cast(:plantId as bigint), channel_id, lot_id, cast(:intakeId as bigint) from incoming where ${IS_NEW}`,
+    ids,
+  );
+  await tx.raw(
     `insert into readings (plant_id, channel_id, lot_id, intake_id, measured_at, value, censoring, occurrence, serial, position)
      select :plantId, channel_id, lot_id, :intakeId, measured_at, value, censoring, occurrence, serial, position
      from incoming where ${IS_NEW} order by channel_id, measured_at`,

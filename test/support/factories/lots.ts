@@ -81,6 +81,7 @@ export async function insertReadings(
     maximum: Math.max(...values),
     specification_id: channel.specificationId,
   });
+  await db('intake_lots').insert({ plant_id: plant.id, channel_id: channel.id, lot_id: lot.id, intake_id: intakeId });
   await db.batchInsert(
     'readings',
     values.map((value, index) => ({
