@@ -176,10 +176,6 @@ export async function updateIntakeStored(
   });
 }
 
-export async function updateIntakeState(db: Queryable, id: number, from: IntakeState, to: IntakeState): Promise<void> {
-  await db('intakes').where({ id, state: from }).update({ state: to });
-}
-
 export async function updateIntakeScored(tx: Transaction, id: number, at: Date): Promise<void> {
   await tx.raw(
     `update intakes set state = 'scored', scored_at = :at, lots_scored = (

@@ -1,26 +1,9 @@
 import { ApiPropertyOptional } from '@nestjs/swagger';
 import { HELD_FILTERS, LOT_SORTS, LOT_STATE_FILTERS } from '@app/data';
-import { Type } from 'class-transformer';
-import { IsIn, IsInt, IsISO8601, IsOptional, IsString, Max, MaxLength, Min } from 'class-validator';
-import { PageQuery } from '../../platform/paging';
+import { IsIn, IsISO8601, IsOptional, IsString, MaxLength } from 'class-validator';
+import { PlaceQuery } from '../../platform/place-query';
 
-export class LotsQuery extends PageQuery {
-  @ApiPropertyOptional()
-  @IsOptional()
-  @Type(() => Number)
-  @IsInt()
-  @Min(1)
-  @Max(Number.MAX_SAFE_INTEGER)
-  plantId?: number;
-
-  @ApiPropertyOptional()
-  @IsOptional()
-  @Type(() => Number)
-  @IsInt()
-  @Min(1)
-  @Max(Number.MAX_SAFE_INTEGER)
-  lineId?: number;
-
+export class LotsQuery extends PlaceQuery {
   @ApiPropertyOptional({ enum: LOT_STATE_FILTERS })
   @IsOptional()
   @IsIn(LOT_STATE_FILTERS)
