@@ -1,6 +1,6 @@
 export { BaselineError, type BaselineErrorCode } from './baseline-error';
-export { chooseLambda, type ChooseLambdaOptions, type ChosenLambda, type LambdaRule } from './choose-lambda';
-export type { DeletedLot } from './deleted-lots';
+export { chooseLambda, type ChooseLambdaOptions, type ChosenLambda, type LambdaRule } from './choice/choose-lambda';
+export type { DeletedLot } from './spline/deleted-lots';
 export { effectivePeriod, lambdaForPeriod, pointDensity } from './drift-period';
 export type { Observations } from './observations';
-export { fitSmoothingSpline, type SmoothingSplineFit } from './smoothing-spline';
+export { fitSmoothingSpline, type SmoothingSplineFit } from './spline/smoothing-spline';

@@ -1,6 +1,6 @@
 import { BaselineError } from './baseline-error';
 import type { Observations } from './observations';
-import { fitSmoothingSpline } from './smoothing-spline';
+import { fitSmoothingSpline } from './spline/smoothing-spline';
 import { observations } from './testing/series';
 
 describe('observations that have no answer are typed errors', () => {

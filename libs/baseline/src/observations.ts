@@ -10,16 +10,16 @@ export interface Observations {
   weight: Float64Array;
   /** Lot index of each point, 0 .. lotCount-1. */
   lot: Int32Array;
-  /** Per lot (length lotCount): 1 = pulls the fit, 0 = scored only. */
-  pulls: Uint8Array;
+  /** Per lot (length lotCount): the factor on its weights in the fit, 0 .. 1. 1 = pulls the fit, 0 = scored only, between: set down by robust reweighting. */
+  pulls: Uint8Array | Float64Array;
 }
 
 /** Fewest distinct times of pulling points: with two, every smoothness gives the same line. */
 export const MIN_DISTINCT_TIMES = 3;
 
 /**
- * Checks sizes, finiteness, order, weights and lot indices.
- * @throws BaselineError 'bad-argument' (sizes, lot index, weight <= 0), 'non-finite', 'not-increasing',
+ * Checks sizes, finiteness, order, weights, lot indices and factors.
+ * @throws BaselineError 'bad-argument' (sizes, lot index, weight <= 0, factor outside 0 .. 1), 'non-finite', 'not-increasing',
  *   'insufficient-data' (fewer than three distinct times of points that pull).
  */
 export function checkObservations(obs: Observations): void {
@@ -30,6 +30,13 @@ export function checkObservations(obs: Observations): void {
       'bad-argument',
       `t, y, weight and lot differ in length: ${n}, ${y.length}, ${weight.length}, ${lot.length}.`,
     );
+  }
+  for (let j = 0; j < pulls.length; j++) {
+    if (!(pulls[j] >= 0 && pulls[j] <= 1))
+      throw new BaselineError(
+        Number.isNaN(pulls[j]) ? 'non-finite' : 'bad-argument',
+        `Lot ${j} pulls by ${pulls[j]}, which is not between 0 and 1.`,
+      );
   }
   let distinct = 0;
   let last = -Infinity;
@@ -42,7 +49,7 @@ export function checkObservations(obs: Observations): void {
     if (!(weight[i] > 0)) throw new BaselineError('bad-argument', `The weight of point ${i} is not positive.`);
     if (!(lot[i] >= 0 && lot[i] < pulls.length))
       throw new BaselineError('bad-argument', `Point ${i} names lot ${lot[i]} of ${pulls.length}.`);
-    if (pulls[lot[i]] !== 0 && t[i] > last) {
+    if (pulls[lot[i]] > 0 && t[i] > last) {
       distinct++;
       last = t[i];
     }

@@ -7,13 +7,13 @@ export interface PreparedSeries {
   readonly n: number;
   /** t[i+1] - t[i] over the range, formed from the raw stamps (length n; the last is 0). */
   readonly gap: Float64Array;
-  /** Scaled weight in the fit; 0 for points of lots that do not pull. */
+  /** Scaled weight in the fit (weight times its lot's factor); 0 for points of lots that do not pull. */
   readonly pull: Float64Array;
   /** Value minus the weighted straight line. */
   readonly r: Float64Array;
   readonly timeScale: number;
   readonly weightScale: number;
-  /** Sum of the pulling points' raw weights, and their number. */
+  /** Sum of the pulling points' raw weights times their lots' factors, and their number. */
   readonly totalWeight: number;
   readonly pullCount: number;
   /** The line that was taken off: level at lineTime (s) and slope (1/s). */
@@ -39,21 +39,23 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   let st = 0;
   let sy = 0;
   for (let i = 0; i < n; i++) {
-    if (pulls[lot[i]] === 0) continue;
+    const w = weight[i] * pulls[lot[i]];
+    if (w === 0) continue;
     pullCount++;
-    totalWeight += weight[i];
-    st += weight[i] * ((t[i] - t[0]) / timeScale);
-    sy += weight[i] * y[i];
+    totalWeight += w;
+    st += w * ((t[i] - t[0]) / timeScale);
+    sy += w * y[i];
   }
   const u0 = st / totalWeight;
   const lineLevel = sy / totalWeight;
   let suu = 0;
   let suy = 0;
   for (let i = 0; i < n; i++) {
-    if (pulls[lot[i]] === 0) continue;
+    const w = weight[i] * pulls[lot[i]];
+    if (w === 0) continue;
     const u = (t[i] - t[0]) / timeScale - u0;
-    suu += weight[i] * u * u;
-    suy += weight[i] * u * (y[i] - lineLevel);
+    suu += w * u * u;
+    suy += w * u * (y[i] - lineLevel);
   }
   const slope = suu > 0 ? suy / suu : 0;
   const weightScale = totalWeight / pullCount;
@@ -65,10 +67,11 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   for (let i = 0; i < n; i++) {
     if (i + 1 < n) gap[i] = (t[i + 1] - t[i]) / timeScale;
     r[i] = y[i] - lineLevel - slope * ((t[i] - t[0]) / timeScale - u0);
-    if (pulls[lot[i]] === 0) continue;
-    pull[i] = weight[i] / weightScale;
-    lineRss += weight[i] * r[i] * r[i];
-    sumSquares += weight[i] * y[i] * y[i];
+    const w = weight[i] * pulls[lot[i]];
+    if (w === 0) continue;
+    pull[i] = w / weightScale;
+    lineRss += w * r[i] * r[i];
+    sumSquares += w * y[i] * y[i];
   }
   if (!Number.isFinite(timeScale + weightScale + lineRss + sumSquares)) {
     throw new BaselineError('ill-posed', 'Times, values or weights are so large that sums over them overflow.');

@@ -1,4 +1,4 @@
-import type { DeletedLot, SmoothingSplineFit } from '@app/baseline';
+import type { DeletedLot, Observations, SmoothingSplineFit } from '@app/baseline';
 
 import type { ChosenPoints } from './segment-points';
 
@@ -46,7 +46,7 @@ const SAFE_LEVERAGE = 0.5;
 export function allScores(
   fit: SmoothingSplineFit,
   { observations, count }: ChosenPoints,
-  pulls: Uint8Array,
+  pulls: Observations['pulls'],
 ): LotScore[] {
   const { y, weight, lot } = observations;
   const scores = new Array<LotScore>(pulls.length);

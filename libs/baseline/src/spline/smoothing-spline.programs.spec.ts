@@ -1,6 +1,6 @@
 import { fitSmoothingSpline } from './smoothing-spline';
-import { rangeOf, reference, worstDifference } from './testing/reference';
-import { observations } from './testing/series';
+import { rangeOf, reference, worstDifference } from '../testing/reference';
+import { observations } from '../testing/series';
 
 interface RFit {
   lambda: number;

@@ -1,8 +1,8 @@
-import { BaselineError } from './baseline-error';
-import type { Observations } from './observations';
+import { BaselineError } from '../baseline-error';
+import type { Observations } from '../observations';
 import { fitSmoothingSpline } from './smoothing-spline';
-import { naiveSpline } from './testing/naive-spline';
-import { observations, wavySeries } from './testing/series';
+import { naiveSpline } from '../testing/naive-spline';
+import { observations, wavySeries } from '../testing/series';
 
 /** Largest difference of residuals and covariances from refits by dense algebra without each lot, relative to their size. */
 function worstAgainstRefits(obs: Observations, lambda: number): number {

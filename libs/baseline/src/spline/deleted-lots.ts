@@ -1,6 +1,6 @@
-import { BaselineError } from './baseline-error';
+import { BaselineError } from '../baseline-error';
 import { advance, backwardGain, combine, STATE_SIZE, type Posterior } from './information-filter';
-import type { PreparedSeries } from './prepared-series';
+import type { PreparedSeries } from '../prepared-series';
 
 /** A lot against the baseline fitted without it, at the same lambda. */
 export interface DeletedLot {

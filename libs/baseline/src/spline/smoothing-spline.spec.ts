@@ -1,11 +1,11 @@
 import fc from 'fast-check';
-import { BaselineError } from './baseline-error';
-import { lambdaForPeriod } from './drift-period';
-import type { Observations } from './observations';
+import { BaselineError } from '../baseline-error';
+import { lambdaForPeriod } from '../drift-period';
+import type { Observations } from '../observations';
 import { fitSmoothingSpline, type SmoothingSplineFit } from './smoothing-spline';
-import { naiveSpline, reinschFit } from './testing/naive-spline';
-import { worstDifference } from './testing/reference';
-import { observations, wavySeries } from './testing/series';
+import { naiveSpline, reinschFit } from '../testing/naive-spline';
+import { worstDifference } from '../testing/reference';
+import { observations, wavySeries } from '../testing/series';
 
 function weightedLine({ t, y, weight }: Observations): (x: number) => number {
   let [w0, w1, w2, v0, v1] = [0, 0, 0, 0, 0];

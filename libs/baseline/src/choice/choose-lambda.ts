@@ -1,11 +1,11 @@
-import { BaselineError } from './baseline-error';
-import { LotDeleter, type FilteredSeries } from './deleted-lots';
-import { combine, filterBothWays, STATE_SIZE, type Posterior } from './information-filter';
+import { BaselineError } from '../baseline-error';
+import { LotDeleter, type FilteredSeries } from '../spline/deleted-lots';
+import { combine, filterBothWays, STATE_SIZE, type Posterior } from '../spline/information-filter';
 import { minimiseInside } from './minimise';
-import type { Observations } from './observations';
-import { prepareSeries, type PreparedSeries } from './prepared-series';
-import { scaledInverse } from './smoothing-spline';
-import { restrictedDeviance } from './spline-criteria';
+import type { Observations } from '../observations';
+import { prepareSeries, type PreparedSeries } from '../prepared-series';
+import { scaledInverse } from '../spline/smoothing-spline';
+import { restrictedDeviance } from '../spline/spline-criteria';
 
 /** How the smoothness is chosen: leave-one-lot-out cross-validation, generalised cross-validation, restricted maximum likelihood. */
 export type LambdaRule = 'lot-cv' | 'gcv' | 'reml';

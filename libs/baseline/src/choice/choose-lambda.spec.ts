@@ -1,10 +1,10 @@
-import { BaselineError } from './baseline-error';
+import { BaselineError } from '../baseline-error';
 import { chooseLambda, type ChooseLambdaOptions } from './choose-lambda';
-import type { Observations } from './observations';
-import { fitSmoothingSpline } from './smoothing-spline';
-import { lcg } from './testing/lcg';
-import { naiveSpline, roughness } from './testing/naive-spline';
-import { observations, wavySeries } from './testing/series';
+import type { Observations } from '../observations';
+import { fitSmoothingSpline } from '../spline/smoothing-spline';
+import { lcg } from '../testing/lcg';
+import { naiveSpline, roughness } from '../testing/naive-spline';
+import { observations, wavySeries } from '../testing/series';
 import { determinant, Matrix } from 'ml-matrix';
 
 type Rule = Omit<ChooseLambdaOptions, 'floorLambda'>;

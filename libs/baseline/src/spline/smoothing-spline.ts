@@ -1,8 +1,8 @@
-import { BaselineError } from './baseline-error';
+import { BaselineError } from '../baseline-error';
 import { LotDeleter, type DeletedLot, type FilteredSeries } from './deleted-lots';
 import { advance, combine, filterBothWays, STATE_SIZE, type Posterior } from './information-filter';
-import type { Observations } from './observations';
-import { prepareSeries, type PreparedSeries } from './prepared-series';
+import type { Observations } from '../observations';
+import { prepareSeries, type PreparedSeries } from '../prepared-series';
 import { penaltyIntegral, restrictedDeviance } from './spline-criteria';
 
 /** The fitted slow movement, per second where slopes are meant, with what scoring needs of it. */

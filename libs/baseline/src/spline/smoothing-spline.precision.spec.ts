@@ -1,7 +1,7 @@
 import { fitSmoothingSpline } from './smoothing-spline';
-import { lcg } from './testing/lcg';
-import { rangeOf, reference, worstDifference } from './testing/reference';
-import { observations } from './testing/series';
+import { lcg } from '../testing/lcg';
+import { rangeOf, reference, worstDifference } from '../testing/reference';
+import { observations } from '../testing/series';
 
 interface ExactFit {
   lambda: number;
