@@ -1,4 +1,10 @@
-import { fitSmoothingSpline, lambdaForPeriod, pointDensity, type SmoothingSplineFit } from '@app/baseline';
+import {
+  fitSmoothingSpline,
+  lambdaForPeriod,
+  pointDensity,
+  type Observations,
+  type SmoothingSplineFit,
+} from '@app/baseline';
 
 import { allScores, type LotScore } from './lot-score';
 import { choosePoints, type ChosenPoints, type SegmentPoints } from './segment-points';
@@ -56,7 +62,7 @@ export function fitTwice(
     return { status: 'constant', lotCount: pulling, kappa };
   const lambda = lambdaOf(plan, kappa);
   const first = fitSmoothingSpline(observations, lambda);
-  const staying = Uint8Array.from(observations.pulls);
+  const staying = Uint8Array.from(observations.pulls, (v) => v);
   const scores = allScores(first, chosen, observations.pulls);
   for (let place = 0; place < staying.length; place += 1) if (isBeyond(scores[place], plan)) staying[place] = 0;
   const lotCount = countOnes(staying);
@@ -73,7 +79,7 @@ export const standardised = (score: LotScore, plan: PlanParameters): number => (
 export const isBeyond = (score: LotScore, plan: PlanParameters): boolean =>
   !(Math.abs(standardised(score, plan)) <= plan.limit);
 
-function countOnes(flags: Uint8Array): number {
+function countOnes(flags: Observations['pulls']): number {
   let ones = 0;
   for (const flag of flags) ones += flag;
   return ones;
