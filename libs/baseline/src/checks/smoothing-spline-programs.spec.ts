@@ -1,4 +1,4 @@
-import { fitSmoothingSpline } from './smoothing-spline';
+import { fitSmoothingSpline } from '../spline/smoothing-spline';
 import { rangeOf, reference, worstDifference } from '../testing/reference';
 import { observations } from '../testing/series';
 
