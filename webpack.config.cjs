@@ -8,7 +8,7 @@ const nodeExternals = require('webpack-node-externals');
 
 const libs = ['baseline', 'control', 'scoring', 'workbook', 'contracts', 'data', 'mail', 'platform'];
 
-/** Every apps/<app>/src/main.ts, every *.thread.ts and every tools/<tool>/main.ts is an entry. */
+/** Every apps/<app>/src/main.ts, every *.thread.ts, every tools/<tool>/main.ts and tools/<tool>/<part>/main.ts is an entry. */
 function entries() {
   const found = {};
   for (const app of ['api', 'worker', 'mail-catcher']) {
@@ -21,8 +21,11 @@ function entries() {
   }
   const tools = path.join(__dirname, 'tools');
   for (const tool of fs.existsSync(tools) ? fs.readdirSync(tools) : []) {
-    const main = path.join(tools, tool, 'main.ts');
-    if (fs.existsSync(main)) found[`tools/${tool}`] = main;
+    if (!fs.statSync(path.join(tools, tool)).isDirectory()) continue;
+    for (const part of ['', ...fs.readdirSync(path.join(tools, tool))]) {
+      const main = path.join(tools, tool, part, 'main.ts');
+      if (fs.existsSync(main)) found[`tools/${tool}${part && `-${part}`}`] = main;
+    }
   }
   const migrate = path.join(__dirname, 'database', 'main.ts');
   if (fs.existsSync(migrate)) found['database/main'] = migrate;

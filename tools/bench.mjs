@@ -1,4 +1,4 @@
-/** `npm run bench`: how long an intake takes, against the bare reading of the same file in the same run. See --help. */
+/** `npm run bench`: how long an intake takes, and with `baseline` how long a fit takes, each against yardsticks in the same run. See --help. */
 import { mkdtempSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
@@ -10,7 +10,16 @@ const HELP = `npm run bench                      confirm → scored for 5,000, 5
 npm run bench -- --sizes 5000,50000 --repeats 3   smaller
 
 Eight channels, twelve lots a shift, thirty days of history; medians. Each time is also given as a ratio to exceljs's bare
-streaming read of the same file in the same run: only the ratios compare between machines. It has a database of its own.`;
+streaming read of the same file in the same run: only the ratios compare between machines. It has a database of its own.
+
+npm run bench -- baseline          exact smoothing-spline fits with leverages and scores, 1,000 to 1,000,000 points, no database
+npm run bench -- baseline --sizes 1000,10000 --repeats 3   smaller
+npm run -s bench -- baseline --json > figures.json         the figures as JSON on stdout, what is being done on stderr
+
+At a fixed smoothness and with one chosen by generalised cross-validation; medians of 5. Beside it, where they are installed, R's smooth.spline
+(Rscript) and SciPy's make_smoothing_spline (python3), each timed inside its own process without start-up and reading, on the same doubles; and the
+floor: reading and writing the same arrays once. Tells times, ratios, growth from 100,000 to 1,000,000 points, how far the curves lie apart,
+what lots of many points cost, what a candidate of the smoothness allocates, and which of the lib's targets are met.`;
 
 const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), '..');
 /** As a plant would run it: every commit waits for the disk. */
@@ -29,15 +38,23 @@ async function main() {
     programs.removeFolderAtEnd(folder);
     await ensurePackages(root, programs, path.join(folder, 'npm-ci.log'));
     if (!isBuilt(root, dist)) await build({ root, dist, programs, log: path.join(folder, '%.log') });
+    const run = (file, args, env) =>
+      programs.run({
+        name: 'the bench',
+        command: process.execPath,
+        args: ['--expose-gc', path.join(dist, 'tools', file), ...args],
+        env: { ...process.env, ...env, BENCH_FOLDER: folder },
+        log: 'inherit',
+        timeoutSeconds: 3600,
+        onFailure: 'The bench failed: look at the lines above.',
+      });
+    const args = process.argv.slice(2);
+    if (args[0] === 'baseline') {
+      await run('bench-baseline.js', args.slice(1), { BENCH_SCRIPTS: path.join(root, 'tools', 'bench', 'baseline') });
+      return;
+    }
     const cluster = await startThrowAwayCluster(programs, CLUSTER_OPTIONS);
-    await programs.run({
-      name: 'the bench',
-      command: process.execPath,
-      args: ['--expose-gc', path.join(dist, 'tools', 'bench.js'), ...process.argv.slice(2)],
-      env: { ...process.env, BENCH_DATABASE_ADMIN_URL: cluster.adminUrl, BENCH_DIST: dist, BENCH_FOLDER: folder },
-      log: 'inherit',
-      timeoutSeconds: 3600,
-    });
+    await run('bench.js', args, { BENCH_DATABASE_ADMIN_URL: cluster.adminUrl, BENCH_DIST: dist });
     await cluster.stop();
   } finally {
     await programs.stopAll();

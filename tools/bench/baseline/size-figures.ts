@@ -1,0 +1,66 @@
+import type { Observations } from '@app/baseline';
+import { measure, median } from './clock';
+import { chooseFitAndScore, fitAndScore, fixedLambda, floorOf } from './ours';
+import { longSeries } from './series';
+import type { Yardstick } from './yardsticks';
+
+export interface RouteFigures {
+  seconds: number[];
+  median: number;
+  edf?: number;
+  /** Largest difference from our fit at the same rule, as a share of our fit's range. */
+  difference?: number;
+}
+
+export interface SizeFigures {
+  n: number;
+  lambda: number;
+  /** By route: ours-fixed, ours-gcv, floor, r-fixed, r-gcv, r-all-fixed, r-all-gcv, scipy-fixed; those of missing programs are absent. */
+  routes: Record<string, RouteFigures>;
+}
+
+/** Every route at one size, one after the other. */
+export function measureSize(n: number, repeats: number, yardsticks: Yardstick[]): SizeFigures {
+  const series = longSeries(n);
+  const lambda = fixedLambda(series);
+  const routes: Record<string, RouteFigures> = {};
+  const fitted = ours(series, lambda, repeats, routes);
+  for (const yardstick of yardsticks) {
+    for (const [name, route] of yardstick.run(series, lambda, repeats) ?? []) {
+      const own = fitted[name.endsWith('-gcv') ? 'ours-gcv' : 'ours-fixed'];
+      const { seconds, edf } = route;
+      routes[name] = { seconds, median: median(seconds), edf, difference: shareOfRange(route.fitted, own) };
+    }
+  }
+  return { n, lambda, routes };
+}
+
+function ours(series: Observations, lambda: number, repeats: number, routes: Record<string, RouteFigures>) {
+  const floor = measure(repeats, floorOf(series));
+  routes.floor = { seconds: floor.seconds, median: floor.median };
+  const fitted: Record<string, Float64Array> = {};
+  const runs = {
+    'ours-fixed': () => fitAndScore(series, lambda),
+    'ours-gcv': () => chooseFitAndScore(series),
+  };
+  for (const [name, run] of Object.entries(runs)) {
+    const timing = measure(repeats, run);
+    routes[name] = { seconds: timing.seconds, median: timing.median, edf: timing.last.edf };
+    fitted[name] = timing.last.fitted;
+  }
+  return fitted;
+}
+
+/** max |a - b| / (max b - min b); NaN anywhere counts as infinitely wrong. */
+export function shareOfRange(a: Float64Array, b: Float64Array): number {
+  let worst = 0;
+  let low = Infinity;
+  let high = -Infinity;
+  for (let i = 0; i < b.length; i++) {
+    const difference = Math.abs(a[i] - b[i]);
+    if (!(difference <= worst)) worst = Number.isNaN(difference) ? Infinity : difference;
+    low = Math.min(low, b[i]);
+    high = Math.max(high, b[i]);
+  }
+  return worst / (high - low);
+}
