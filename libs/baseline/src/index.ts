@@ -1,4 +1,13 @@
 export { BaselineError, type BaselineErrorCode } from './baseline-error';
+export type {
+  BaselineFit,
+  BaselineMethod,
+  BaselinePoint,
+  BaselineSpec,
+  LotScores,
+  PiecewiseCubic,
+  StepEstimates,
+} from './baseline-fit';
 export { chooseLambda, type ChooseLambdaOptions, type ChosenLambda, type LambdaRule } from './choice/choose-lambda';
 export type { DeletedLot } from './spline/deleted-lots';
 export { effectivePeriod, lambdaForPeriod, pointDensity } from './drift-period';
