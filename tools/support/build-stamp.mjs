@@ -7,20 +7,22 @@ const FILES = ['package.json', 'package-lock.json', 'tsconfig.json', 'webpack.co
 /** Specs and the plain scripts that surround the build are no part of it. */
 const isSource = (file) => !/\.spec\.tsx?$|\.mjs$/.test(file);
 
-function listSources(root) {
-  const inFolders = FOLDERS.filter((folder) => existsSync(path.join(root, folder))).flatMap((folder) =>
-    readdirSync(path.join(root, folder), { recursive: true, withFileTypes: true })
-      .filter((entry) => entry.isFile())
-      .map((entry) => path.join(entry.parentPath ?? entry.path, entry.name)),
-  );
+function listSources(root, folders) {
+  const inFolders = folders
+    .filter((folder) => existsSync(path.join(root, folder)))
+    .flatMap((folder) =>
+      readdirSync(path.join(root, folder), { recursive: true, withFileTypes: true })
+        .filter((entry) => entry.isFile())
+        .map((entry) => path.join(entry.parentPath ?? entry.path, entry.name)),
+    );
   const alone = FILES.map((file) => path.join(root, file)).filter((file) => existsSync(file));
   return [...inFolders.filter(isSource), ...alone].sort();
 }
 
-/** One hash over the paths and bytes of everything that goes into dist. */
-export function sourcesHash(root) {
+/** One hash over the paths and bytes of everything that goes into dist, or of what stands in some folders only. */
+export function sourcesHash(root, folders = FOLDERS) {
   const hash = createHash('sha256');
-  for (const file of listSources(root)) {
+  for (const file of listSources(root, folders)) {
     const bytes = readFileSync(file);
     hash.update(`${path.relative(root, file)}\0${bytes.length}\0`).update(bytes);
   }
