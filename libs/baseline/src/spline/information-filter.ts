@@ -49,10 +49,18 @@ export function advance(
 }
 
 /**
- * Writes into out (4 numbers, row-major) the matrix G with E[x before the gap | x after it, earlier points] = const + G x,
+ * Writes into out[j..j+3] (row-major) the matrix G with E[x before the gap | x after it, earlier points] = const + G x,
  * for the state src[i..i+5] with a point of weight w added. G is the transpose of the map that takes h across the gap.
  */
-export function backwardGain(src: Float64Array, i: number, w: number, d: number, q: number, out: Float64Array): void {
+export function backwardGain(
+  src: Float64Array,
+  i: number,
+  w: number,
+  d: number,
+  q: number,
+  out: Float64Array,
+  j: number,
+): void {
   const a = src[i] + w;
   const b = src[i + 1];
   const c = src[i + 2];
@@ -61,10 +69,10 @@ export function backwardGain(src: Float64Array, i: number, w: number, d: number,
   const ad = a * d;
   const bd = b * d;
   const s = 1 / (1 + e * (c + d * (b + ad * (1 / 3))) + (det * e * d * e * d) / 12);
-  out[0] = (1 + e * (c + 0.5 * bd)) * s;
-  out[1] = -d * (1 + e * (0.5 * c + bd * (1 / 6))) * s;
-  out[2] = e * (b + 0.5 * ad) * s;
-  out[3] = (1 - e * d * (0.5 * b + ad * (1 / 6))) * s;
+  out[j] = (1 + e * (c + 0.5 * bd)) * s;
+  out[j + 1] = -d * (1 + e * (0.5 * c + bd * (1 / 6))) * s;
+  out[j + 2] = e * (b + 0.5 * ad) * s;
+  out[j + 3] = (1 - e * d * (0.5 * b + ad * (1 / 6))) * s;
 }
 
 /**
@@ -84,19 +92,15 @@ export function filterBothWays(
   forward: Float64Array,
   backward: Float64Array,
 ): number {
-  const logDelta = filterForward(gap, w, r, q, forward);
-  const n = w.length;
-  backward.fill(0, STATE_SIZE * (n - 1), STATE_SIZE * n);
-  for (let k = n - 1; k > 0; k--) {
-    advance(backward, STATE_SIZE * k, backward, STATE_SIZE * (k - 1), w[k], w[k] * r[k], gap[k - 1], q);
-  }
-  return logDelta;
+  filterBackward(gap, w, r, q, backward);
+  return filterForward(gap, w, r, q, forward);
 }
 
-/** Products above this are turned into a logarithm and started afresh. */
+/** Products above this are turned into a logarithm and started afresh; so are factors above its fourth root. */
 const PRODUCT_LIMIT = 1e200;
+const FACTOR_LIMIT = 1e50;
 
-/** The forward half of {@link filterBothWays}, enough for the restricted likelihood. */
+/** The forward half of {@link filterBothWays}, enough for the restricted likelihood. The state is kept in locals: {@link advance} written out. */
 export function filterForward(
   gap: Float64Array,
   w: Float64Array,
@@ -104,13 +108,43 @@ export function filterForward(
   q: number,
   forward: Float64Array,
 ): number {
-  const n = w.length;
-  forward.fill(0, 0, STATE_SIZE);
+  const last = w.length - 1;
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let det = 0;
+  let h0 = 0;
+  let h1 = 0;
   let product = 1;
   let logDelta = 0;
-  for (let k = 0; k + 1 < n; k++) {
-    const delta = advance(forward, STATE_SIZE * k, forward, STATE_SIZE * (k + 1), w[k], w[k] * r[k], gap[k], q);
-    if (delta < 1e50) product *= delta;
+  for (let k = 0, i = 0; k <= last; k++, i += STATE_SIZE) {
+    forward[i] = a;
+    forward[i + 1] = b;
+    forward[i + 2] = c;
+    forward[i + 3] = det;
+    forward[i + 4] = h0;
+    forward[i + 5] = h1;
+    if (k === last) break;
+    const weight = w[k];
+    const d = gap[k];
+    const e = q * d;
+    a += weight;
+    det += weight * c;
+    h0 += weight * r[k];
+    const ad = a * d;
+    const bd = b * d;
+    const de = det * e;
+    const ded = de * d;
+    const delta = 1 + e * (c + d * (b + ad * (1 / 3))) + (ded * e * d) / 12;
+    const s = 1 / delta;
+    const h = h0;
+    h0 = ((1 + e * (c + 0.5 * bd)) * h + e * (b + 0.5 * ad) * h1) * s;
+    h1 = ((1 - e * d * (0.5 * b + ad * (1 / 6))) * h1 - d * (1 + e * (0.5 * c + bd * (1 / 6))) * h) * s;
+    a = (a + de) * s;
+    c = (c + d * (2 * b + ad + ded * (1 / 3))) * s;
+    b = (b + ad + 0.5 * ded) * s;
+    det *= s;
+    if (delta < FACTOR_LIMIT) product *= delta;
     else logDelta += Math.log(delta);
     if (product > PRODUCT_LIMIT) {
       logDelta += Math.log(product);
@@ -118,6 +152,49 @@ export function filterForward(
     }
   }
   return logDelta + Math.log(product);
+}
+
+/** The backward half of {@link filterBothWays}. */
+export function filterBackward(
+  gap: Float64Array,
+  w: Float64Array,
+  r: Float64Array,
+  q: number,
+  backward: Float64Array,
+): void {
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let det = 0;
+  let h0 = 0;
+  let h1 = 0;
+  for (let k = w.length - 1, i = STATE_SIZE * k; k >= 0; k--, i -= STATE_SIZE) {
+    backward[i] = a;
+    backward[i + 1] = b;
+    backward[i + 2] = c;
+    backward[i + 3] = det;
+    backward[i + 4] = h0;
+    backward[i + 5] = h1;
+    if (k === 0) break;
+    const weight = w[k];
+    const d = gap[k - 1];
+    const e = q * d;
+    a += weight;
+    det += weight * c;
+    h0 += weight * r[k];
+    const ad = a * d;
+    const bd = b * d;
+    const de = det * e;
+    const ded = de * d;
+    const s = 1 / (1 + e * (c + d * (b + ad * (1 / 3))) + (ded * e * d) / 12);
+    const h = h0;
+    h0 = ((1 + e * (c + 0.5 * bd)) * h + e * (b + 0.5 * ad) * h1) * s;
+    h1 = ((1 - e * d * (0.5 * b + ad * (1 / 6))) * h1 - d * (1 + e * (0.5 * c + bd * (1 / 6))) * h) * s;
+    a = (a + de) * s;
+    c = (c + d * (2 * b + ad + ded * (1 / 3))) * s;
+    b = (b + ad + 0.5 * ded) * s;
+    det *= s;
+  }
 }
 
 /** Posterior of (g, g') from what both sides and a point say. */

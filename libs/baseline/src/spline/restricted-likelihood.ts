@@ -1,0 +1,94 @@
+import type { PreparedSeries } from '../prepared-series';
+import { STATE_SIZE } from './information-filter';
+
+/**
+ * The determinant in the restricted likelihood, log|A| - (m - 2) log alpha (Wahba 1985, Ann. Statist. 13:1378), with A = W + alpha K on the m
+ * distinct times of pulling points (weights of ties added), time on [0, 1], pulling weights of mean 1, alpha the penalty in these units and
+ * K = Q R^-1 Q' (Green & Silverman 1994, 2.1.2).
+ *
+ * The filter gives D prod delta = |W| |V| |N' V^-1 N|, V = W^-1 + Omega/alpha the covariance of the points under the prior and N = (1, t). Second
+ * divided differences have Q' Omega Q = R, hence |A| = |W| alpha^(m-2) |R/alpha + Q' W^-1 Q| / |R| = alpha^(m-2) |W| |Q' V Q| / |R|; and
+ * |Q' V Q| = |V| |N' V^-1 N| |Q'Q| / |N'N| with |Q'Q| / |N'N| = prod h_j^-2 over the m - 1 gaps. So
+ *
+ *   log|A| - (m - 2) log alpha = log D + sum log delta - 2 sum log h_j - log|R|.
+ *
+ * @param forward states of the forward pass @param logDelta what it returned @param constant see {@link determinantConstant}
+ */
+export function logDeterminant(
+  series: PreparedSeries,
+  forward: Float64Array,
+  logDelta: number,
+  constant: number,
+): number {
+  const last = STATE_SIZE * (series.n - 1);
+  return Math.log(forward[last + 3] + series.pull[series.n - 1] * forward[last + 2]) + logDelta + constant;
+}
+
+/** -2 sum log h_j - log|R| over the gaps h_j between the distinct times of pulling points, scaled; the same for every lambda. */
+export function determinantConstant(series: PreparedSeries): number {
+  const { n, gap, pull } = series;
+  let logSum = 0;
+  let product = 1;
+  let before = 0;
+  let pivot = 0;
+  let span = 0;
+  let isFirst = true;
+  for (let k = 0; k < n; k++) {
+    if (pull[k] > 0) {
+      if (!isFirst && span > 0) {
+        product *= span * span;
+        if (before > 0) {
+          // R has (h_j + h_(j+1))/3 on its diagonal and h_(j+1)/6 beside it; pivot of its factorisation.
+          pivot = (before + span) / 3 - (pivot > 0 ? (before * before) / (36 * pivot) : 0);
+          product *= pivot;
+        }
+        before = span;
+        if (!(product > 1e-200 && product < 1e200)) {
+          logSum += Math.log(product);
+          product = 1;
+        }
+      }
+      span = 0;
+      isFirst = false;
+    }
+    span += gap[k];
+  }
+  return -(logSum + Math.log(product));
+}
+
+/**
+ * PRSS = RSS + alpha * integral g''^2 from the forward pass alone, as the sum of its squared standardised prediction errors (scaled weights).
+ */
+export function penalisedRss(series: PreparedSeries, forward: Float64Array): number {
+  const { n, pull, r } = series;
+  let prss = 0;
+  for (let k = 0, i = 0; k < n; k++, i += STATE_SIZE) {
+    const w = pull[k];
+    if (w === 0) continue;
+    const a = forward[i];
+    const c = forward[i + 2];
+    const det = forward[i + 3];
+    if (det > 0) {
+      const v = r[k] - (c * forward[i + 4] + forward[i + 1] * forward[i + 5]) / det;
+      prss += w * (det / (det + w * c)) * v * v;
+    } else if (a > 0 && !(c > 0)) {
+      const v = r[k] - forward[i + 4] / a;
+      prss += w * (a / (a + w)) * v * v;
+    }
+  }
+  return prss;
+}
+
+/**
+ * -2 log restricted likelihood, up to a constant of the data's size alone.
+ * @param prss in raw units (weights as given) @param logDet see {@link logDeterminant}
+ * @returns known: PRSS + logDet (sigma^2 = 1); estimated: (N - 2) log(PRSS/(N - 2)) + logDet (sigma^2 profiled out), N pulling points
+ */
+export function restrictedDeviance(
+  pullCount: number,
+  prss: number,
+  logDet: number,
+): { known: number; estimated: number } {
+  const rest = pullCount - 2;
+  return { known: prss + logDet, estimated: rest > 0 ? rest * Math.log(prss / rest) + logDet : logDet };
+}
