@@ -8,7 +8,10 @@ export type {
   PiecewiseCubic,
   StepEstimates,
 } from './baseline-fit';
+export { chooseBaseline } from './choice/choose-baseline';
 export { chooseLambda, type ChooseLambdaOptions, type ChosenLambda, type LambdaRule } from './choice/choose-lambda';
+export type { ChooseBaselineOptions, ChosenBaseline, SmoothnessBound, SmoothnessRule } from './choice/chosen-baseline';
+export type { Candidate } from './choice/criteria';
 export type { DeletedLot } from './spline/deleted-lots';
 export { effectivePeriod, lambdaForPeriod, pointDensity } from './drift-period';
 export type { Observations } from './observations';

@@ -12,15 +12,17 @@ type Rule = Omit<ChooseLambdaOptions, 'floorLambda'>;
 /** Leave-one-lot-out criterion by refitting without each lot. */
 function naiveLotCv(obs: Observations, lambda: number): number {
   let total = 0;
+  let lots = 0;
   for (let lot = 0; lot < obs.pulls.length; lot++) {
     if (obs.pulls[lot] === 0) continue;
+    lots++;
     const { fitted } = naiveSpline(obs, lambda, lot);
     const own = fitted.map((_, i) => i).filter((i) => obs.lot[i] === lot);
     const weight = own.reduce((sum, i) => sum + obs.weight[i], 0);
     const mean = own.reduce((sum, i) => sum + obs.weight[i] * (obs.y[i] - fitted[i]), 0) / weight;
     total += weight * mean * mean;
   }
-  return total;
+  return total / lots;
 }
 
 function naiveGcv(obs: Observations, lambda: number, inflation: number): number {
@@ -52,9 +54,9 @@ describe('the criteria agree with refits by dense algebra', () => {
   ])('%s', (_name, rule, naive) => {
     for (const obs of [lots, mixed]) {
       const chosen = chooseLambda(obs, { ...rule, floorLambda: 0.01 });
-      expect(chosen.curve).toHaveLength(25);
+      expect(chosen.curve.length).toBeGreaterThan(20);
       for (const { lambda, value } of chosen.curve) {
-        if (Number.isFinite(value)) expect(Math.abs(value / naive(obs, lambda) - 1)).toBeLessThan(1e-6);
+        expect(Math.abs(value / naive(obs, lambda) - 1)).toBeLessThan(1e-6);
       }
     }
   });

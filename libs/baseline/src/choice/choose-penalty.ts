@@ -1,0 +1,115 @@
+import { BaselineError } from '../baseline-error';
+import type { PreparedSeries } from '../prepared-series';
+import type { Candidate } from './criteria';
+import { ExactCriterion, type PenaltyRule } from './exact-criterion';
+import { checkEdf, penaltyForEdf } from './fixed-edf';
+import { smoothestWithinOneStandardError, type WithinOneStandardError } from './one-standard-error';
+import { bestOf, isNear, searchLambda, type LambdaSearch } from './search-lambda';
+
+/** What decides when the criterion has no minimum inside the range of lambda. */
+export type PenaltyBound = 'interpolation' | 'line';
+
+export interface ChosenPenalty extends LambdaSearch {
+  chosen: Candidate;
+  isAtFloor: boolean;
+  isAtBound: PenaltyBound | null;
+  oneStandardError?: WithinOneStandardError;
+}
+
+/** At lambda = 10 * (sum w) * range^3 the fit has 2.0003 degrees of freedom (free beam: sum of 1/mu_j = 1/500.6 + 1/3804 + ... = 0.0024). */
+const LINE_LAMBDA = 10;
+/** At lambda = 0.001 of a point's weight times the cubed spacing, an even series is interpolated. */
+const INTERPOLATION_LAMBDA = 1e-3;
+/** A line that leaves less than (1e-14)^2 of the sum of squares leaves rounding only. */
+const EXACT_LINE_SHARE = 1e-28;
+
+/** The penalties searched: from the floor (or, without one, near interpolation) to the straight line. */
+export function penaltyRange(series: PreparedSeries, floorLambda: number): { low: number; high: number } {
+  const high = LINE_LAMBDA * series.totalWeight * series.timeScale ** 3;
+  const low = floorLambda > 0 ? floorLambda : (INTERPOLATION_LAMBDA * high) / (LINE_LAMBDA * series.pullCount ** 4);
+  return { low, high };
+}
+
+/**
+ * Chooses the smoothing spline's penalty by a criterion, between the floor and the straight line.
+ * @param floorLambda weight * s^3, >= 0; 0: none
+ * @throws BaselineError as ExactCriterion; 'bad-argument', 'non-finite' for the floor
+ */
+export function choosePenalty(
+  series: PreparedSeries,
+  rule: PenaltyRule,
+  floorLambda: number,
+  hasOneStandardError = false,
+): ChosenPenalty {
+  checkFloor(floorLambda);
+  const exact = new ExactCriterion(series);
+  const evaluate = (lambda: number) => exact.evaluate(lambda, rule);
+  const { low, high } = penaltyRange(series, floorLambda);
+  if (low >= high) {
+    const chosen = evaluate(low);
+    return { chosen, curve: [chosen], minima: [chosen], isAtFloor: true, isAtBound: 'line' };
+  }
+  const search = searchLambda(low, high, () => evaluate);
+  if (series.lineRss <= EXACT_LINE_SHARE * series.sumSquares) {
+    const line = evaluate(high);
+    return { ...search, minima: [line], chosen: line, isAtFloor: false, isAtBound: 'line' };
+  }
+  const best = bestOf(search.minima);
+  if (best === undefined) throw new BaselineError('insufficient-data', 'No smoothness leaves anything to judge it by.');
+  if (!hasOneStandardError) return { ...search, chosen: best, ...where(best.smoothness, low, high, floorLambda) };
+  const { standardError } = exact.lotCriterion(best.smoothness);
+  const smoother = search.curve.filter((c) => c.smoothness > best.smoothness);
+  const smoothest = smoothestWithinOneStandardError(best, standardError, smoother, evaluate);
+  return {
+    ...search,
+    chosen: smoothest,
+    ...where(smoothest.smoothness, low, high, floorLambda),
+    oneStandardError: { ...best, standardError },
+  };
+}
+
+/**
+ * The penalty of given effective degrees of freedom, or the floor where it binds.
+ * @param edf inside (2, distinct) @param distinct distinct times of points that pull
+ * @throws BaselineError as penaltyForEdf
+ */
+export function penaltyWithEdf(
+  series: PreparedSeries,
+  edf: number,
+  distinct: number,
+  floorLambda: number,
+): { lambda: number; edf: number; isAtFloor: boolean } {
+  checkFloor(floorLambda);
+  checkEdf(edf, distinct);
+  const exact = new ExactCriterion(series);
+  if (floorLambda > 0) {
+    const most = exact.edfAt(floorLambda);
+    if (edf >= most) return { lambda: floorLambda, edf: most, isAtFloor: true };
+  }
+  const start = evenPenalty(series, edf);
+  return { ...penaltyForEdf((lambda) => exact.edfAt(lambda), edf, distinct, start), isAtFloor: false };
+}
+
+/** The penalty that has about these degrees of freedom were the points even in time: lambda = (sum w) range^3 / (2 sqrt 2 (edf - 1.4))^4 (Silverman 1984). */
+function evenPenalty(series: PreparedSeries, edf: number): number {
+  const inner = 2 * Math.SQRT2 * Math.max(0.2, edf - 1.4);
+  return (series.totalWeight * series.timeScale ** 3) / inner ** 4;
+}
+
+function checkFloor(floorLambda: number): void {
+  if (!(floorLambda >= 0))
+    throw new BaselineError(
+      Number.isNaN(floorLambda) ? 'non-finite' : 'bad-argument',
+      'The floor must not be negative.',
+    );
+}
+
+function where(lambda: number, low: number, high: number, floorLambda: number) {
+  const isAtLow = isNear(lambda, low);
+  const isAtBound: PenaltyBound | null = isNear(lambda, high)
+    ? 'line'
+    : isAtLow && floorLambda === 0
+      ? 'interpolation'
+      : null;
+  return { isAtFloor: isAtLow && floorLambda > 0, isAtBound };
+}
