@@ -1,4 +1,3 @@
-import { allScores } from './lot-score';
 import { isBeyond, type TwoPassFit } from './two-pass-fit';
 import type { AskForBreak, LotOnChannel, PlanParameters } from './types';
 
@@ -11,11 +10,11 @@ export function askForBreak(
   lots: readonly LotOnChannel[],
   plan: PlanParameters,
 ): AskForBreak | null {
-  const { chosen, fit, kappa } = result;
+  const { chosen, scores, kappa } = result;
   const { weight, lot } = chosen.observations;
   const isHeld = Uint8Array.from(chosen.lots, (index) => (lots[index].pulls ? 0 : 1));
-  allScores(fit, chosen, result.pulls).forEach((score, place) => {
-    if (isBeyond(score, plan)) isHeld[place] = 1;
+  scores.forEach((score, place) => {
+    if (score === null || isBeyond(score, plan)) isHeld[place] = 1;
   });
   const run = new Set<number>();
   let total = 0;

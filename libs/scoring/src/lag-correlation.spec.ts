@@ -25,7 +25,7 @@ describe('correlation of neighbouring scores by the fit', () => {
     const products = new Float64Array(LOTS - 1);
     for (let run = 0; run < RUNS; run += 1) {
       const chosen = choose(simulatedLots({ ...shape, driftAt: priorDrift(lambda, LOTS, normal) }));
-      const scores = allScores(fitSmoothingSpline(chosen.observations, lambda), chosen, pulls);
+      const scores = allScores(fitSmoothingSpline(chosen.observations, lambda), chosen);
       for (let j = 0; j + 1 < LOTS; j += 1) products[j] += (scores[j].z * scores[j + 1].z) / RUNS;
     }
     const expected = neighbourCorrelations(blank.observations, blank.count, lambda);

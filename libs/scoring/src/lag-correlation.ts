@@ -1,17 +1,16 @@
 import { fitSmoothingSpline, type Observations } from '@app/baseline';
-import { Matrix, inverse } from 'ml-matrix';
+import { Matrix, solve } from 'ml-matrix';
 
 /**
  * Correlation of each lot's score with the next lot's that the fit alone causes, under the spline's own prior. With
  * Cov(y − ĝ) = (I − S) W⁻¹ and e₋ⱼ = (I − Sⱼⱼ)⁻¹ (y − ĝ)ⱼ, rⱼ = aⱼᵀ e₋ⱼ:
- * Cov(rⱼ, rₖ) = aⱼᵀ (I − Sⱼⱼ)⁻¹ [(I − S) W⁻¹]ⱼₖ (I − Sₖₖ)⁻ᵀ aₖ. The blocks of S are had by deleting the two lots together: the
- * covariance of that deletion is C = (I − S_II)⁻¹ W_I⁻¹, hence (I − S_II) W_I⁻¹ = W_I⁻¹ C⁻¹ W_I⁻¹. Two fits, in which lots 0+1, 2+3, …
- * and 1+2, 3+4, … go by one name, give every pair.
+ * Cov(rⱼ, rₖ) = aⱼᵀ (I − Sⱼⱼ)⁻¹ [(I − S) W⁻¹]ⱼₖ (I − Sₖₖ)⁻ᵀ aₖ. Two fits, in which lots 0+1, 2+3, … and 1+2, 3+4, … go by one name, have the
+ * blocks of S of every pair.
  *
  * @param observations every lot pulls; lots numbered in time order
  * @param count readings of each point
  * @returns one correlation for each pair of neighbours
- * @throws BaselineError when two lots are all there is
+ * @throws BaselineError when nothing can be fitted
  */
 export function neighbourCorrelations(observations: Observations, count: Float64Array, lambda: number): Float64Array {
   const lotCount = observations.pulls.length;
@@ -20,32 +19,40 @@ export function neighbourCorrelations(observations: Observations, count: Float64
     const pairOf = (lot: number) => (lot + offset) >> 1;
     const pairs = pairOf(lotCount - 1) + 1;
     const joined = { ...observations, lot: observations.lot.map(pairOf), pulls: new Uint8Array(pairs).fill(1) };
-    for (const { lot: pair, indices, covariance } of fitSmoothingSpline(joined, lambda).deletedLots()) {
+    const fit = fitSmoothingSpline(joined, lambda);
+    const members = Array.from({ length: pairs }, (): number[] => []);
+    joined.lot.forEach((pair, i) => members[pair].push(i));
+    for (let pair = 0; pair < pairs; pair += 1) {
       const first = 2 * pair - offset;
       if (first < 0 || first + 1 >= lotCount) continue;
-      const members = Array.from(indices, (i) => observations.lot[i] - first);
-      const weights = Array.from(indices, (i) => observations.weight[i]);
-      const counts = Array.from(indices, (i) => count[i]);
-      correlations[first] = pairCorrelation(members, weights, counts, covariance);
+      const points = members[pair].map((i) => ({
+        isSecond: observations.lot[i] > first,
+        weight: observations.weight[i],
+        count: count[i],
+      }));
+      correlations[first] = pairCorrelation(points, fit.smootherBlock(pair));
     }
   }
   return correlations;
 }
 
-/** @param members 0 or 1 for each point: first or second lot of the pair */
-function pairCorrelation(members: number[], weights: number[], counts: number[], covariance: Float64Array): number {
-  const m = members.length;
-  const precision = inverse(Matrix.from1DArray(m, m, covariance));
-  const rest = new Matrix(m, m);
-  for (let p = 0; p < m; p += 1)
-    for (let q = 0; q < m; q += 1) rest.set(p, q, precision.get(p, q) / (weights[p] * weights[q]));
-  const [first, second] = [0, 1].map((member) => {
-    const own = members.flatMap((of, p) => (of === member ? [p] : []));
-    const total = own.reduce((sum, p) => sum + counts[p], 0);
-    const a = Matrix.columnVector(own.map((p) => counts[p] / total));
-    // I − Sⱼⱼ = [(I − S) W⁻¹]ⱼⱼ Wⱼ; the row is aᵀ (I − Sⱼⱼ)⁻¹.
-    const block = rest.selection(own, own).mmul(Matrix.diag(own.map((p) => weights[p])));
-    return { own, row: inverse(block).transpose().mmul(a).transpose() };
+interface PairPoint {
+  isSecond: boolean;
+  weight: number;
+  count: number;
+}
+
+/** @param block S of the two lots' points together */
+function pairCorrelation(points: PairPoint[], block: Float64Array): number {
+  const m = points.length;
+  const stays = Matrix.sub(Matrix.eye(m, m), Matrix.from1DArray(m, m, block));
+  const rest = stays.mmul(Matrix.diag(points.map(({ weight }) => 1 / weight)));
+  const [first, second] = [false, true].map((isSecond) => {
+    const own = points.flatMap((point, p) => (point.isSecond === isSecond ? [p] : []));
+    const total = own.reduce((sum, p) => sum + points[p].count, 0);
+    const a = Matrix.columnVector(own.map((p) => points[p].count / total));
+    // The row is aᵀ (I − Sⱼⱼ)⁻¹.
+    return { own, row: solve(stays.selection(own, own).transpose(), a).transpose() };
   });
   const along = (j: typeof first, k: typeof first) =>
     j.row.mmul(rest.selection(j.own, k.own)).mmul(k.row.transpose()).get(0, 0);

@@ -61,7 +61,7 @@ export function referenceScores(
     const smoothness = chooseSmoothness(chosen.observations, shortestPeriodSeconds, windowSeconds);
     const fit = fitSmoothingSpline(chosen.observations, smoothness.lambda);
     const z = new Array<number>(lots.length);
-    allScores(fit, chosen, chosen.observations.pulls).forEach((score, place) => (z[chosen.lots[place]] = score.z));
+    allScores(fit, chosen).forEach((score, place) => (z[chosen.lots[place]] = score.z));
     const { median, scale: spread } = robustScale(z.filter((_, j) => !isLeftOut[j]));
     const next = z.map((value) => !(Math.abs(value - median) <= LEAVE_OUT_BEYOND * spread));
     const isStable = next.every((flag, j) => flag === isLeftOut[j]);

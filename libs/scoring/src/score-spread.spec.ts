@@ -32,7 +32,7 @@ function spread(pointsPerLot: number, lotEffectSd: number, drift: DriftMaker, se
     const lots = simulatedLots({ ...shape, driftAt: drift(lambda, normal) });
     const pulls = new Uint8Array(LOTS).fill(1);
     const chosen = choosePoints(segmentPoints(lots, components, 0), LOTS, () => true, pulls);
-    for (const { z } of allScores(fitSmoothingSpline(chosen.observations, lambda), chosen, pulls)) squares += z * z;
+    for (const { z } of allScores(fitSmoothingSpline(chosen.observations, lambda), chosen)) squares += z * z;
   }
   return Math.sqrt(squares / (RUNS * LOTS));
 }
@@ -82,7 +82,7 @@ describe('standard deviation of the score', () => {
     const pulls = new Uint8Array(400).fill(1);
     const chosen = choosePoints(segmentPoints(lots, wrong, 0), 400, () => true, pulls);
     const lambda = lambdaForPeriod(pointDensity(chosen.observations.t, chosen.observations.weight, PERIOD), PERIOD);
-    const scores = allScores(fitSmoothingSpline(chosen.observations, lambda), chosen, pulls);
+    const scores = allScores(fitSmoothingSpline(chosen.observations, lambda), chosen);
     expect(Math.sqrt(scores.reduce((sum, { z }) => sum + z * z, 0) / 400)).toBeGreaterThan(1.8);
   });
 });

@@ -1,6 +1,6 @@
 import { BaselineError } from '@app/baseline';
 
-import { lotScore, type LotScore } from './lot-score';
+import type { LotScore } from './lot-score';
 import { segmentPoints } from './segment-points';
 import { timelineOf, type LotSet, type Timeline } from './segment-timeline';
 import { fitTwice, LEAST_LOTS, type TwoPassResult } from './two-pass-fit';
@@ -12,7 +12,7 @@ export type SetResult = TwoPassResult | { status: 'ill-posed'; detail: string };
 export interface SegmentFits {
   timeline: Timeline;
   at(set: LotSet): SetResult;
-  /** Score of the lot (index in the segment) in a fitted set; null when its own deletion is ill-posed. */
+  /** Score of the lot (index in the segment) in a fitted set; null when the others do not determine a baseline. */
   score(result: Extract<SetResult, { status: 'fitted' }>, lot: number): LotScore | null;
   /** Baseline at the segment's start by the data up to `endAt`, as deviation from nominal; null when nothing can be fitted. */
   startLevel(endAt: number): number | null;
@@ -56,15 +56,7 @@ export function segmentFits(
 
 function scoreIn(result: Extract<SetResult, { status: 'fitted' }>, lot: number): LotScore | null {
   const place = result.chosen.place[lot];
-  if (place < 0) return null;
-  try {
-    const [deleted] = result.fit.deletedLots(Int32Array.of(place));
-    const score = lotScore(deleted, result.chosen.count);
-    return Number.isFinite(score.z) ? score : null;
-  } catch (error) {
-    if (error instanceof BaselineError) return null;
-    throw error;
-  }
+  return place < 0 ? null : result.scores[place];
 }
 
 function orIllPosed(compute: () => TwoPassResult): SetResult {

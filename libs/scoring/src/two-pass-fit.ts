@@ -6,7 +6,7 @@ import {
   type SmoothingSplineFit,
 } from '@app/baseline';
 
-import { allScores, type LotScore } from './lot-score';
+import { allScores, type LotScore, scoresOf } from './lot-score';
 import { choosePoints, type ChosenPoints, type SegmentPoints } from './segment-points';
 import type { PlanParameters } from './types';
 
@@ -19,8 +19,8 @@ export const LOTS_PER_EDF = 3;
 export interface TwoPassFit {
   chosen: ChosenPoints;
   fit: SmoothingSplineFit;
-  /** By place among the chosen: 1 when the lot pulls the final fit. */
-  pulls: Uint8Array;
+  /** By place among the chosen, against the final fit; null for a lot without which the others do not determine a baseline. */
+  scores: (LotScore | null)[];
   kappa: number;
   lambda: number;
   /** Lots that pull the final fit. */
@@ -63,13 +63,23 @@ export function fitTwice(
   const lambda = lambdaOf(plan, kappa);
   const first = fitSmoothingSpline(observations, lambda);
   const staying = Uint8Array.from(observations.pulls, (v) => v);
-  const scores = allScores(first, chosen, observations.pulls);
+  const scores = allScores(first, chosen);
   for (let place = 0; place < staying.length; place += 1) if (isBeyond(scores[place], plan)) staying[place] = 0;
   const lotCount = countOnes(staying);
   if (lotCount < LEAST_LOTS) return { status: 'too-few-lots', lotCount, kappa };
-  const fit = lotCount === pulling ? first : fitSmoothingSpline({ ...observations, pulls: staying }, lambda);
+  const isFinal = lotCount === pulling;
+  const fit = isFinal ? first : fitSmoothingSpline({ ...observations, pulls: staying }, lambda);
   const isLearning = !(lotCount >= LOTS_PER_EDF * fit.edf);
-  return { status: 'fitted', chosen, fit, pulls: staying, kappa, lambda, lotCount, isLearning };
+  return {
+    status: 'fitted',
+    chosen,
+    fit,
+    scores: isFinal ? scores : scoresOf(fit, chosen),
+    kappa,
+    lambda,
+    lotCount,
+    isLearning,
+  };
 }
 
 /** The score that is compared with the limit. */
