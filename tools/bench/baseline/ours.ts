@@ -27,16 +27,17 @@ export function chooseFitAndScore(obs: Observations): SmoothingSplineFit {
 const OUTPUTS = 8;
 
 /** The floor: reads time, value, weight and lot of each point once, and writes each output once. */
-export function floorOf({ t, y, weight, lot }: Observations): () => number {
-  const n = t.length;
-  const outputs = Array.from({ length: OUTPUTS }, () => new Float64Array(n));
+export function floorOf({ t, y, weight, lot }: Observations, outputs: () => Float64Array[]): () => number {
   return () => {
     let sum = 0;
-    for (let i = 0; i < n; i++) sum += t[i] + y[i] + weight[i] + lot[i];
-    for (const output of outputs) output.set(y);
+    for (let i = 0; i < t.length; i++) sum += t[i] + y[i] + weight[i] + lot[i];
+    for (const output of outputs()) output.set(y);
     return sum;
   };
 }
+
+/** Arrays for the outputs of n points. */
+export const makeOutputs = (n: number) => Array.from({ length: OUTPUTS }, () => new Float64Array(n));
 
 /** What the evaluators of the criterion allocate per candidate. */
 export function allocations(): Promise<AllocationFigures[]> {

@@ -12,6 +12,7 @@ const LABELS: [route: string, label: string][] = [
   ['r-gcv', 'R default knots, GCV'],
   ['r-all-gcv', 'R all.knots, GCV'],
   ['floor', 'floor: read and write once'],
+  ['floor-fresh', 'floor into newly made arrays'],
 ];
 const RATIOS: [above: string, below: string, label: string][] = [
   ['r-fixed', 'ours-fixed', 'R default knots : ours, lambda fixed'],
