@@ -48,6 +48,7 @@ quad() {
 }
 step r-smooth-spline.json Rscript "$here/smooth_spline.R" "$out/r-smooth-spline.json"
 step mgcv-smoothing-spline.json Rscript "$here/mgcv.R" "$out/r-smooth-spline.json" "$out/mgcv-smoothing-spline.json"
+step r-leave-lot-out.json Rscript "$here/leave_lot_out.R" "$out/r-leave-lot-out.json"
 step scipy-smoothing-spline.json "$python" "$here/scipy_spline.py" "$out/r-smooth-spline.json" "$out/scipy-smoothing-spline.json"
 step mpmath-smoothing-spline.json "$python" "$here/mpmath_spline.py" "$out/mpmath-smoothing-spline.json"
 step quad-smoothing-spline.json quad "$out/quad-smoothing-spline.json"
