@@ -16,6 +16,8 @@ SEARCH_TOLERANCE = 1e-4
 # What was searched for: R's choices, all that mgcv answers (its penalty is a search's end).
 SEARCHED_KEYS = ("choices",)
 SEARCHED_FILES = ("mgcv-smoothing-spline.json",)
+# Published values, copied by hand.
+PUBLISHED_FILES = ("strd.json",)
 
 
 def differs(a, b, scale, tolerance):
@@ -42,7 +44,7 @@ def main():
     parser.add_argument("made", type=pathlib.Path)
     args = parser.parse_args()
     failed = False
-    for name in sorted({path.name for folder in (args.committed, args.made) for path in folder.glob("*.json")}):
+    for name in sorted({path.name for folder in (args.committed, args.made) for path in folder.glob("*.json")} - set(PUBLISHED_FILES)):
         committed, made = args.committed / name, args.made / name
         if committed.exists() and made.exists():
             tolerance = SEARCH_TOLERANCE if name in SEARCHED_FILES else TOLERANCE

@@ -44,11 +44,12 @@ step() { # the file, then the command that makes it
 }
 quad() {
   gcc -O2 -ffp-contract=off -o "$work/quad" "$here/quad_spline.c" -lquadmath
-  "$work/quad" 100000 1000 > "$1"
+  "$work/quad" > "$1"
 }
 step r-smooth-spline.json Rscript "$here/smooth_spline.R" "$out/r-smooth-spline.json"
 step mgcv-smoothing-spline.json Rscript "$here/mgcv.R" "$out/r-smooth-spline.json" "$out/mgcv-smoothing-spline.json"
 step r-leave-lot-out.json Rscript "$here/leave_lot_out.R" "$out/r-leave-lot-out.json"
+step r-regression.json Rscript "$here/regression.R" "$out/r-regression.json"
 step scipy-smoothing-spline.json "$python" "$here/scipy_spline.py" "$out/r-smooth-spline.json" "$out/scipy-smoothing-spline.json"
 step mpmath-smoothing-spline.json "$python" "$here/mpmath_spline.py" "$out/mpmath-smoothing-spline.json"
 step quad-smoothing-spline.json quad "$out/quad-smoothing-spline.json"
