@@ -22,3 +22,4 @@ export { fitBSpline, fitConstant, fitNaturalSpline, fitPolynomial, MAX_DEGREE } 
 export { mostKnots, placeKnots, type KnotPlacement, type PlaceKnotsOptions } from './regression/place-knots';
 export type { PolynomialFit, Powers } from './regression/polynomial-fit';
 export { quantileOfSorted } from './regression/quantile';
+export { fitRobust, type FitRobustOptions, type RobustFit } from './robust/fit-robust';
