@@ -3,7 +3,7 @@ import type { PreparedSeries } from '../prepared-series';
 import { dot, solveTransposed } from './banded-least-squares';
 import { PolynomialBasis } from './polynomial-basis';
 import { RegressionFit } from './regression-fit';
-import type { PullingTimes } from './regression-system';
+import { requireDistinct, type PullingTimes } from './regression-system';
 
 /** A polynomial in powers of (t - origin). */
 export interface Powers {
@@ -24,6 +24,7 @@ export class PolynomialFit extends RegressionFit {
     isProjectable: boolean,
   ) {
     const degree = spec.method === 'constant' ? 0 : spec.degree;
+    requireDistinct(times, degree + 1);
     const basis = new PolynomialBasis(degree, times.u, series.pull);
     super(spec, series, times, basis, isProjectable, degree > 0);
     this.polynomials = basis;

@@ -44,6 +44,15 @@ export function pullingTimes(series: PreparedSeries): PullingTimes {
   return { origin, range, u: obs.t.map((t) => (t - origin) / range), distinct };
 }
 
+/** @throws BaselineError 'insufficient-data' when there are fewer distinct times than functions */
+export function requireDistinct({ distinct }: PullingTimes, functions: number): void {
+  if (distinct >= functions) return;
+  throw new BaselineError(
+    'insufficient-data',
+    `Points that pull have ${distinct} distinct times; ${functions} are needed.`,
+  );
+}
+
 /**
  * Fits the points in a basis.
  * @param y values, what is added back taken off
@@ -55,12 +64,7 @@ export function solveRegression(
   basis: Basis,
   y: Float64Array,
 ): RegressionSystem {
-  if (times.distinct < basis.dimension) {
-    throw new BaselineError(
-      'insufficient-data',
-      `Points that pull have ${times.distinct} distinct times; ${basis.dimension} are needed.`,
-    );
-  }
+  requireDistinct(times, basis.dimension);
   const { n } = series;
   const { width } = basis;
   const first = new Int32Array(n);
