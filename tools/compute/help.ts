@@ -32,7 +32,8 @@ OPTIONS  as --name value or --name=value
 ANSWER   arrays have one entry a row, in the order of the rows. null is what cannot be said; warnings say why
   method, smoothness   rule; value (lambda, K or D; with rule edf the E asked for); lambda (null but for the smoothing
                        spline, and for the straight line); edf = tr S; atFloor: the shortest period decided
-  sigma2               RSS / (N - edf), RSS = sum of w (y - g)^2 over the N rows with w > 0
+  sigma2               RSS / (N - edf), RSS = sum of w (y - g)^2 over the N rows with w > 0; with --robust w times the
+                       lot's weight, and N the sum of those weights
   criterion            name, its value, and the curve that was looked at: {lambda | knots | degree, edf, value}
   t, fitted            seconds; g(t)
   standardError        of g(t): sqrt(sigma2) times the posterior standard deviation (smoothing spline: Wahba 1983) or the
