@@ -4,8 +4,8 @@
 usage: mpmath_spline.py OUTPUT.json
 
 Solves (W + lambda Q R^-1 Q') g = W y (Green & Silverman 1994, ch. 2) and inverts it, with the doubles taken as exact numbers. Writes fitted values,
-slopes, posterior standard deviations, leverages, residual of each point from the fit without it, values between and beyond the points with their
-standard deviations (beyond: the fit with a far point of no weight), integral of g''^2, weighted RSS and log-determinants.
+slopes, curvatures, posterior standard deviations, leverages, residual of each point from the fit without it, values between and beyond the points with
+their standard deviations and covariances (the fit with points of no weight there), integral of g''^2, weighted RSS and log-determinants.
 """
 import argparse
 import json
@@ -62,12 +62,27 @@ def reference(t, y, w, lam, extra):
         p = times.index(mpf(x))
         weights, values = w[:p] + [mpf(0)] + w[p:], y[:p] + [mpf(0)] + y[p:]
         ge, ce, gm, _, _ = fit(times, values, weights, lam)
-        at.append({"t": x, "value": float(ge[p]), "slope": float(slopes(times, ge, gm)[p]), "standardError": float(mpmath.sqrt(ce[p, p]))})
+        at.append({"t": x, "value": float(ge[p]), "slope": float(slopes(times, ge, gm)[p]), "curvature": float(gm[p]), "standardError": float(mpmath.sqrt(ce[p, p]))})
+    wanted = extra + [float(t[1])]
+    pairs = [(p, q) for i, p in enumerate(wanted) for q in wanted[:i]]
+    covariance = []
+    for early, late in pairs:
+        times, weights, values = list(t), list(w), list(y)
+        for x in (mpf(early), mpf(late)):
+            if x not in times:
+                p = sum(1 for v in times if v < x)
+                times.insert(p, x)
+                weights.insert(p, mpf(0))
+                values.insert(p, mpf(0))
+        _, ce, _, _, _ = fit(times, values, weights, lam)
+        i, j = times.index(mpf(early)), times.index(mpf(late))
+        covariance.append({"a": early, "b": late, "covariance": float(ce[i, j]), "scale": float(mpmath.sqrt(ce[i, i] * ce[j, j]))})
     rss = sum(w[i] * (y[i] - g[i]) ** 2 for i in range(n))
     return {
         "lambda": float(lam),
         "fitted": [float(v) for v in g],
         "slope": [float(v) for v in slopes(t, g, gamma)],
+        "curvature": [float(v) for v in gamma],
         "standardError": [float(mpmath.sqrt(cov[i, i])) for i in range(n)],
         "leverage": [float(v) for v in s],
         "deletedResidual": [float((y[i] - g[i]) / (1 - s[i])) for i in range(n)],
@@ -78,6 +93,7 @@ def reference(t, y, w, lam, extra):
         "logDetA": float(mpmath.log(mpmath.det(a))),
         "deviance": float(rss + lam * penalty + mpmath.log(mpmath.det(a)) - (n - 2) * mpmath.log(lam)),
         "at": at,
+        "covariance": covariance,
     }
 
 
@@ -90,9 +106,9 @@ def main():
     wave = [float((7 * i * i + 3 * i) % 23) / 8 - 1 + i / 4 for i in range(n)]
     near = [0.0, 1e-5, 1.0, 2.0, 2.00001, 2.00002, 4.0, 5.0, 7.0, 9.0, 9.00001, 10.0]
     cases = {
-        "even": (even, wave, [1.0] * n, [1e-12, 1e-3, 1.0, 1e3, 1e6, 1e12], [-3.0, 0.25, 7.5, 14.9, 20.0]),
+        "even": (even, wave, [1.0] * n, [1e-15, 1e-12, 1e-6, 1e-3, 1.0, 1e3, 1e4, 1e6, 1e12], [-3.0, 0.25, 7.5, 14.9, 20.0]),
         "weights over 18 decades": (even, wave, [10.0 ** ((5 * i) % 19 - 9) for i in range(n)], [1e-6, 1.0, 1e6], [2.5, 17.0]),
-        "gaps of a millionth": (near, wave[: len(near)], [1.0 + (i % 3) for i in range(len(near))], [1e-3, 1.0, 1e4], [0.5, 2.000005, 12.0]),
+        "gaps of a millionth": (near, wave[: len(near)], [1.0 + (i % 3) for i in range(len(near))], [1e-20, 1e-10, 1e-3, 1.0, 1e4], [0.5, 2.000005, 12.0]),
         "epoch seconds": ([1.7e9 + 600 * i + (i * i) % 7 for i in range(n)], [v + 1000 for v in wave], [4.0] * n, [1e6, 1e10, 1e14], [1.7e9 + 1000, 1.7e9 + 20000]),
         "three points": ([0.0, 1.0, 3.0], [1.0, 3.0, 2.0], [1.0, 2.0, 1.0], [0.1, 10.0], [0.5, 4.0]),
         "four points": ([0.0, 1.0, 3.0, 4.0], [1.0, 3.0, 2.0, 2.5], [1.0, 2.0, 1.0, 0.5], [0.1, 10.0], [-1.0, 2.0]),

@@ -18,9 +18,10 @@ export function naiveSpline(obs: Observations, lambda: number, without = -1): Na
   const a = Matrix.mul(k, lambda);
   const b = Matrix.zeros(knots.length, 1);
   for (let i = 0; i < obs.t.length; i++) {
-    if (obs.pulls[obs.lot[i]] === 0 || obs.lot[i] === without) continue;
-    a.set(at[i], at[i], a.get(at[i], at[i]) + obs.weight[i]);
-    b.set(at[i], 0, b.get(at[i], 0) + obs.weight[i] * obs.y[i]);
+    if (obs.lot[i] === without) continue;
+    const weight = obs.weight[i] * obs.pulls[obs.lot[i]];
+    a.set(at[i], at[i], a.get(at[i], at[i]) + weight);
+    b.set(at[i], 0, b.get(at[i], 0) + weight * obs.y[i]);
   }
   const g = solve(a, b);
   const full = inverse(a);
