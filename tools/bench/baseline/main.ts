@@ -1,7 +1,7 @@
 import { cpus } from 'node:os';
 import { parseArgs } from 'node:util';
+import { measureEvaluators } from './evaluators';
 import { measureLots } from './lot-figures';
-import { allocations } from './ours';
 import { allocationLines, lotLines, sizeTables, targetLines } from './report';
 import { measureSize, type SizeFigures } from './size-figures';
 import { judgeTargets } from './targets';
@@ -41,7 +41,7 @@ async function main(): Promise<void> {
     sizes.push(measureSize(n, repeats, found));
   }
   const lots = measureLots(repeats);
-  const allocated = await allocations();
+  const allocated = await measureEvaluators();
   const targets = judgeTargets(sizes);
   const programs = [`Node ${process.versions.node}`, ...found.map(({ name, program }) => program ?? name)];
   if (values.json) {

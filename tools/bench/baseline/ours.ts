@@ -1,5 +1,10 @@
-import type { AllocationFigures } from './allocation';
-import { chooseLambda, fitSmoothingSpline, type Observations, type SmoothingSplineFit } from '@app/baseline';
+import {
+  chooseBaseline,
+  fitSmoothingSpline,
+  type LotScores,
+  type Observations,
+  type SmoothingSplineFit,
+} from '@app/baseline';
 
 /** The fixed penalty: that of a drift period of this share of the window (half the amplitude of such a wave passes; Silverman 1984). */
 export const PERIOD_SHARE = 1 / 8;
@@ -11,16 +16,20 @@ export function fixedLambda({ t, weight }: Observations): number {
   return ((range * PERIOD_SHARE) / (2 * Math.PI)) ** 4 * (total / range);
 }
 
+export interface ScoredFit {
+  fit: SmoothingSplineFit;
+  scores: LotScores;
+}
+
 /** The exact fit with leverages and bands, and every lot against the fit without it. */
-export function fitAndScore(obs: Observations, lambda: number): SmoothingSplineFit {
+export function fitAndScore(obs: Observations, lambda: number): ScoredFit {
   const fit = fitSmoothingSpline(obs, lambda);
-  fit.deletedLots();
-  return fit;
+  return { fit, scores: fit.scoreLots() };
 }
 
 /** The same with lambda chosen by generalised cross-validation. */
-export function chooseFitAndScore(obs: Observations): SmoothingSplineFit {
-  return fitAndScore(obs, chooseLambda(obs, { rule: 'gcv', floorLambda: 0 }).lambda);
+export function chooseFitAndScore(obs: Observations): ScoredFit {
+  return fitAndScore(obs, chooseBaseline(obs, { method: 'smoothing-spline', rule: 'gcv' }).smoothness);
 }
 
 /** Arrays of one double a point that a scored fit answers with: value, slope, curvature, standard error, leverage, deleted residual; by lot residual and variance. */
@@ -38,8 +47,3 @@ export function floorOf({ t, y, weight, lot }: Observations, outputs: () => Floa
 
 /** Arrays for the outputs of n points. */
 export const makeOutputs = (n: number) => Array.from({ length: OUTPUTS }, () => new Float64Array(n));
-
-/** What the evaluators of the criterion allocate per candidate. */
-export function allocations(): Promise<AllocationFigures[]> {
-  return Promise.resolve([]);
-}

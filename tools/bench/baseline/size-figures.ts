@@ -50,8 +50,8 @@ function ours(series: Observations, lambda: number, repeats: number, routes: Rec
   };
   for (const [name, run] of Object.entries(runs)) {
     const timing = measure(repeats, run);
-    routes[name] = { seconds: timing.seconds, median: timing.median, edf: timing.last.edf };
-    fitted[name] = timing.last.fitted;
+    routes[name] = { seconds: timing.seconds, median: timing.median, edf: timing.last.fit.edf };
+    fitted[name] = timing.last.fit.fitted;
   }
   return fitted;
 }
