@@ -2,9 +2,9 @@ import { BandedLeastSquares, dot, solveTransposed, solveUpper } from './banded-l
 import { addPoints, undetermined, type RegressionSystem } from './regression-system';
 
 /** Below this share of A's diagonal a pivot of A - X_I' V W X_I has lost too many digits, and the other points are fitted anew. */
-const SAFE_PIVOT = 1e-5;
+const SAFE_PIVOT = 1e-3;
 /** So have they where the weight of a point times the variance of the others' baseline there, h / (1 - h) for a single one, is above this. */
-const SAFE_VARIANCE = 1e5;
+const SAFE_VARIANCE = 1e3;
 /** Lots whose leverages sum to less than this are too light for either. */
 const LIGHT = 0.5;
 
