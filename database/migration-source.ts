@@ -5,6 +5,7 @@ import * as intakesAndReadings from './migrations/20261201090200_create_intakes_
 import * as plansAndVerdicts from './migrations/20261201090300_create_plans_and_verdicts';
 import * as holdsAndDecisions from './migrations/20261201090400_create_holds_and_decisions';
 import * as outboxAndAudit from './migrations/20261201090500_create_outbox_and_audit';
+import * as robustPlans from './migrations/20261201131000_add_robust_to_plan_revisions';
 
 /** Every migration by name, oldest first. They are listed here, not read from a folder, so that they go into the bundle. */
 const MIGRATIONS: Record<string, Knex.Migration> = {
@@ -14,6 +15,7 @@ const MIGRATIONS: Record<string, Knex.Migration> = {
   '20261201090300_create_plans_and_verdicts': plansAndVerdicts,
   '20261201090400_create_holds_and_decisions': holdsAndDecisions,
   '20261201090500_create_outbox_and_audit': outboxAndAudit,
+  '20261201131000_add_robust_to_plan_revisions': robustPlans,
 };
 
 export const migrationNames = Object.keys(MIGRATIONS);

@@ -68,6 +68,7 @@ describe('plans and breaks', () => {
       method: 'smoothing_spline',
       shortestPeriodSeconds: 3 * 86_400,
       limit: 3,
+      isRobust: false,
     });
     expectProblem(await post(`channels/${channelId}/plans`, as.engineer2, { reason: 'Another.' }), 409, 'plan-pending');
     expect(await plan(id, as.manager)).toMatchObject({ mayApprove: true, whyNot: null });
@@ -94,13 +95,15 @@ describe('plans and breaks', () => {
   });
 
   it('cannot be approved by who proposed them', async () => {
-    const { body } = await post(`channels/${channelId}/plans`, as.manager, { reason: 'With more readings.' }).expect(
-      202,
-    );
-    await until(
+    const { body } = await post(`channels/${channelId}/plans`, as.manager, {
+      reason: 'With more readings.',
+      isRobust: true,
+    }).expect(202);
+    const proposed = await until(
       () => plan((body as PlanView).id),
       (seen) => seen.state === 'proposed',
     );
+    expect(proposed.parameters?.isRobust).toBe(true);
     expectProblem(await post(`plans/${body.id}/approval`, as.manager, { password: PASSWORD }), 403, 'own-proposal');
   });
 
@@ -135,6 +138,8 @@ describe('plans and breaks', () => {
     expect((await post(`channels/${channelId}/plans`, as.engineer, { reason: ' ' })).body.errors[0].pointer).toBe(
       '/reason',
     );
+    const unclear = await post(`channels/${channelId}/plans`, as.engineer, { reason: 'x', isRobust: 'perhaps' });
+    expect(unclear.body.errors[0].pointer).toBe('/isRobust');
     expectProblem(await post(`plans/${id}/approval`, as.stranger, { password: PASSWORD }), 404, 'not-found');
     expect((await app.http.post(`/api/plans/${id}/approval`).send({ password: PASSWORD })).status).toBe(401);
   });

@@ -30,6 +30,7 @@ describe('plan revisions', () => {
         plantId: place.plant.id,
         channelId,
         reason: 'new gauge',
+        isRobust: true,
         draftedBy: place.plant.people.engineer.id,
         draftedAt: AT,
       }),
@@ -53,6 +54,7 @@ describe('plan revisions', () => {
       revision: 2,
       state: 'draft',
       reason: 'new gauge',
+      isRobust: true,
       parameters: null,
     });
     await propose(id);

@@ -14,6 +14,7 @@ export interface PlanRow {
   revision: number;
   state: PlanState;
   reason: string;
+  isRobust: boolean;
   parameters: PlanParameters | null;
   report: (PlanReport & { leftOutLots: string[] }) | null;
   failure: string | null;
@@ -27,7 +28,7 @@ export interface PlanRow {
 
 const SELECT = `
   select p.id, p.plant_id as "plantId", p.channel_id as "channelId", c.name as "channelName", l.id as "lineId", l.name as "lineName",
-    x.unit, x.resolution, p.revision, p.state, p.reason, p.parameters, p.report, p.failure, p.drafted_by as "draftedBy",
+    x.unit, x.resolution, p.revision, p.state, p.reason, p.is_robust as "isRobust", p.parameters, p.report, p.failure, p.drafted_by as "draftedBy",
     p.proposed_by as "proposedBy", b.name as "proposedByName", p.proposed_at as "proposedAt", a.name as "approvedByName", p.approved_at as "approvedAt"
   from plan_revisions p join channels c on c.id = p.channel_id join lines l on l.id = c.line_id join characteristics x on x.id = c.characteristic_id
   left join people b on b.id = p.proposed_by left join people a on a.id = p.approved_by`;
@@ -43,12 +44,12 @@ export async function listPlans(db: Queryable, channelId: number): Promise<PlanR
 /** A new draft, still to be worked out. One may be pending at a time. */
 export async function insertPlanDraft(
   tx: Transaction,
-  draft: { plantId: number; channelId: number; reason: string; draftedBy: number; draftedAt: Date },
+  draft: { plantId: number; channelId: number; reason: string; isRobust: boolean; draftedBy: number; draftedAt: Date },
 ): Promise<number> {
   const [row] = await rows<{ id: number }>(
     tx,
-    `insert into plan_revisions (plant_id, channel_id, revision, state, reason, drafted_by, drafted_at)
-     select :plantId, :channelId, coalesce(max(revision), 0) + 1, 'draft', :reason, :draftedBy, :draftedAt
+    `insert into plan_revisions (plant_id, channel_id, revision, state, reason, is_robust, drafted_by, drafted_at)
+     select :plantId, :channelId, coalesce(max(revision), 0) + 1, 'draft', :reason, :isRobust, :draftedBy, :draftedAt
      from plan_revisions where channel_id = :channelId returning id`,
     draft,
   );

@@ -14,6 +14,8 @@ export interface PlanInput {
   tolerance?: number | null;
   /** Lots of the reference period; default all that pull and end within the window before the newest. */
   referenceLotIds?: number[];
+  /** Whether outlying lots are reweighted (see `PlanParameters.isRobust`); default no. */
+  isRobust?: boolean;
   /** Nominal for lots without a specification; default the median of their means, else the median of the nominals. */
   fallbackNominal?: number;
 }

@@ -61,7 +61,8 @@ export function proposePlan(input: PlanInput): PlanProposal {
   const chart = individualsChart(deviations);
   if (chart.status !== 'computed') return insufficient('constant_data', 'The lot means do not vary.');
 
-  const scores = tried(() => referenceScores(usable, period, windowSeconds, fallbackNominal));
+  const isRobust = input.isRobust ?? false;
+  const scores = tried(() => referenceScores(usable, period, windowSeconds, fallbackNominal, isRobust));
   if (scores instanceof BaselineError) return insufficient('ill_posed', scores.message);
   if (scores === null || !(scores.scale > 0)) return insufficient('constant_data', 'The scores do not vary.');
   const staying = usable.filter((_, j) => !scores.isLeftOut[j]);
@@ -74,6 +75,7 @@ export function proposePlan(input: PlanInput): PlanProposal {
     shortestPeriodSeconds: period,
     effectivePeriodSeconds: scores.effectivePeriodSeconds,
     windowSeconds,
+    isRobust,
     components: scores.estimate.components,
     centre: scores.centre,
     scale: scores.scale,

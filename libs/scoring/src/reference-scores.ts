@@ -1,8 +1,9 @@
-import { chooseLambda, effectivePeriod, fitSmoothingSpline, lambdaForPeriod, pointDensity } from '@app/baseline';
-import type { ChosenLambda, Observations, SmoothingSplineFit } from '@app/baseline';
+import { chooseLambda, effectivePeriod, lambdaForPeriod, pointDensity } from '@app/baseline';
+import type { BaselineFit, ChosenLambda, Observations } from '@app/baseline';
 import { robustScale, sampleMoments } from '@app/control';
 
 import { allScores } from './lot-score';
+import { planBaseline } from './plan-baseline';
 import { choosePoints, segmentPoints } from './segment-points';
 import type { LotOnChannel } from './types';
 import { varianceComponents, type ComponentsEstimate } from './variance-components';
@@ -20,7 +21,7 @@ export interface ReferenceScores {
   effectivePeriodSeconds: number;
   choice: ChosenLambda;
   isCappedByWindow: boolean;
-  fit: SmoothingSplineFit;
+  fit: BaselineFit;
   observations: Observations;
   count: Float64Array;
   /** Per lot, in the order of the lots. */
@@ -37,6 +38,7 @@ export interface ReferenceScores {
  * single lots, not below the floor of T and not above that of the window: slower than that a month of lots cannot tell.
  *
  * @param lots usable lots in time order
+ * @param isRobust whether the plan reweights outlying lots; the scores are then against that baseline
  * @throws BaselineError when nothing can be fitted
  */
 export function referenceScores(
@@ -44,6 +46,7 @@ export function referenceScores(
   shortestPeriodSeconds: number,
   windowSeconds: number,
   fallbackNominal: number,
+  isRobust: boolean,
 ): ReferenceScores | null {
   let isLeftOut: boolean[] = lots.map(() => false);
   for (let pass = 1; ; pass += 1) {
@@ -59,7 +62,7 @@ export function referenceScores(
       pulls,
     );
     const smoothness = chooseSmoothness(chosen.observations, shortestPeriodSeconds, windowSeconds);
-    const fit = fitSmoothingSpline(chosen.observations, smoothness.lambda);
+    const { fit } = planBaseline(chosen, smoothness.lambda, { isRobust });
     const z = new Array<number>(lots.length);
     allScores(fit, chosen).forEach((score, place) => (z[chosen.lots[place]] = score.z));
     const { median, scale: spread } = robustScale(z.filter((_, j) => !isLeftOut[j]));

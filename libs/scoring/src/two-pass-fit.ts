@@ -1,12 +1,7 @@
-import {
-  fitSmoothingSpline,
-  lambdaForPeriod,
-  pointDensity,
-  type Observations,
-  type SmoothingSplineFit,
-} from '@app/baseline';
+import { type BaselineFit, fitSmoothingSpline, lambdaForPeriod, type Observations, pointDensity } from '@app/baseline';
 
 import { allScores, type LotScore, scoresOf } from './lot-score';
+import { planBaseline } from './plan-baseline';
 import { choosePoints, type ChosenPoints, type SegmentPoints } from './segment-points';
 import type { PlanParameters } from './types';
 
@@ -18,7 +13,7 @@ export const LOTS_PER_EDF = 3;
 /** The baseline of one set of lots, after those beyond their limits have left it. */
 export interface TwoPassFit {
   chosen: ChosenPoints;
-  fit: SmoothingSplineFit;
+  fit: BaselineFit;
   /** By place among the chosen, against the final fit; null for a lot without which the others do not determine a baseline. */
   scores: (LotScore | null)[];
   kappa: number;
@@ -44,7 +39,7 @@ export function lambdaOf(
 
 /**
  * Fits the chosen lots, takes those beyond their limits out of the fit that judges their neighbours, and fits once more with
- * the same κ and λ; the minima are counted after that.
+ * the same κ, λ and, where the plan reweights lots, factors; the minima are counted after that.
  */
 export function fitTwice(
   points: SegmentPoints,
@@ -56,18 +51,21 @@ export function fitTwice(
   const { observations } = chosen;
   const kappa =
     chosen.lots.length > 0 ? pointDensity(observations.t, observations.weight, plan.shortestPeriodSeconds) : 0;
-  const pulling = countOnes(observations.pulls);
+  const pulling = countPulling(observations.pulls);
   if (pulling < LEAST_LOTS) return { status: 'too-few-lots', lotCount: pulling, kappa };
   if (observations.y.every((value) => value === observations.y[0]))
     return { status: 'constant', lotCount: pulling, kappa };
   const lambda = lambdaOf(plan, kappa);
-  const first = fitSmoothingSpline(observations, lambda);
-  const staying = Uint8Array.from(observations.pulls, (v) => v);
+  const { fit: first, pulls: staying } = planBaseline(chosen, lambda, plan);
   const scores = allScores(first, chosen);
-  for (let place = 0; place < staying.length; place += 1) if (isBeyond(scores[place], plan)) staying[place] = 0;
-  const lotCount = countOnes(staying);
+  let isFinal = true;
+  scores.forEach((score, place) => {
+    if (staying[place] === 0 || !isBeyond(score, plan)) return;
+    staying[place] = 0;
+    isFinal = false;
+  });
+  const lotCount = countPulling(staying);
   if (lotCount < LEAST_LOTS) return { status: 'too-few-lots', lotCount, kappa };
-  const isFinal = lotCount === pulling;
   const fit = isFinal ? first : fitSmoothingSpline({ ...observations, pulls: staying }, lambda);
   const isLearning = !(lotCount >= LOTS_PER_EDF * fit.edf);
   return {
@@ -89,8 +87,8 @@ export const standardised = (score: LotScore, plan: PlanParameters): number => (
 export const isBeyond = (score: LotScore, plan: PlanParameters): boolean =>
   !(Math.abs(standardised(score, plan)) <= plan.limit);
 
-function countOnes(flags: Observations['pulls']): number {
-  let ones = 0;
-  for (const flag of flags) ones += flag;
-  return ones;
+function countPulling(pulls: Observations['pulls']): number {
+  let count = 0;
+  for (const pull of pulls) if (pull > 0) count += 1;
+  return count;
 }

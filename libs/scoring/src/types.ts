@@ -67,6 +67,8 @@ export interface PlanParameters {
   /** T_eff, s: lambda = kappa (T_eff / 2 pi)^4 at each intake. */
   effectivePeriodSeconds: number;
   windowSeconds: number;
+  /** Lots pull by bisquare weights of their scores; absent in plans from before there was the choice, which means no. */
+  isRobust?: boolean;
   components: VarianceComponents;
   /** Centre and scale of the reference lots' scores. */
   centre: number;

@@ -62,7 +62,7 @@ export class Stage {
   }
 
   async approvePlan(proposer: Person, approver: Person, channelId: number, reason: string): Promise<void> {
-    const draft = await this.plans.propose(proposer, channelId, reason);
+    const draft = await this.plans.propose(proposer, channelId, { reason, isRobust: false });
     await this.until(`plan ${draft.id} is proposed`, async () => {
       const plan = await findPlan(this.database, draft.id);
       if (plan?.failure) throw new Error(`no plan for ${plan.channelName} on ${plan.lineName}: ${plan.failure}`);

@@ -27,6 +27,7 @@ export function planView(plan: PlanRow, person: { id: number; roles: Role[] }): 
       shortestPeriodSeconds: parameters.shortestPeriodSeconds,
       effectivePeriodSeconds: parameters.effectivePeriodSeconds,
       windowSeconds: parameters.windowSeconds,
+      isRobust: parameters.isRobust ?? false,
       betweenLotsSd: Math.sqrt(parameters.components.betweenLots),
       betweenPointsSd: Math.sqrt(parameters.components.betweenPoints),
       betweenReadingsSd: Math.sqrt(parameters.components.betweenReadings),

@@ -31,7 +31,7 @@ export class PlansController {
     @Param('id', IdPipe) channelId: number,
     @Body() body: ProposePlanDto,
   ): Promise<PlanView> {
-    return this.plans.propose(person, channelId, body.reason);
+    return this.plans.propose(person, channelId, { reason: body.reason, isRobust: body.isRobust ?? false });
   }
 
   @Get('plans/:id')

@@ -42,7 +42,11 @@ export class PlansService {
   }
 
   /** Writes a draft and owes its working out; the worker proposes it in this person's name. */
-  async propose(person: Person, channelId: number, reason: string): Promise<PlanView> {
+  async propose(
+    person: Person,
+    channelId: number,
+    { reason, isRobust }: { reason: string; isRobust: boolean },
+  ): Promise<PlanView> {
     const found = await findChannelPlace(this.database, channelId);
     const { thing: channel, roles } = await this.access.requireThing(person.id, found, 'propose_plan');
     const at = this.clock.now();
@@ -57,6 +61,7 @@ export class PlansService {
           plantId: channel.plantId,
           channelId,
           reason,
+          isRobust,
           draftedBy: person.id,
           draftedAt: at,
         });
@@ -67,8 +72,8 @@ export class PlansService {
           action: 'draft',
           thingKind: 'plan',
           thingId: planId,
-          sentence: `${person.name} asked for a default plan for ${channel.name} on ${channel.lineName}: ${reason}`,
-          after: { state: 'draft' },
+          sentence: `${person.name} asked for a default plan${isRobust ? ', with outlying lots reweighted,' : ''} for ${channel.name} on ${channel.lineName}: ${reason}`,
+          after: { state: 'draft', isRobust },
         });
         const owedJobId = await insertOwedJob(tx, {
           plantId: channel.plantId,

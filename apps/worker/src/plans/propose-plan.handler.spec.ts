@@ -21,6 +21,7 @@ describe('working out a plan', () => {
         plantId: plant.id,
         channelId,
         reason: 'first plan',
+        isRobust: false,
         draftedBy: plant.people.engineer.id,
         draftedAt: bench.clock.now(),
       }),

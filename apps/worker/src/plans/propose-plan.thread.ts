@@ -37,6 +37,7 @@ export default async function propose(task: ProposePlanTask): Promise<ProposePla
       shortestPeriodSeconds,
       windowSeconds: WINDOW_SECONDS,
       tolerance: inputs.tolerance,
+      isRobust: plan.isRobust,
     });
     if (proposal.status === 'insufficient') return { status: 'insufficient', sentence: proposal.detail };
     const leftOutLots = proposal.report.leftOutLotIds.map((id) => inputs.lotNumbers.get(id) ?? String(id));

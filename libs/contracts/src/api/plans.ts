@@ -26,6 +26,8 @@ export interface PlanView {
     shortestPeriodSeconds: number;
     effectivePeriodSeconds: number;
     windowSeconds: number;
+    /** Outlying lots pull the baseline less (bisquare weights). */
+    isRobust: boolean;
     betweenLotsSd: number;
     betweenPointsSd: number;
     betweenReadingsSd: number;

@@ -1,6 +1,6 @@
-import { ApiProperty } from '@nestjs/swagger';
+import { ApiProperty, ApiPropertyOptional } from '@nestjs/swagger';
 import { Transform } from 'class-transformer';
-import { IsNotEmpty, IsString, MaxLength } from 'class-validator';
+import { IsBoolean, IsNotEmpty, IsOptional, IsString, MaxLength } from 'class-validator';
 
 export class ProposePlanDto {
   @ApiProperty()
@@ -9,6 +9,14 @@ export class ProposePlanDto {
   @IsNotEmpty({ message: 'Say why a plan is proposed: the reason stands on the record.' })
   @MaxLength(500)
   reason!: string;
+
+  @ApiPropertyOptional({
+    description: 'Whether outlying lots pull the baseline less (bisquare weights).',
+    default: false,
+  })
+  @IsOptional()
+  @IsBoolean()
+  isRobust?: boolean;
 }
 
 export class ApprovePlanDto {

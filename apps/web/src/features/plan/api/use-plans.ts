@@ -28,7 +28,8 @@ export function usePlans(channelId: number) {
 export function useProposeDefault(channelId: number) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (body: { reason: string }) => apiSend<PlanView>('POST', `/channels/${channelId}/plans`, body),
+    mutationFn: (body: { reason: string; isRobust: boolean }) =>
+      apiSend<PlanView>('POST', `/channels/${channelId}/plans`, body),
     onSuccess: () => client.invalidateQueries({ queryKey: channelKeys.channel(channelId) }),
   });
 }

@@ -20,6 +20,7 @@ const plan = (revision: number, state: PlanState): PlanView => ({
   reason: '',
   parameters: {
     method: 'smoothing_spline',
+    isRobust: false,
     shortestPeriodSeconds: 3 * 86_400,
     effectivePeriodSeconds: 30 * 3_600,
     windowSeconds: 30 * 86_400,

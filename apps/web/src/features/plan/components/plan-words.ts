@@ -45,6 +45,7 @@ export const PARAMETER_ROWS: readonly ParameterRow[] = [
   row('Effective period', 'How smooth the baseline is: frozen with the plan.', (p) =>
     spanText(p.effectivePeriodSeconds),
   ),
+  row('Outlying lots', 'How much they pull the baseline.', (p) => (p.isRobust ? 'reweighted' : 'as all others')),
   row('Window', 'How far back readings count, at most to the last break.', (p) => spanText(p.windowSeconds)),
   row('SD between lots', 'How lots differ that the slow movement does not move.', (p, plan) =>
     sd(p.betweenLotsSd, plan),

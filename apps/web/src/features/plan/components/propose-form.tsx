@@ -7,14 +7,14 @@ import { useProposeDefault } from '../api/use-plans';
 /** Has the default plan worked out from the channel's own readings and proposed under the person's name. */
 export function ProposeForm({ channelId }: { channelId: number }) {
   const propose = useProposeDefault(channelId);
-  const form = useForm({ defaultValues: { reason: '' } });
+  const form = useForm({ defaultValues: { reason: '', isRobust: false } });
   const { errors, isSubmitting } = form.formState;
-  const send = form.handleSubmit(async ({ reason }) => {
+  const send = form.handleSubmit(async ({ reason, isRobust }) => {
     try {
-      await propose.mutateAsync({ reason: reason.trim() });
+      await propose.mutateAsync({ reason: reason.trim(), isRobust });
       form.reset();
     } catch (error) {
-      showProblem(form, ['reason'], error);
+      showProblem(form, ['reason', 'isRobust'], error);
     }
   });
   return (
@@ -35,6 +35,13 @@ export function ProposeForm({ channelId }: { channelId: number }) {
           />
         )}
       </Field>
+      <label className="choice">
+        <input type="checkbox" {...form.register('isRobust')} />
+        <span>
+          Let outlying lots pull the baseline less. Each lot is weighted by its distance from the baseline fitted
+          without it; for channels where bad lots are frequent.
+        </span>
+      </label>
       {errors.root?.message !== undefined && (
         <p className="form__error" role="alert">
           {errors.root.message}
