@@ -12,6 +12,8 @@ async function main() {
   checkNode(root);
   if (!existsSync(path.join(root, 'node_modules', 'csv-parse')))
     throw new Failure('The packages are not installed: run npm ci first.', { exitCode: 2 });
+  // webpack and its rules look for packages from where they are started.
+  process.chdir(root);
   const { bundleCommand } = await import('./support/command-bundle.mjs');
   const dist = path.resolve(root, process.env.EBBLINE_DIST || 'dist');
   createRequire(import.meta.url)(

@@ -13,9 +13,10 @@ SERIES   comma-separated, with a header that names the columns in any order; a p
 
 OPTIONS  as --name value or --name=value
   --method M           smoothing-spline (default), natural-spline, b-spline, polynomial, constant
-  --choose C           choose the smoothness by lot-cv (default), gcv, gcv14 or reml (smoothing-spline only)
+  --choose C           choose the smoothness by lot-cv (default), gcv, gcv14 or reml (smoothing-spline only), among all
+                       penalties, 0 to 40 knots, degrees 1 to 4; of several minima the smallest
   --one-standard-error the smoothest whose lot-cv lies within one standard error of the smallest
-  --edf E              the smoothness that has E effective degrees of freedom
+  --edf E              the smoothness that has E effective degrees of freedom (whole numbers but for smoothing-spline)
   --lambda L           the penalty, > 0; inf is the straight line (smoothing-spline)
   --knots K            number of interior knots (natural-spline, b-spline)
   --degree D           1 to 5 (polynomial)

@@ -25,7 +25,6 @@ async function bundle(root, entry, outputFolder, banner) {
   const config = require(path.join(root, 'webpack.config.cjs'));
   const compiler = webpack({
     ...config,
-    context: root,
     entry: { bundle: entry },
     output: { ...config.output, path: outputFolder, filename: '[name].js' },
     plugins: [new webpack.BannerPlugin({ banner, raw: true })],

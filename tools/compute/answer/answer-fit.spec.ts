@@ -128,6 +128,21 @@ describe('the answer to a fit', () => {
     expect(answer.warnings.join()).toContain('passes through every row');
   });
 
+  it('gives no scores where the residuals are only rounding', async () => {
+    const answer = await fit(['--edf', '3'], csvOf({ ...wave, y: rows.map((i) => 0.1 + 0.3 * i) }));
+    for (const { score } of answer.lots) expect(score).toBeNull();
+    expect(answer.sigma2).toBeLessThan(1e-25);
+    expect(answer.warnings).toEqual(['The rows lie on the baseline but for rounding: scores are null']);
+  });
+
+  it('warns of a shortest period that is short against the spacing of the lots', async () => {
+    const warnings = async (period: number) =>
+      (await fit(['--edf', '3', '--shortest-period', `${period}`], csvOf(wave))).warnings;
+    expect(await warnings(2400 * 11)).toEqual([
+      '--shortest-period 26400 is 11 times the median spacing of lots: below 22 a baseline follows single lots',
+    ]);
+  });
+
   it('warns of few lots for many degrees of freedom', async () => {
     const answer = await fit(['--edf', '6'], csvOf(wave));
     expect(answer.warnings.join()).toContain('12 lots are few for 6 effective degrees of freedom');

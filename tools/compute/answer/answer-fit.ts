@@ -6,10 +6,11 @@ import { arrange } from '../series/arranged';
 import type { Series } from '../series/series';
 import type { Answer } from './answer';
 import { deletedResiduals } from './deleted-residuals';
-import { fitWarnings, timeWarnings } from './fit-warnings';
+import { fitWarnings, timeWarnings, varianceWarnings } from './fit-warnings';
 import { lotAnswers } from './lot-answers';
 import { project, projectionTimes } from './projection';
-import { residualVariance } from './residual-variance';
+import { spacingWarnings } from './spacing-warnings';
+import { isRounding, residualVariance } from './residual-variance';
 
 /** Fits a series as the options ask. @throws InputError, BaselineError */
 export function answerFit(series: Series, options: FitOptions): Answer {
@@ -18,6 +19,7 @@ export function answerFit(series: Series, options: FitOptions): Answer {
   const decided = decideSmoothness(arranged, weighingRows(arranged), options);
   const { fit, series: pulled, factor, warnings } = fitDecided(arranged, decided.spec, options.isRobust);
   const sigma2 = residualVariance(pulled, fit);
+  const isExact = isRounding(pulled, fit);
   const scores = fit.scoreLots();
   const deleted = deletedResiduals(pulled, fit, scores);
   const inRows = (values: Float64Array, factor = 1) => {
@@ -42,13 +44,15 @@ export function answerFit(series: Series, options: FitOptions): Answer {
     standardError: inRows(fit.standardError, Math.sqrt(sigma2)),
     leverage: inRows(fit.leverage),
     deletedResidual: inRows(deleted),
-    lots: lotAnswers(arranged, scores, deleted, { sigma2, factor }),
+    lots: lotAnswers(arranged, scores, deleted, { sigma2, factor, isRounding: isExact }),
     projection: project(fit, times.t, sigma2, options),
     warnings: [
       ...timeWarnings(series, times.isZoneless),
       ...decided.warnings,
       ...warnings,
-      ...fitWarnings(arranged, fit, scores, sigma2),
+      ...fitWarnings(arranged, fit, scores),
+      ...varianceWarnings(sigma2, isExact),
+      ...spacingWarnings(arranged, options),
     ],
   };
 }

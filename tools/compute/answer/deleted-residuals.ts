@@ -17,7 +17,11 @@ export function deletedResiduals(series: ArrangedSeries, fit: BaselineFit, score
     const home = homeLot[i];
     if (home < 0) continue;
     if (isUndetermined[home]) deleted[i] = NaN;
-    else if (obs.lot[i] !== home) idleOf.set(home, [...(idleOf.get(home) ?? []), i]);
+    else if (obs.lot[i] !== home) {
+      const idle = idleOf.get(home);
+      if (idle) idle.push(i);
+      else idleOf.set(home, [i]);
+    }
   }
   if (idleOf.size === 0) return deleted;
   for (let i = 0; i < deleted.length; i++) {

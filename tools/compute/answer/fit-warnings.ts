@@ -8,7 +8,7 @@ const FEWEST_LOTS = 8;
 const LOTS_PER_DEGREE = 3;
 
 /** What should be known about the times and about the fit as it came out. */
-export function fitWarnings(series: ArrangedSeries, fit: BaselineFit, scores: LotScores, sigma2: number): string[] {
+export function fitWarnings(series: ArrangedSeries, fit: BaselineFit, scores: LotScores): string[] {
   const warnings: string[] = [];
   const { homeCount, lotNames } = series;
   const pullingLots = new Set(series.obs.lot.filter((lot) => lot < homeCount)).size;
@@ -23,11 +23,13 @@ export function fitWarnings(series: ArrangedSeries, fit: BaselineFit, scores: Lo
     warnings.push(
       `Without ${lotWords(series, undetermined)} the others determine no baseline: deletedResidual is null there`,
     );
-  if (Number.isNaN(sigma2))
-    warnings.push(
-      'The baseline passes through every row: sigma2, standardError and whatever is made from them are null',
-    );
   return warnings;
+}
+
+export function varianceWarnings(sigma2: number, isRounding: boolean): string[] {
+  if (Number.isNaN(sigma2))
+    return ['The baseline passes through every row: sigma2, standardError and whatever is made from them are null'];
+  return isRounding ? ['The rows lie on the baseline but for rounding: scores are null'] : [];
 }
 
 export function timeWarnings({ zonelessCount }: Series, isProjectionZoneless: boolean): string[] {

@@ -6,13 +6,13 @@ const orNull = (value: number): number | null => (Number.isFinite(value) ? value
 
 /**
  * The named lots: residual r = mean of the deleted residuals of the rows that weigh, each counting once; variance = sigma^2 a' Cov a;
- * score = r / sqrt(variance). A lot whose rows all weigh nothing has the mean of its rows' residuals and no variance.
+ * score = r / sqrt(variance), null where the residuals are only rounding. A lot whose rows all weigh nothing has the mean of its rows' residuals and no variance.
  */
 export function lotAnswers(
   series: ArrangedSeries,
   scores: LotScores,
   deleted: Float64Array,
-  { sigma2, factor }: { sigma2: number; factor?: Float64Array },
+  { sigma2, factor, isRounding }: { sigma2: number; factor?: Float64Array; isRounding: boolean },
 ): LotAnswer[] {
   const { obs, homeLot, lotNames } = series;
   const sum = new Float64Array(lotNames.length);
@@ -29,7 +29,7 @@ export function lotAnswers(
     if (isUndetermined.has(j)) return { lot, residual: null, variance: null, score: null, ...weight };
     const residual = weighing[j] > 0 ? scores.residual[j] : sum[j] / count[j];
     const variance = weighing[j] > 0 ? sigma2 * scores.variance[j] : NaN;
-    const score = variance > 0 ? residual / Math.sqrt(variance) : NaN;
+    const score = variance > 0 && !isRounding ? residual / Math.sqrt(variance) : NaN;
     return { lot, residual: orNull(residual), variance: orNull(variance), score: orNull(score), ...weight };
   });
 }
