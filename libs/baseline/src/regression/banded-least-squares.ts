@@ -7,8 +7,8 @@ export const RANK_TOLERANCE = 1e-10;
  * Weighted linear least squares, row by row: minimises  sum_i (s_i (y_i - x_i' beta))^2  where each row x_i has at most `width` numbers, side by side.
  *
  * Every row is rotated into an upper triangular R of half bandwidth `width` by Givens rotations, so that the errors grow with cond(X) and not, as
- * with normal equations, with its square; Q is not kept. Rows in the order of their first column cost O(width^2) each (Reid 1967; Cox 1981, IMA J.
- * Numer. Anal. 1:299 for splines); any other order is right too, only slower. With width = dimension it is dense least squares.
+ * with normal equations, with its square; Q is not kept. Rows in the order of their first column cost O(width^2) each (Cox 1981, IMA J.
+ * Numer. Anal. 1:3); any other order is right too, only slower. With width = dimension it is dense least squares.
  * @example
  * const system = new BandedLeastSquares(2, 2); // a line
  * for (let i = 0; i < n; i++) system.add(0, Float64Array.of(1, x[i]), 0, 1, y[i]);

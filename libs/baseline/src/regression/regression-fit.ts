@@ -206,9 +206,9 @@ export class RegressionFit implements BaselineFit {
 
   private innerBreaks(): number[] {
     const { obs, n } = this.system.series;
-    const { origin, range, basis } = this.system;
-    const knots = 'knots' in this.spec && this.spec.knots.length > 0 ? [...this.spec.knots] : [];
-    const ends = basis.breaks.length > knots.length ? [origin, ...knots, origin + range] : knots;
+    const { origin, end, basis } = this.system;
+    const knots = 'knots' in this.spec ? [...this.spec.knots] : [];
+    const ends = basis.breaks.length > knots.length ? [origin, ...knots, end] : knots;
     return ends.filter((t) => t > obs.t[0] && t < obs.t[n - 1]);
   }
 

@@ -7,8 +7,9 @@ import { BasisRow, type Basis } from './basis';
 export interface RegressionSystem {
   readonly series: PreparedSeries;
   readonly basis: Basis;
-  /** First pulling time (s), and u of each point. */
+  /** First and last pulling time (s), the time between them, and u of each point. */
   readonly origin: number;
+  readonly end: number;
   readonly range: number;
   readonly u: Float64Array;
   /** Row i: functions first[i] .. first[i] + width - 1, values at width * i. */
@@ -22,6 +23,7 @@ export interface RegressionSystem {
 /** u = 0 at the first and 1 at the last pulling point, formed from the raw stamps. */
 export interface PullingTimes {
   readonly origin: number;
+  readonly end: number;
   readonly range: number;
   readonly u: Float64Array;
   readonly distinct: number;
@@ -40,8 +42,9 @@ export function pullingTimes(series: PreparedSeries): PullingTimes {
     to = i;
   }
   const origin = obs.t[from];
-  const range = obs.t[to] - origin;
-  return { origin, range, u: obs.t.map((t) => (t - origin) / range), distinct };
+  const end = obs.t[to];
+  const range = end - origin;
+  return { origin, end, range, u: obs.t.map((t) => (t - origin) / range), distinct };
 }
 
 /** @throws BaselineError 'insufficient-data' when there are fewer distinct times than functions */
@@ -76,7 +79,7 @@ export function solveRegression(
     for (let d = 0; d < width; d++) rows[width * i + d] = row.value[d];
   }
   const fit = new BandedLeastSquares(basis.dimension, width);
-  const system = { series, basis, origin: times.origin, range: times.range, u: times.u, first, rows, y, fit };
+  const system = { series, basis, ...times, first, rows, y, fit };
   addPoints(system, fit, y, -1);
   const column = undetermined(system, fit, -1);
   if (column >= 0) {
