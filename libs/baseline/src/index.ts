@@ -4,6 +4,7 @@ export type {
   BaselineMethod,
   BaselinePoint,
   BaselineSpec,
+  DeletedLot,
   LotScores,
   PiecewiseCubic,
   StepEstimates,
@@ -12,7 +13,6 @@ export { chooseBaseline } from './choice/choose-baseline';
 export { chooseLambda, type ChooseLambdaOptions, type ChosenLambda, type LambdaRule } from './choice/choose-lambda';
 export type { ChooseBaselineOptions, ChosenBaseline, SmoothnessBound, SmoothnessRule } from './choice/chosen-baseline';
 export type { Candidate } from './choice/criteria';
-export type { DeletedLot } from './spline/deleted-lots';
 export { effectivePeriod, lambdaForPeriod, pointDensity } from './drift-period';
 export type { Observations } from './observations';
 export { fitSmoothingSpline, type SmoothingSplineFit } from './spline/smoothing-spline';

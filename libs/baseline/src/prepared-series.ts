@@ -28,22 +28,30 @@ export interface PreparedSeries {
   readonly lotStart: Int32Array;
 }
 
-/** Checks the observations, takes off the weighted straight line, scales time and weight, and sorts the points by lot. */
+/**
+ * Checks the observations, takes off the weighted straight line, scales time and weight. The order by lot is worked out when it is first asked for.
+ * @throws BaselineError as checkObservations; 'ill-posed' when sums overflow
+ */
 export function prepareSeries(obs: Observations): PreparedSeries {
   checkObservations(obs);
   const { t, y, weight, lot, pulls } = obs;
   const n = t.length;
-  const timeScale = t[n - 1] - t[0];
+  const origin = t[0];
+  const timeScale = t[n - 1] - origin;
+  const gap = new Float64Array(n);
+  const pull = new Float64Array(n);
+  const r = new Float64Array(n);
   let totalWeight = 0;
   let pullCount = 0;
   let st = 0;
   let sy = 0;
   for (let i = 0; i < n; i++) {
     const w = weight[i] * pulls[lot[i]];
+    pull[i] = w;
     if (w === 0) continue;
     pullCount++;
     totalWeight += w;
-    st += w * ((t[i] - t[0]) / timeScale);
+    st += w * ((t[i] - origin) / timeScale);
     sy += w * y[i];
   }
   const u0 = st / totalWeight;
@@ -51,34 +59,28 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   let suu = 0;
   let suy = 0;
   for (let i = 0; i < n; i++) {
-    const w = weight[i] * pulls[lot[i]];
-    if (w === 0) continue;
-    const u = (t[i] - t[0]) / timeScale - u0;
-    suu += w * u * u;
-    suy += w * u * (y[i] - lineLevel);
+    const u = (t[i] - origin) / timeScale - u0;
+    const wu = pull[i] * u;
+    suu += wu * u;
+    suy += wu * (y[i] - lineLevel);
   }
   const slope = suu > 0 ? suy / suu : 0;
   const weightScale = totalWeight / pullCount;
-  const gap = new Float64Array(n);
-  const pull = new Float64Array(n);
-  const r = new Float64Array(n);
   let lineRss = 0;
   let sumSquares = 0;
   for (let i = 0; i < n; i++) {
-    if (i + 1 < n) gap[i] = (t[i + 1] - t[i]) / timeScale;
-    r[i] = y[i] - lineLevel - slope * ((t[i] - t[0]) / timeScale - u0);
-    const w = weight[i] * pulls[lot[i]];
-    if (w === 0) continue;
-    pull[i] = w / weightScale;
-    lineRss += w * r[i] * r[i];
+    const v = y[i] - lineLevel - slope * ((t[i] - origin) / timeScale - u0);
+    const w = pull[i];
+    lineRss += w * v * v;
     sumSquares += w * y[i] * y[i];
+    r[i] = v;
+    pull[i] = w / weightScale;
+    if (i > 0) gap[i - 1] = (t[i] - t[i - 1]) / timeScale;
   }
   if (!Number.isFinite(timeScale + weightScale + lineRss + sumSquares)) {
     throw new BaselineError('ill-posed', 'Times, values or weights are so large that sums over them overflow.');
   }
-  const { pointsByLot, lotStart } = sortByLot(lot, pulls.length);
-  const lineSlope = slope / timeScale;
-  const lineTime = u0 * timeScale;
+  let byLot: LotOrder | undefined;
   return {
     obs,
     n,
@@ -90,21 +92,27 @@ export function prepareSeries(obs: Observations): PreparedSeries {
     totalWeight,
     pullCount,
     lineLevel,
-    lineSlope,
-    lineTime,
+    lineSlope: slope / timeScale,
+    lineTime: u0 * timeScale,
     lineRss,
     sumSquares,
-    pointsByLot,
-    lotStart,
+    get pointsByLot() {
+      return (byLot ??= sortByLot(lot, pulls.length)).pointsByLot;
+    },
+    get lotStart() {
+      return (byLot ??= sortByLot(lot, pulls.length)).lotStart;
+    },
   };
 }
 
-function sortByLot(lot: Int32Array, lotCount: number): { pointsByLot: Int32Array; lotStart: Int32Array } {
+type LotOrder = Pick<PreparedSeries, 'pointsByLot' | 'lotStart'>;
+
+function sortByLot(lot: Int32Array, lotCount: number): LotOrder {
   const lotStart = new Int32Array(lotCount + 1);
   for (let i = 0; i < lot.length; i++) lotStart[lot[i] + 1]++;
   for (let j = 0; j < lotCount; j++) lotStart[j + 1] += lotStart[j];
-  const next = lotStart.slice(0, lotCount);
   const pointsByLot = new Int32Array(lot.length);
-  for (let i = 0; i < lot.length; i++) pointsByLot[next[lot[i]]++] = i;
+  const next = lotStart.slice(1);
+  for (let i = lot.length - 1; i >= 0; i--) pointsByLot[--next[lot[i]]] = i;
   return { pointsByLot, lotStart };
 }

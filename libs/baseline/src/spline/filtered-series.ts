@@ -1,19 +1,19 @@
 import { BaselineError } from '../baseline-error';
 import type { PreparedSeries } from '../prepared-series';
-import { filterBackward, STATE_SIZE } from './information-filter';
+import { filterBackward, filterForward, STATE_SIZE } from './information-filter';
 import { GainProducts } from './gain-products';
 
 /** States before each point from both sides, and 1/lambda, in scaled units. */
 export interface FilteredSeries {
-  series: PreparedSeries;
-  q: number;
-  forward: Float64Array;
+  readonly series: PreparedSeries;
+  readonly q: number;
+  readonly forward: Float64Array;
   readonly backward: Float64Array;
   /** Products of the backward gains. Where there are none, a LotDeleter that needs them makes its own. */
   readonly gains?: GainProducts;
 }
 
-/** A filtered series whose backward states and gains are worked out when something asks for them, and kept. */
+/** A filtered series whose states and gains are worked out when something asks for them, and kept. */
 export class LazilyFiltered implements FilteredSeries {
   private backwardStates?: Float64Array;
   private gainProducts?: GainProducts;
@@ -21,8 +21,17 @@ export class LazilyFiltered implements FilteredSeries {
   constructor(
     readonly series: PreparedSeries,
     readonly q: number,
-    readonly forward: Float64Array,
+    private forwardStates?: Float64Array,
   ) {}
+
+  get forward(): Float64Array {
+    if (this.forwardStates === undefined) {
+      const { n, gap, pull, r } = this.series;
+      this.forwardStates = new Float64Array(STATE_SIZE * n);
+      filterForward(gap, pull, r, this.q, this.forwardStates);
+    }
+    return this.forwardStates;
+  }
 
   get backward(): Float64Array {
     if (this.backwardStates === undefined) {

@@ -2,14 +2,13 @@ import { BaselineError } from '../baseline-error';
 import type { BaselinePoint, DeletedLot, LotScores, PiecewiseCubic, StepEstimates } from '../baseline-fit';
 import type { PreparedSeries } from '../prepared-series';
 import { LazilyFiltered, outOfRange, scaledInverse } from './filtered-series';
-import { filterForward, STATE_SIZE } from './information-filter';
 import { insertTime } from './inserted-time';
 import { LotDeleter } from './lot-deletion';
 import { scoreLots } from './lot-scores';
 import { residualProduct } from './residual-product';
 import { determinantConstant, logDeterminant } from './restricted-likelihood';
 import type { SmoothingSplineFit } from './smoothing-spline';
-import { smoothBackward, type SmoothedPoints } from './smoothing-pass';
+import { smoothSeries } from './smooth-series';
 import { stepEstimates } from './step-estimates';
 import { timeCovariance } from './time-covariance';
 
@@ -27,47 +26,38 @@ export class FittedSpline implements SmoothingSplineFit {
   readonly leverage: Float64Array;
   readonly isProjectable = true;
   private readonly filtered: LazilyFiltered;
-  private readonly logDelta: number;
+  private readonly logDet: number;
 
   constructor(
     private readonly series: PreparedSeries,
     readonly lambda: number,
   ) {
-    const { n, gap, pull, r, timeScale, weightScale } = series;
+    const { n, timeScale, weightScale } = series;
     const q = scaledInverse(series, lambda);
-    const forward = new Float64Array(STATE_SIZE * n);
-    this.logDelta = filterForward(gap, pull, r, q, forward);
-    const points: SmoothedPoints = {
-      fitted: new Float64Array(n),
-      slope: new Float64Array(n),
-      curvature: new Float64Array(n),
-      standardError: new Float64Array(n),
-      leverage: new Float64Array(n),
-      edf: 0,
-      rss: 0,
-      penalty: 0,
-    };
-    if (!smoothBackward(series, q, forward, points)) throw outOfRange(lambda);
+    const smoothed = smoothSeries(series, q);
+    if (smoothed === undefined) throw outOfRange(lambda);
+    const { points } = smoothed;
     this.spec = { method: 'smoothing-spline', lambda };
-    this.edf = points.edf;
+    this.edf = smoothed.edf;
     this.pullCount = series.pullCount;
-    this.weightedRss = points.rss * weightScale;
-    this.penalty = points.penalty / timeScale ** 3;
+    this.weightedRss = smoothed.rss * weightScale;
+    this.penalty = smoothed.penalty / timeScale ** 3;
     this.fitted = points.fitted;
     this.slope = points.slope;
     this.curvature = points.curvature;
     this.standardError = points.standardError;
     this.leverage = points.leverage;
-    this.filtered = new LazilyFiltered(series, q, forward);
-    const sums = this.edf + this.weightedRss + this.penalty + this.logDelta;
+    this.filtered = new LazilyFiltered(series, q, smoothed.forward);
+    this.logDet = logDeterminant(series, smoothed.lastState, smoothed.logDelta);
+    const sums = this.edf + this.weightedRss + this.penalty + this.logDet;
     const ends = points.slope[0] + points.slope[n - 1] + points.fitted[0] + points.fitted[n - 1];
     if (!Number.isFinite(sums + ends)) throw outOfRange(lambda);
   }
 
   get restrictedDeviance(): number {
-    const { series, filtered, logDelta, lambda } = this;
+    const { series, logDet, lambda } = this;
     const prss = this.weightedRss + (this.penalty > 0 ? lambda * this.penalty : 0);
-    const deviance = prss + logDeterminant(series, filtered.forward, logDelta, determinantConstant(series));
+    const deviance = prss + logDet + determinantConstant(series);
     if (!Number.isFinite(deviance)) throw outOfRange(lambda);
     return deviance;
   }

@@ -99,8 +99,10 @@ export function filterBothWays(
 /** Products above this are turned into a logarithm and started afresh; so are factors above its fourth root. */
 const PRODUCT_LIMIT = 1e200;
 const FACTOR_LIMIT = 1e50;
+// Looked up once: a look-up of Math for every point costs more than the arithmetic where globals are intercepted.
+const { log } = Math;
 
-/** The forward half of {@link filterBothWays}, enough for the restricted likelihood. The state is kept in locals: {@link advance} written out. */
+/** The forward half of {@link filterBothWays}, enough for the restricted likelihood. */
 export function filterForward(
   gap: Float64Array,
   w: Float64Array,
@@ -108,22 +110,41 @@ export function filterForward(
   q: number,
   forward: Float64Array,
 ): number {
+  return filterRange(gap, w, r, q, 0, w.length, new Float64Array(STATE_SIZE), forward);
+}
+
+/**
+ * The forward pass over the points from .. to-1. {@link advance} written out, with the state in locals.
+ * @param state the state before point `from`; receives that before point `to` (of the last point, when there is none)
+ * @param out receives the states before the points, the first at 0
+ * @returns the sum of log delta over the gaps crossed
+ */
+export function filterRange(
+  gap: Float64Array,
+  w: Float64Array,
+  r: Float64Array,
+  q: number,
+  from: number,
+  to: number,
+  state: Float64Array,
+  out: Float64Array,
+): number {
   const last = w.length - 1;
-  let a = 0;
-  let b = 0;
-  let c = 0;
-  let det = 0;
-  let h0 = 0;
-  let h1 = 0;
+  let a = state[0];
+  let b = state[1];
+  let c = state[2];
+  let det = state[3];
+  let h0 = state[4];
+  let h1 = state[5];
   let product = 1;
   let logDelta = 0;
-  for (let k = 0, i = 0; k <= last; k++, i += STATE_SIZE) {
-    forward[i] = a;
-    forward[i + 1] = b;
-    forward[i + 2] = c;
-    forward[i + 3] = det;
-    forward[i + 4] = h0;
-    forward[i + 5] = h1;
+  for (let k = from, i = 0; k < to; k++, i += STATE_SIZE) {
+    out[i] = a;
+    out[i + 1] = b;
+    out[i + 2] = c;
+    out[i + 3] = det;
+    out[i + 4] = h0;
+    out[i + 5] = h1;
     if (k === last) break;
     const weight = w[k];
     const d = gap[k];
@@ -145,13 +166,19 @@ export function filterForward(
     b = (b + ad + 0.5 * ded) * s;
     det *= s;
     if (delta < FACTOR_LIMIT) product *= delta;
-    else logDelta += Math.log(delta);
+    else logDelta += log(delta);
     if (product > PRODUCT_LIMIT) {
-      logDelta += Math.log(product);
+      logDelta += log(product);
       product = 1;
     }
   }
-  return logDelta + Math.log(product);
+  state[0] = a;
+  state[1] = b;
+  state[2] = c;
+  state[3] = det;
+  state[4] = h0;
+  state[5] = h1;
+  return logDelta + log(product);
 }
 
 /** The backward half of {@link filterBothWays}. */

@@ -1,6 +1,6 @@
 import type { PreparedSeries } from '../prepared-series';
 import { scaledInverse, outOfRange, type FilteredSeries } from './filtered-series';
-import { combine, filterBackward, filterForward, STATE_SIZE, type Posterior } from './information-filter';
+import { combine, filterBackward, filterRange, STATE_SIZE, type Posterior } from './information-filter';
 import { LotDeleter, nothingLeft } from './lot-deletion';
 import { determinantConstant, logDeterminant, penalisedRss, restrictedDeviance } from './restricted-likelihood';
 
@@ -27,6 +27,7 @@ export class LambdaEvaluator implements FilteredSeries {
 
   q = 0;
   readonly forward: Float64Array;
+  private readonly state = new Float64Array(STATE_SIZE);
   private lambda = NaN;
   private readonly later: Float64Array;
   private isLaterStored = false;
@@ -91,9 +92,10 @@ export class LambdaEvaluator implements FilteredSeries {
     this.q = scaledInverse(series, lambda);
     this.lambda = lambda;
     this.isLaterStored = false;
-    const logDelta = filterForward(series.gap, series.pull, series.r, this.q, forward);
+    this.state.fill(0);
+    const logDelta = filterRange(series.gap, series.pull, series.r, this.q, 0, series.n, this.state, forward);
     this.prss = penalisedRss(series, forward) * series.weightScale;
-    this.logDet = logDeterminant(series, forward, logDelta, this.constant);
+    this.logDet = logDeterminant(series, this.state, logDelta) + this.constant;
     if (!Number.isFinite(this.prss + this.logDet)) throw outOfRange(lambda);
     const { known, estimated } = restrictedDeviance(series.pullCount, this.prss, this.logDet);
     this.known = known;

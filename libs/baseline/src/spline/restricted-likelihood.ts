@@ -12,16 +12,11 @@ import { STATE_SIZE } from './information-filter';
  *
  *   log|A| - (m - 2) log alpha = log D + sum log delta - 2 sum log h_j - log|R|.
  *
- * @param forward states of the forward pass @param logDelta what it returned @param constant see {@link determinantConstant}
+ * @param state of the forward pass before the last point @param logDelta what the pass returned
+ * @returns log D + sum log delta; with {@link determinantConstant} the whole
  */
-export function logDeterminant(
-  series: PreparedSeries,
-  forward: Float64Array,
-  logDelta: number,
-  constant: number,
-): number {
-  const last = STATE_SIZE * (series.n - 1);
-  return Math.log(forward[last + 3] + series.pull[series.n - 1] * forward[last + 2]) + logDelta + constant;
+export function logDeterminant(series: PreparedSeries, state: Float64Array, logDelta: number): number {
+  return Math.log(state[3] + series.pull[series.n - 1] * state[2]) + logDelta;
 }
 
 /** -2 sum log h_j - log|R| over the gaps h_j between the distinct times of pulling points, scaled; the same for every lambda. */

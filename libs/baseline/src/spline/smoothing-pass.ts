@@ -4,23 +4,32 @@ import type { PreparedSeries } from '../prepared-series';
 // Looked up once: a look-up of Math for every point costs more than the arithmetic where globals are intercepted.
 const { abs, sqrt } = Math;
 
-/** What one backward pass writes: a number a point, in raw units (see BaselineFit), and sums in scaled units. */
+/** What a pass writes: a number a point, in raw units (see BaselineFit). */
 export interface SmoothedPoints {
   fitted: Float64Array;
   slope: Float64Array;
   curvature: Float64Array;
   standardError: Float64Array;
   leverage: Float64Array;
+}
+
+/** What is carried from a point to the one before it: the backward state, sums so far, and value, slope, curvature there. */
+export interface BackwardCarry {
+  state: Float64Array;
   /** tr S. */
   edf: number;
   /** Sum of scaled weight * (r - g)^2. */
   rss: number;
   /** Integral of g''^2 over scaled time. */
   penalty: number;
+  value: number;
+  slope: number;
+  bend: number;
+  bendSize: number;
 }
 
 /**
- * Carries the information of later points backwards, combines it at each point with the stored forward state and writes the fit.
+ * Carries the information of later points backwards over the points to-1 .. from, combines it at each with the stored forward state and writes the fit.
  *
  * Curvature. The Wiener process that drives g' has at the best path the derivative g'' = q (p1 + p0 (t_k - s)) in the gap before point k, with
  * the costate p = L x - h from the information (L, h) before point k: so g'' = q p1 at the points, linear between them, and 0 where one side says
@@ -29,29 +38,39 @@ export interface SmoothedPoints {
  * differences where it is large): of the three the one with the smallest terms is taken.
  *
  * Penalty: g'' linear from A to B over a gap d contributes d (A^2 + A B + B^2)/3.
+ * @param forward states before the points, that of `from` first @param carry what comes from point `to`; receives what goes on to the one before `from`
  * @returns false when the numbers leave the range of doubles
  */
-export function smoothBackward(series: PreparedSeries, q: number, forward: Float64Array, out: SmoothedPoints): boolean {
+export function smoothBackward(
+  series: PreparedSeries,
+  q: number,
+  from: number,
+  to: number,
+  forward: Float64Array,
+  carry: BackwardCarry,
+  out: SmoothedPoints,
+): boolean {
   const { n, gap, pull, r, timeScale, weightScale, lineLevel, lineSlope, lineTime } = series;
   const t = series.obs.t;
   const { fitted, slope, curvature, standardError, leverage } = out;
   const origin = t[0] + lineTime;
   const perTime = 1 / timeScale;
   const perWeight = 1 / weightScale;
-  let a = 0;
-  let b = 0;
-  let c = 0;
-  let det = 0;
-  let h0 = 0;
-  let h1 = 0;
-  let edf = 0;
-  let rss = 0;
-  let penalty = 0;
-  let nextValue = 0;
-  let nextSlope = 0;
-  let nextBend = 0;
-  let nextSize = 0;
-  for (let k = n - 1, i = STATE_SIZE * k; k >= 0; k--, i -= STATE_SIZE) {
+  const { state } = carry;
+  let a = state[0];
+  let b = state[1];
+  let c = state[2];
+  let det = state[3];
+  let h0 = state[4];
+  let h1 = state[5];
+  let edf = carry.edf;
+  let rss = carry.rss;
+  let penalty = carry.penalty;
+  let nextValue = carry.value;
+  let nextSlope = carry.slope;
+  let nextBend = carry.bend;
+  let nextSize = carry.bendSize;
+  for (let k = to - 1, i = STATE_SIZE * (k - from); k >= from; k--, i -= STATE_SIZE) {
     const w = pull[k];
     const y = r[k];
     const af = forward[i];
@@ -88,7 +107,7 @@ export function smoothBackward(series: PreparedSeries, q: number, forward: Float
         size = sizeBetween;
         bend = perGap * (6 * e0 - 4 * dg - 2 * nextSlope);
       }
-      penalty += d * (bend * bend + bend * nextBend + nextBend * nextBend);
+      penalty += d * (1 / 3) * (bend * bend + bend * nextBend + nextBend * nextBend);
     } else if (k < n - 1 && nextSize < size) {
       size = nextSize;
       bend = nextBend;
@@ -127,8 +146,18 @@ export function smoothBackward(series: PreparedSeries, q: number, forward: Float
     b = (b + ad + 0.5 * ded) * s;
     det *= s;
   }
-  out.edf = edf;
-  out.rss = rss;
-  out.penalty = penalty / 3;
+  state[0] = a;
+  state[1] = b;
+  state[2] = c;
+  state[3] = det;
+  state[4] = h0;
+  state[5] = h1;
+  carry.edf = edf;
+  carry.rss = rss;
+  carry.penalty = penalty;
+  carry.value = nextValue;
+  carry.slope = nextSlope;
+  carry.bend = nextBend;
+  carry.bendSize = nextSize;
   return true;
 }

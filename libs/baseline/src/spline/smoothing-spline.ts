@@ -1,6 +1,6 @@
 import type { BaselineFit } from '../baseline-fit';
 import type { Observations } from '../observations';
-import { prepareSeries } from '../prepared-series';
+import { prepareSeries, type PreparedSeries } from '../prepared-series';
 import { FittedSpline } from './fitted-spline';
 
 /** The fitted slow movement. */
@@ -33,7 +33,10 @@ export interface SmoothingSplineFit extends BaselineFit {
  * const { value, standardError } = fit.at(t[0] + 60);
  */
 export function fitSmoothingSpline(obs: Observations, lambda: number): SmoothingSplineFit {
-  return new FittedSpline(prepareSeries(obs), lambda);
+  return fitPreparedSpline(prepareSeries(obs), lambda);
 }
 
-export { scaledInverse } from './filtered-series';
+/** {@link fitSmoothingSpline} of observations that are prepared already, as after a search for lambda. */
+export function fitPreparedSpline(series: PreparedSeries, lambda: number): SmoothingSplineFit {
+  return new FittedSpline(series, lambda);
+}
