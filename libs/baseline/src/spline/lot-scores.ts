@@ -3,6 +3,9 @@ import type { LotScores } from '../baseline-fit';
 import type { FilteredSeries } from './filtered-series';
 import { LotDeleter } from './lot-deletion';
 
+// Looked up once, as in smoothing-pass.
+const { abs } = Math;
+
 /** From this leverage on, the residual without a point is worked out without it: 1 - h loses digits. */
 const LARGE_LEVERAGE = 0.5;
 
@@ -43,7 +46,7 @@ export function scoreLots(
       undetermined.push(lot);
       continue;
     }
-    if (!Number.isFinite(residual[lot] + variance[lot]))
+    if (!(abs(residual[lot] + variance[lot]) < Infinity))
       throw new BaselineError('ill-posed', `Without lot ${lot} the fit leaves the range of double precision.`);
   }
   return { deletedResidual, residual, variance, undetermined };

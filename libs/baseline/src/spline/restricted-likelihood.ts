@@ -19,6 +19,9 @@ export function logDeterminant(series: PreparedSeries, state: Float64Array, logD
   return Math.log(state[3] + series.pull[series.n - 1] * state[2]) + logDelta;
 }
 
+/** Smaller factors are not multiplied with others, lest the product vanish. */
+const SMALL_FACTOR = 1e-20;
+
 /** -2 sum log h_j - log|R| over the gaps h_j between the distinct times of pulling points, scaled; the same for every lambda. */
 export function determinantConstant(series: PreparedSeries): number {
   const { n, gap, pull } = series;
@@ -31,11 +34,13 @@ export function determinantConstant(series: PreparedSeries): number {
   for (let k = 0; k < n; k++) {
     if (pull[k] > 0) {
       if (!isFirst && span > 0) {
-        product *= span * span;
+        if (span > SMALL_FACTOR) product *= span * span;
+        else logSum += 2 * Math.log(span);
         if (before > 0) {
           // R has (h_j + h_(j+1))/3 on its diagonal and h_(j+1)/6 beside it; pivot of its factorisation.
           pivot = (before + span) / 3 - (pivot > 0 ? (before * before) / (36 * pivot) : 0);
-          product *= pivot;
+          if (pivot > SMALL_FACTOR) product *= pivot;
+          else logSum += Math.log(pivot);
         }
         before = span;
         if (!(product > 1e-200 && product < 1e200)) {

@@ -20,17 +20,39 @@ function weightedLine({ t, y, weight }: Observations): (x: number) => number {
   return (x) => (v0 - slope * w1) / w0 + slope * x;
 }
 
-const everyNumber = (fit: SmoothingSplineFit) => [
-  fit.edf,
-  fit.weightedRss,
-  fit.penalty,
-  fit.restrictedDeviance,
-  ...fit.fitted,
-  ...fit.slope,
-  ...fit.standardError,
-  ...fit.leverage,
-  ...fit.deletedLots().flatMap((d) => [...d.residual, ...d.covariance]),
-];
+/** All that a fit says, at and between its points and beyond them. */
+function everyNumber(fit: SmoothingSplineFit): number[] {
+  const { breaks, coefficients } = fit.pieces();
+  const [start, end] = [breaks[0], breaks[breaks.length - 1]];
+  const times = [start - 1, start, 0.7 * start + 0.3 * end, end, end + 1];
+  const scores = fit.scoreLots();
+  const isScored = (_: number, lot: number) => scores.variance[lot] < Infinity;
+  const steps = fit.stepEstimates();
+  return [
+    fit.edf,
+    fit.weightedRss,
+    fit.penalty,
+    fit.restrictedDeviance,
+    ...fit.fitted,
+    ...fit.slope,
+    ...fit.curvature,
+    ...fit.standardError,
+    ...fit.leverage,
+    ...coefficients,
+    ...times.flatMap((t) => Object.values(fit.at(t)) as number[]),
+    ...times.map((t) => fit.covariance(start, t)),
+    ...fit.residualProduct(fit.slope),
+    ...scores.deletedResidual,
+    ...scores.residual,
+    ...scores.variance.filter(isScored),
+    ...steps.estimate,
+    ...steps.standardError.map((v) => 1 / v),
+    ...Array.from(scores.variance, (_, lot) => [...fit.smootherBlock(lot)]).flat(),
+    ...fit
+      .deletedLots(Int32Array.from(scores.variance.keys()).filter((lot) => !scores.undetermined.includes(lot)))
+      .flatMap((d) => [...d.residual, ...d.covariance]),
+  ];
+}
 
 describe('the limits of the penalty', () => {
   const obs = wavySeries(50, 11);
