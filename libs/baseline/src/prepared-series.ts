@@ -28,9 +28,12 @@ export interface PreparedSeries {
   readonly lotStart: Int32Array;
 }
 
+/** Ranges of time and mean weights up to this, and down to its inverse, keep their cubes, quotients and products within the range of doubles. */
+const EXTREME = 1e100;
+
 /**
  * Checks the observations, takes off the weighted straight line, scales time and weight. The order by lot is worked out when it is first asked for.
- * @throws BaselineError as checkObservations; 'ill-posed' when sums overflow
+ * @throws BaselineError as checkObservations; 'ill-posed' when sums overflow, or the range of time or the mean weight is beyond 1e-100 .. 1e100
  */
 export function prepareSeries(obs: Observations): PreparedSeries {
   checkObservations(obs);
@@ -80,6 +83,12 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   if (!Number.isFinite(timeScale + weightScale + lineRss + sumSquares)) {
     throw new BaselineError('ill-posed', 'Times, values or weights are so large that sums over them overflow.');
   }
+  if (!(isModerate(timeScale) && isModerate(weightScale))) {
+    throw new BaselineError(
+      'ill-posed',
+      `Times over ${timeScale} with a mean weight of ${weightScale} leave no digits.`,
+    );
+  }
   let byLot: LotOrder | undefined;
   return {
     obs,
@@ -103,6 +112,10 @@ export function prepareSeries(obs: Observations): PreparedSeries {
       return (byLot ??= sortByLot(lot, pulls.length)).lotStart;
     },
   };
+}
+
+function isModerate(x: number): boolean {
+  return x < EXTREME && x > 1 / EXTREME;
 }
 
 type LotOrder = Pick<PreparedSeries, 'pointsByLot' | 'lotStart'>;

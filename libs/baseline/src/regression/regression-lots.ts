@@ -55,6 +55,7 @@ export class RegressionLots {
         covariance[s * m + s] += 1 / obs.weight[indices[s]];
       }
     }
+    if (!(residual.every(Number.isFinite) && covariance.every(Number.isFinite))) throw outOfRange(lot);
     return { lot, indices, residual, covariance };
   }
 
@@ -87,7 +88,9 @@ export class RegressionLots {
         }
       } else {
         undetermined.push(lot);
+        continue;
       }
+      if (!Number.isFinite(residual[lot] + variance[lot])) throw outOfRange(lot);
     }
     return { deletedResidual, residual, variance, undetermined };
   }
@@ -134,4 +137,8 @@ function checkCounts(count: Float64Array, n: number): void {
       );
     }
   }
+}
+
+function outOfRange(lot: number): BaselineError {
+  return new BaselineError('ill-posed', `Without lot ${lot} the fit leaves the range of double precision.`);
 }
