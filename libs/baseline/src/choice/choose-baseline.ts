@@ -39,9 +39,9 @@ import { pullingTimes } from './regression-range';
  */
 export function chooseBaseline(obs: Observations, options: ChooseBaselineOptions): ChosenBaseline {
   checkOptions(options);
-  checkObservations(obs);
-  const { method, rule, shortestPeriodSeconds: period = 0 } = options;
-  const isLine = period > pullingTimes(obs).window;
+  const { method, rule, shortestPeriodSeconds: period } = options;
+  if (method !== 'smoothing-spline' || period !== undefined) checkObservations(obs);
+  const isLine = period !== undefined && period > pullingTimes(obs).window;
   if (method === 'smoothing-spline') return chooseSmoothingSpline(obs, options, isLine);
   if (!(isLine && method === 'b-spline')) return chooseRegression(obs, method, options);
   const found = chooseRegression(obs, 'polynomial', rule === 'edf' ? { ...options, edf: 2 } : options);

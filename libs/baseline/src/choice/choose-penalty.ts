@@ -4,6 +4,7 @@ import type { Candidate } from './criteria';
 import { ExactCriterion, type PenaltyRule } from './exact-criterion';
 import { checkEdf, penaltyForEdf } from './fixed-edf';
 import { smoothestWithinOneStandardError, type WithinOneStandardError } from './one-standard-error';
+import { reducedStart, searchReduced } from './search-reduced';
 import { bestOf, isNear, searchLambda, type LambdaSearch } from './search-lambda';
 
 /** What decides when the criterion has no minimum inside the range of lambda. */
@@ -22,6 +23,9 @@ const LINE_LAMBDA = 10;
 const INTERPOLATION_LAMBDA = 1e-3;
 /** A line that leaves less than (1e-14)^2 of the sum of squares leaves rounding only. */
 const EXACT_LINE_SHARE = 1e-28;
+
+/** Series with more points are searched on a reduced basis; below, the exact search is as fast. */
+const LONG_SERIES = 3000;
 
 /** The penalties searched: from the floor (or, without one, near interpolation) to the straight line. */
 export function penaltyRange(series: PreparedSeries, floorLambda: number): { low: number; high: number } {
@@ -49,8 +53,12 @@ export function choosePenalty(
     const chosen = evaluate(low);
     return { chosen, curve: [chosen], minima: [chosen], isAtFloor: true, isAtBound: 'line' };
   }
-  const search = searchLambda(low, high, () => evaluate);
-  if (series.lineRss <= EXACT_LINE_SHARE * series.sumSquares) {
+  const isLine = series.lineRss <= EXACT_LINE_SHARE * series.sumSquares;
+  const isLong = rule.rule !== 'lot-cv' && series.n > LONG_SERIES;
+  const search =
+    (isLong && !isLine ? searchReduced(series, rule, low, high, evaluate) : undefined) ??
+    searchLambda(low, high, () => evaluate);
+  if (isLine) {
     const line = evaluate(high);
     return { ...search, minima: [line], chosen: line, isAtFloor: false, isAtBound: 'line' };
   }
@@ -86,14 +94,15 @@ export function penaltyWithEdf(
     const most = exact.edfAt(floorLambda);
     if (edf >= most) return { lambda: floorLambda, edf: most, isAtFloor: true };
   }
-  const start = evenPenalty(series, edf);
-  return { ...penaltyForEdf((lambda) => exact.edfAt(lambda), edf, distinct, start), isAtFloor: false };
+  const even = evenPenalty(series, edf);
+  const { start, slope } = (series.n > LONG_SERIES && reducedStart(series, edf, distinct, even)) || { start: even };
+  const found = penaltyForEdf((lambda) => exact.edfAt(lambda), edf, distinct, start, slope);
+  return { lambda: found.lambda, edf: found.edf, isAtFloor: false };
 }
 
-/** The penalty that has about these degrees of freedom were the points even in time: lambda = (sum w) range^3 / (2 sqrt 2 (edf - 1.4))^4 (Silverman 1984). */
+/** The penalty that has these degrees of freedom were the points even in time: (sum w) range^3 / (2 sqrt 2 (edf - 1))^4 (see ReducedCriterion). */
 function evenPenalty(series: PreparedSeries, edf: number): number {
-  const inner = 2 * Math.SQRT2 * Math.max(0.2, edf - 1.4);
-  return (series.totalWeight * series.timeScale ** 3) / inner ** 4;
+  return (series.totalWeight * series.timeScale ** 3) / (2 * Math.SQRT2 * (edf - 1)) ** 4;
 }
 
 function checkFloor(floorLambda: number): void {

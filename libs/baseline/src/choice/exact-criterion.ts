@@ -14,11 +14,10 @@ export type PenaltyRule =
 /** The criteria at a penalty, exactly, O(n) a call (plus, for lots that interleave, the spans they cover), in buffers that are made once. */
 export class ExactCriterion {
   private readonly spline: LambdaEvaluator;
-  private readonly terms: Float64Array;
+  private terms = new Float64Array(0);
 
   constructor(private readonly series: PreparedSeries) {
     this.spline = new LambdaEvaluator(series);
-    this.terms = new Float64Array(series.lotStart.length - 1);
   }
 
   /**
@@ -56,8 +55,9 @@ export class ExactCriterion {
   }
 
   private lotTerms(): LotCriterion {
-    const { spline, terms } = this;
     const { pull, pointsByLot, lotStart, weightScale } = this.series;
+    if (this.terms.length < lotStart.length) this.terms = new Float64Array(lotStart.length);
+    const { spline, terms } = this;
     let count = 0;
     for (let lot = 0; lot + 1 < lotStart.length; lot++) {
       const from = lotStart[lot];

@@ -1,7 +1,11 @@
 import { BaselineError } from '../baseline-error';
 
 /** Relative precision of the degrees of freedom reached. */
-const EDF_TOLERANCE = 1e-11;
+const EDF_TOLERANCE = 1e-10;
+/** Between the slopes of the inside and of the ends. */
+const START_SLOPE = -0.5;
+/** Largest step in log lambda. */
+const LONGEST_STEP = 12;
 /** Steps before the search gives up; it takes five to fifteen. */
 const MAX_STEPS = 200;
 
@@ -9,8 +13,8 @@ const MAX_STEPS = 200;
  * The penalty whose fit has given effective degrees of freedom. tr S falls from the number of distinct times m to 2 as lambda grows, and
  * log((edf - 2)/(m - edf)) is close to linear in log lambda (slope -1 near both ends, about -1/4 between): secant steps on it, kept inside the bracket found
  * so far.
- * @param edfAt tr S of a penalty, decreasing @param wanted inside (2, m) @param distinct m @param start a penalty to begin with
- * @returns lambda and the degrees of freedom there, wanted to 1e-11 (relative) or the nearest double precision allows
+ * @param edfAt tr S of a penalty, decreasing @param wanted inside (2, m) @param distinct m @param start a penalty to begin with @param slope of the logarithm there, by log lambda
+ * @returns lambda and the degrees of freedom there, wanted to 1e-10 (relative) or the nearest double precision allows
  * @throws BaselineError 'bad-argument' outside (2, m); 'ill-posed' when no double reaches it
  */
 export function penaltyForEdf(
@@ -18,6 +22,7 @@ export function penaltyForEdf(
   wanted: number,
   distinct: number,
   start: number,
+  slope = START_SLOPE,
 ): { lambda: number; edf: number } {
   checkEdf(wanted, distinct);
   const target = Math.log((wanted - 2) / (distinct - wanted));
@@ -26,6 +31,7 @@ export function penaltyForEdf(
   let x = Math.log(start);
   let best = { lambda: start, edf: NaN, miss: Infinity };
   let before = { x: NaN, f: NaN };
+  let steepness = slope;
   for (let k = 0; k < MAX_STEPS; k++) {
     const lambda = Math.exp(x);
     if (!(lambda > 0 && lambda < Infinity)) break;
@@ -36,10 +42,12 @@ export function penaltyForEdf(
     if (edf > wanted) low = Math.max(low, x);
     else high = Math.min(high, x);
     if (high - low <= 4e-16 * Math.max(1, Math.abs(x))) return best;
-    const f = logit(edf, distinct) - target;
-    const slope = (f - before.f) / (x - before.x);
+    const f = logEdfOdds(edf, distinct) - target;
+    const secant = (f - before.f) / (x - before.x);
+    if (secant < -0.05 && secant > -4) steepness = secant;
     before = { x, f };
-    x = nextStep(x, f, slope, low, high);
+    x = nextStep(x, f, steepness, low, high);
+    if (Math.abs(x - before.x) <= 1e-14 * Math.max(1, Math.abs(x))) break;
   }
   if (best.miss <= 1e-6 * wanted) return best;
   throw new BaselineError('ill-posed', `No penalty within double precision gives ${wanted} degrees of freedom.`);
@@ -54,17 +62,13 @@ export function checkEdf(wanted: number, distinct: number): void {
     );
 }
 
-/** Rounding may put the degrees of freedom on or past their limits. */
-function logit(edf: number, distinct: number): number {
+/** log((edf - 2)/(distinct - edf)); rounding may put the degrees of freedom on or past their limits. */
+export function logEdfOdds(edf: number, distinct: number): number {
   return Math.log(Math.max(1e-15, edf - 2) / Math.max(1e-15, distinct - edf));
 }
 
-/** Largest step in log lambda. */
-const LONGEST_STEP = 12;
-
 function nextStep(x: number, f: number, slope: number, low: number, high: number): number {
-  const usable = slope < -0.05 && slope > -4 ? slope : -0.5;
-  const step = Math.max(-LONGEST_STEP, Math.min(LONGEST_STEP, -f / usable));
+  const step = Math.max(-LONGEST_STEP, Math.min(LONGEST_STEP, -f / slope));
   const next = x + step;
   if (next > low && next < high) return next;
   return Number.isFinite(low + high) ? 0.5 * (low + high) : next;

@@ -1,0 +1,75 @@
+import type { PreparedSeries } from '../prepared-series';
+import { BaselineError } from '../baseline-error';
+import type { Candidate } from './criteria';
+import type { PenaltyRule } from './exact-criterion';
+import { logEdfOdds, penaltyForEdf } from './fixed-edf';
+import { ReducedCriterion } from './reduced-criterion';
+import { bestOf, isNear, searchLambda, type Evaluate, type LambdaSearch } from './search-lambda';
+
+/** Intervals a degree of freedom, and what is tried when the exact fit shows that points are too uneven for that. */
+const RATIOS = [32, 128];
+/** Largest relative difference from the exact degrees of freedom at the choice. */
+const EDF_AGREEMENT = 1e-3;
+
+/**
+ * The search of searchLambda by the reduced criterion, with one exact evaluation at the best minimum, which replaces it in the answer. The curve begins where the basis is fine enough.
+ * @returns undefined where the basis does not serve: a minimum lies at the end of what it can resolve, the exact degrees of freedom differ, or digits were lost
+ */
+export function searchReduced(
+  series: PreparedSeries,
+  rule: PenaltyRule,
+  low: number,
+  high: number,
+  exact: Evaluate,
+): LambdaSearch | undefined {
+  for (const ratio of RATIOS) {
+    const reduced = new ReducedCriterion(series, low, ratio);
+    const from = Math.max(low, reduced.lowest);
+    if (!(from < high)) return undefined;
+    let hasFailed = false;
+    const checked = (evaluate: Evaluate) => (lambda: number) => {
+      const candidate = evaluate(lambda);
+      if (Number.isNaN(candidate.value)) hasFailed = true;
+      return candidate;
+    };
+    const search = searchLambda(from, high, (lambda) => checked(reduced.evaluatorFrom(lambda, rule)));
+    const best = bestOf(search.minima);
+    if (hasFailed || best === undefined) return undefined;
+    if (from > low && search.minima.some((c) => isNear(c.smoothness, from))) return undefined;
+    const there = exact(best.smoothness);
+    if (Math.abs(there.edf - best.edf) <= EDF_AGREEMENT * there.edf)
+      return { curve: search.curve, minima: replaced(search.minima, best, there) };
+  }
+  return undefined;
+}
+
+function replaced(minima: readonly Candidate[], one: Candidate, by: Candidate): Candidate[] {
+  return minima.map((c) => (c === one ? by : c));
+}
+
+/** Half the step in log lambda over which a slope is taken. */
+const SLOPE_STEP = 0.05;
+
+/**
+ * A penalty close to that of given degrees of freedom, and the slope of their log odds there (see penaltyForEdf).
+ * @param even the penalty they have on points even in time; that of uneven points is smaller
+ * @returns undefined where the basis does not serve
+ */
+export function reducedStart(
+  series: PreparedSeries,
+  edf: number,
+  distinct: number,
+  even: number,
+): { start: number; slope: number } | undefined {
+  const reduced = new ReducedCriterion(series, even / 16, RATIOS[0]);
+  if (even < reduced.lowest) return undefined;
+  const edfAt = (lambda: number) => reduced.edfAt(lambda);
+  try {
+    const start = penaltyForEdf(edfAt, edf, distinct, even).lambda;
+    const [less, more] = [-SLOPE_STEP, SLOPE_STEP].map((step) => logEdfOdds(edfAt(start * Math.exp(step)), distinct));
+    return { start, slope: (more - less) / (2 * SLOPE_STEP) };
+  } catch (error) {
+    if (error instanceof BaselineError) return undefined;
+    throw error;
+  }
+}
