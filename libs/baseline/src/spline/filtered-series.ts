@@ -1,6 +1,7 @@
 import { BaselineError } from '../baseline-error';
 import type { PreparedSeries } from '../prepared-series';
-import { filterBackward, filterForward, STATE_SIZE } from './information-filter';
+import { filterBackward, filterForward } from './filter-passes';
+import { STATE_SIZE } from './information-state';
 import { GainProducts } from './gain-products';
 
 /** States before each point from both sides, and 1/lambda, in scaled units. */

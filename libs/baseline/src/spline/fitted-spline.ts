@@ -51,7 +51,8 @@ export class FittedSpline implements SmoothingSplineFit {
     this.logDet = logDeterminant(series, smoothed.lastState, smoothed.logDelta);
     const sums = this.edf + this.weightedRss + this.penalty + this.logDet;
     const ends = points.slope[0] + points.slope[n - 1] + points.fitted[0] + points.fitted[n - 1];
-    if (!Number.isFinite(sums + ends)) throw outOfRange(lambda);
+    const errors = points.standardError[0] + points.standardError[n - 1];
+    if (!Number.isFinite(sums + ends + errors)) throw outOfRange(lambda);
   }
 
   get restrictedDeviance(): number {
@@ -73,17 +74,16 @@ export class FittedSpline implements SmoothingSplineFit {
       bend = curvature[next - 1] * (1 - share) + curvature[next] * share;
     }
     const value = lineLevel + lineSlope * (t - obs.t[0] - lineTime) + posterior.value;
-    if (!Number.isFinite(value)) throw outOfRange(this.lambda);
-    return {
-      value,
-      slope: lineSlope + posterior.slope / timeScale,
-      curvature: bend,
-      standardError: Math.sqrt(posterior.variance / weightScale),
-    };
+    const slope = lineSlope + posterior.slope / timeScale;
+    const standardError = Math.sqrt(posterior.variance / weightScale);
+    if (!Number.isFinite(value + slope + standardError)) throw outOfRange(this.lambda);
+    return { value, slope, curvature: bend, standardError };
   }
 
   covariance(a: number, b: number): number {
-    return timeCovariance(this.filtered, this.filtered.gains, a, b);
+    const c = timeCovariance(this.filtered, this.filtered.gains, a, b);
+    if (!Number.isFinite(c)) throw outOfRange(this.lambda);
+    return c;
   }
 
   pieces(): PiecewiseCubic {

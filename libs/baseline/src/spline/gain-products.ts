@@ -1,5 +1,5 @@
 import type { PreparedSeries } from '../prepared-series';
-import { backwardGain, STATE_SIZE } from './information-filter';
+import { backwardGain, STATE_SIZE } from './information-state';
 
 /**
  * Products of the smoother's backward gains over any range of points. The smoothed states form a Markov chain, and

@@ -1,6 +1,6 @@
 import { BaselineError } from '../baseline-error';
 import type { FilteredSeries } from './filtered-series';
-import { advance, combine, STATE_SIZE, type Posterior } from './information-filter';
+import { advance, combine, STATE_SIZE, type Posterior } from './information-state';
 
 /** A time among the points, as a point without weight after all points that are not later. */
 export interface InsertedTime {

@@ -1,6 +1,7 @@
 import type { PreparedSeries } from '../prepared-series';
 import { scaledInverse, outOfRange, type FilteredSeries } from './filtered-series';
-import { combine, filterBackward, filterRange, STATE_SIZE, type Posterior } from './information-filter';
+import { filterBackward, filterRange } from './filter-passes';
+import { combine, STATE_SIZE, type Posterior } from './information-state';
 import { LotDeleter, nothingLeft } from './lot-deletion';
 import { determinantConstant, logDeterminant, penalisedRss, restrictedDeviance } from './restricted-likelihood';
 

@@ -1,4 +1,4 @@
-import { combine, STATE_SIZE, type Posterior } from './information-filter';
+import { combine, STATE_SIZE, type Posterior } from './information-state';
 import type { FilteredSeries } from './filtered-series';
 import type { GainProducts } from './gain-products';
 

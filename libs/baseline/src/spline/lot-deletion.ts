@@ -1,5 +1,5 @@
 import { BaselineError } from '../baseline-error';
-import type { Posterior } from './information-filter';
+import type { Posterior } from './information-state';
 import type { FilteredSeries } from './filtered-series';
 import { GainProducts } from './gain-products';
 import { LotBlock } from './lot-block';

@@ -1,4 +1,4 @@
-import { advance, backwardGain, combine, STATE_SIZE, type Posterior } from './information-filter';
+import { advance, backwardGain, combine, STATE_SIZE, type Posterior } from './information-state';
 import type { FilteredSeries } from './filtered-series';
 import { multiply } from './gain-products';
 

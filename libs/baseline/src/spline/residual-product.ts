@@ -1,10 +1,10 @@
 import { BaselineError } from '../baseline-error';
 import type { FilteredSeries } from './filtered-series';
-import { STATE_SIZE } from './information-filter';
+import { STATE_SIZE } from './information-state';
 
 /**
  * A x = V W (I - S) x: the pulling weights times the residuals of another vector fitted with the same S. The forward matrices are those of the filtered series;
- * only the vectors h are carried through again (see information-filter). x has its weighted line taken off first, which A does not see. O(n).
+ * only the vectors h are carried through again (see information-state). x has its weighted line taken off first, which A does not see. O(n).
  * @param x one number a point, finite @returns raw weights * (x - S x); 0 for points that do not pull
  * @throws BaselineError 'bad-argument' (length), 'non-finite', 'ill-posed'
  */

@@ -1,5 +1,5 @@
 import type { PreparedSeries } from '../prepared-series';
-import { STATE_SIZE } from './information-filter';
+import { STATE_SIZE } from './information-state';
 
 /**
  * The determinant in the restricted likelihood, log|A| - (m - 2) log alpha (Wahba 1985, Ann. Statist. 13:1378), with A = W + alpha K on the m

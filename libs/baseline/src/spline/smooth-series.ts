@@ -1,5 +1,6 @@
 import type { PreparedSeries } from '../prepared-series';
-import { filterRange, STATE_SIZE } from './information-filter';
+import { filterRange } from './filter-passes';
+import { STATE_SIZE } from './information-state';
 import { smoothBackward, type SmoothedPoints } from './smoothing-pass';
 
 /** Up to this many points all forward states are kept (3 MB); beyond, memory costs more than working them out once more. */

@@ -1,4 +1,4 @@
-import { STATE_SIZE } from './information-filter';
+import { STATE_SIZE } from './information-state';
 import type { PreparedSeries } from '../prepared-series';
 
 // Looked up once: a look-up of Math for every point costs more than the arithmetic where globals are intercepted.

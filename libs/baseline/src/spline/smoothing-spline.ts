@@ -21,7 +21,7 @@ export interface SmoothingSplineFit extends BaselineFit {
  * Smoothing spline: the natural cubic spline g that minimises  sum w_p (y_p - g(t_p))^2 + lambda * integral g''(t)^2 dt, over pulling lots, w the weights
  * times the lots' factors (Green & Silverman 1994, ch. 2).
  *
- * Computed in its state-space form (Wahba 1978; Kohn & Ansley 1987; see information-filter) in O(n), which keeps its digits for slow baselines of long
+ * Computed in its state-space form (Wahba 1978; Kohn & Ansley 1987; see information-state) in O(n), which keeps its digits for slow baselines of long
  * series where the banded system of Reinsch (1967) loses them. lambda is in raw units (t in s); SciPy's `lam` is the same, R's `lambda` is
  * lambda / (range^3 * mean weight). Bands are the posterior of the integrated Wiener process (Wahba 1983, JRSS B 45:133) with sigma^2 = 1: the weights
  * are absolute.

@@ -1,5 +1,5 @@
 import type { StepEstimates } from '../baseline-fit';
-import { STATE_SIZE } from './information-filter';
+import { STATE_SIZE } from './information-state';
 import type { FilteredSeries } from './filtered-series';
 
 /** Where the baseline follows a step but for this share of what either side knows, the estimate has no digits. */

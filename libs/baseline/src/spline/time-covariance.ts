@@ -1,6 +1,6 @@
 import type { FilteredSeries } from './filtered-series';
 import { multiply, type GainProducts } from './gain-products';
-import { backwardGain, STATE_SIZE } from './information-filter';
+import { backwardGain, STATE_SIZE } from './information-state';
 import { insertTime } from './inserted-time';
 
 /**
