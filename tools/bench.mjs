@@ -50,7 +50,7 @@ async function main() {
       });
     const args = process.argv.slice(2);
     if (args[0] === 'baseline') {
-      await run('bench-baseline.js', args.slice(1), { BENCH_SCRIPTS: path.join(root, 'tools', 'bench', 'baseline') });
+      await run('bench-baseline.js', args.slice(1), { BENCH_ROOT: root });
       return;
     }
     const cluster = await startThrowAwayCluster(programs, CLUSTER_OPTIONS);

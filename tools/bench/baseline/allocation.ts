@@ -3,7 +3,9 @@ import { setTimeout as pause } from 'node:timers/promises';
 import { collectGarbage } from './clock';
 
 const CANDIDATES = 200;
+/** Until the code is compiled for good: interpreted code puts every intermediate number on the heap. */
 const WARM_UP_CANDIDATES = 50;
+const WARM_UP_SECONDS = 1;
 /** Each candidate is this much smoother than the one before. */
 const STEP = 1.05;
 
@@ -33,7 +35,8 @@ export async function measureAllocation(
   const observer = new PerformanceObserver((list) => {
     collections += list.getEntries().length;
   });
-  for (let k = 0; k < WARM_UP_CANDIDATES; k++) evaluate(lambda * STEP ** k);
+  const end = performance.now() + 1000 * WARM_UP_SECONDS;
+  for (let k = 0; k < WARM_UP_CANDIDATES || performance.now() < end; k++) evaluate(lambda * STEP ** (k % CANDIDATES));
   collectGarbage();
   await pause(50);
   observer.observe({ entryTypes: ['gc'] });

@@ -1,6 +1,7 @@
+import { longSeries } from '../../../libs/baseline/src/testing/long-series';
 import { measure } from './clock';
 import { fitAndScore, fixedLambda } from './ours';
-import { inLots, longSeries } from './series';
+import { inLots } from './series';
 
 const LOTS = 360;
 const POINTS_PER_LOT = 16;

@@ -1,4 +1,5 @@
 import { cpus } from 'node:os';
+import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { measureEvaluators } from './evaluators';
 import { measureLots } from './lot-figures';
@@ -12,10 +13,13 @@ const NOTE =
   'baselines of long series: their curves are wrong where their difference from ours is large and that of R with default knots is not. ' +
   'R with default knots differs by about 1e-4 for its basis and for its rounded 1/3.';
 
-const positive = (text: string, option: string) => {
+/** Fewest points of a series that is fitted. */
+const LEAST_POINTS = 100;
+
+const wholeNumber = (text: string, option: string, least: number) => {
   const value = Number(text);
-  if (!Number.isInteger(value) || value < 1)
-    throw new Error(`--${option} takes whole numbers of at least 1, not "${text}"`);
+  if (!(Number.isInteger(value) && value >= least))
+    throw new Error(`--${option} takes whole numbers of at least ${least}, not "${text}"`);
   return value;
 };
 
@@ -27,22 +31,23 @@ async function main(): Promise<void> {
       json: { type: 'boolean', default: false },
     },
   });
-  const { BENCH_FOLDER: folder, BENCH_SCRIPTS: scripts } = process.env;
-  if (!folder || !scripts) throw new Error('run it with: npm run bench -- baseline');
-  const repeats = positive(values.repeats, 'repeats');
-  const counts = values.sizes.split(',').map((size) => positive(size, 'sizes'));
+  const { BENCH_FOLDER: folder, BENCH_ROOT: root } = process.env;
+  if (!folder || !root) throw new Error('run it with: npm run bench -- baseline');
+  const repeats = wholeNumber(values.repeats, 'repeats', 1);
+  const counts = values.sizes.split(',').map((size) => wholeNumber(size, 'sizes', LEAST_POINTS));
   const say = (text: string) => (values.json ? process.stderr : process.stdout).write(`${text}\n`);
-  const { found, missing } = findYardsticks(scripts, folder);
+  const { found, missing } = findYardsticks(join(root, 'tools', 'bench', 'baseline'), folder);
   for (const name of missing) say(`${name} is not installed: left out.`);
 
+  const quadReference = join(root, 'fixtures', 'reference', 'quad-smoothing-spline.json');
   const sizes: SizeFigures[] = [];
   for (const n of counts) {
     say(`measuring ${n.toLocaleString('en')} points …`);
-    sizes.push(measureSize(n, repeats, found));
+    sizes.push(measureSize(n, repeats, found, quadReference));
   }
   const lots = measureLots(repeats);
   const allocated = await measureEvaluators();
-  const targets = judgeTargets(sizes);
+  const targets = judgeTargets(sizes, allocated);
   const programs = [`Node ${process.versions.node}`, ...found.map(({ name, program }) => program ?? name)];
   if (values.json) {
     const figures = { programs, processor: cpus()[0]?.model, repeats, sizes, lots, allocated, targets };

@@ -74,7 +74,12 @@ export function sizeTables(sizes: SizeFigures[]): string {
     sizes,
     LABELS.map(([route, label]) => [label, of(route, 'edf')]),
   );
-  return [seconds, ratios, differences, freedom].join('\n\n');
+  const exactness = table('Ours against quadruple precision', sizes, [
+    ['fitted values / range', ({ exactness }) => short(exactness?.fitted)],
+    ['degrees of freedom, relative', ({ exactness }) => short(exactness?.edf)],
+    ['leverages, relative', ({ exactness }) => short(exactness?.leverage)],
+  ]);
+  return [seconds, ratios, differences, freedom, exactness].join('\n\n');
 }
 
 export function lotLines({ points, lots, single, contiguous, interleaved }: LotFigures): string {
@@ -98,6 +103,9 @@ export function allocationLines(figures: AllocationFigures[]): string {
 export function targetLines(targets: Target[]): string {
   const word = ({ isMet }: Target) => (isMet === undefined ? 'not measured' : isMet ? 'met' : 'NOT MET');
   return targets
-    .map((target) => `${target.text}: ${target.ratio === undefined ? '' : `${short(target.ratio)} ×, `}${word(target)}`)
+    .map((target) => {
+      const measured = target.value === undefined ? '' : `${short(target.value)}${target.isRatio ? ' ×' : ''}, `;
+      return `${target.text}: ${measured}${word(target)}`;
+    })
     .join('\n');
 }

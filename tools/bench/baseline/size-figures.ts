@@ -1,7 +1,9 @@
 import type { Observations } from '@app/baseline';
 import { measure, median } from './clock';
+import { shareOfRange } from './curves';
+import { type Exactness, measureExactness } from './exactness';
 import { chooseFitAndScore, fitAndScore, fixedLambda, floorOf, makeOutputs } from './ours';
-import { longSeries } from './series';
+import { longSeries } from '../../../libs/baseline/src/testing/long-series';
 import type { Yardstick } from './yardsticks';
 
 export interface RouteFigures {
@@ -17,10 +19,11 @@ export interface SizeFigures {
   lambda: number;
   /** By route: ours-fixed, ours-gcv, floor, floor-fresh, r-fixed, r-gcv, r-all-fixed, r-all-gcv, scipy-fixed; those of missing programs are absent. */
   routes: Record<string, RouteFigures>;
+  exactness?: Exactness;
 }
 
 /** Every route at one size, one after the other. */
-export function measureSize(n: number, repeats: number, yardsticks: Yardstick[]): SizeFigures {
+export function measureSize(n: number, repeats: number, yardsticks: Yardstick[], quadReference: string): SizeFigures {
   const series = longSeries(n);
   const lambda = fixedLambda(series);
   const routes: Record<string, RouteFigures> = {};
@@ -32,7 +35,7 @@ export function measureSize(n: number, repeats: number, yardsticks: Yardstick[])
       routes[name] = { seconds, median: median(seconds), edf, difference: shareOfRange(route.fitted, own) };
     }
   }
-  return { n, lambda, routes };
+  return { n, lambda, routes, exactness: measureExactness(quadReference, series) };
 }
 
 function ours(series: Observations, lambda: number, repeats: number, routes: Record<string, RouteFigures>) {
@@ -54,18 +57,4 @@ function ours(series: Observations, lambda: number, repeats: number, routes: Rec
     fitted[name] = timing.last.fit.fitted;
   }
   return fitted;
-}
-
-/** max |a - b| / (max b - min b); NaN anywhere counts as infinitely wrong. */
-export function shareOfRange(a: Float64Array, b: Float64Array): number {
-  let worst = 0;
-  let low = Infinity;
-  let high = -Infinity;
-  for (let i = 0; i < b.length; i++) {
-    const difference = Math.abs(a[i] - b[i]);
-    if (!(difference <= worst)) worst = Number.isNaN(difference) ? Infinity : difference;
-    low = Math.min(low, b[i]);
-    high = Math.max(high, b[i]);
-  }
-  return worst / (high - low);
 }
