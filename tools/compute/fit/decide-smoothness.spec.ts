@@ -31,6 +31,17 @@ describe('the shortest period', () => {
     ).toBeCloseTo(1, 12);
   });
 
+  it('is refused where rows are so sparse that kappa is 0', async () => {
+    const { code, stderr } = await run(
+      ['fit', '--lambda', '1', '--shortest-period', '2'],
+      't,y\n0,1\n1,2\n2,1\n1000,3\n',
+    );
+    expect({ code, stderr }).toEqual({
+      code: 2,
+      stderr: 'compute: --shortest-period 2: the 90 % quantile of the density of weight, kappa, is 0\n',
+    });
+  });
+
   it('decides where a criterion or degrees of freedom would follow faster movements', async () => {
     const gcv = await fit(['--choose', 'gcv', '--shortest-period', '16'], nile);
     expect(gcv.smoothness.atFloor).toBe(true);
