@@ -16,10 +16,12 @@ const NOTE =
 /** Fewest points of a series that is fitted. */
 const LEAST_POINTS = 100;
 
+class UsageError extends Error {}
+
 const wholeNumber = (text: string, option: string, least: number) => {
   const value = Number(text);
   if (!(Number.isInteger(value) && value >= least))
-    throw new Error(`--${option} takes whole numbers of at least ${least}, not "${text}"`);
+    throw new UsageError(`--${option} takes whole numbers of at least ${least}, not "${text}"`);
   return value;
 };
 
@@ -58,7 +60,8 @@ async function main(): Promise<void> {
   say(`${sizeTables(sizes)}\n\n${NOTE}\n\n${lotLines(lots)}\n${allocationLines(allocated)}\n\n${targetLines(targets)}`);
 }
 
-main().catch((error: unknown) => {
-  process.stderr.write(`${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`);
-  process.exit(1);
+main().catch((error: Error & { code?: string }) => {
+  const isUsage = error instanceof UsageError || error.code?.startsWith('ERR_PARSE_ARGS');
+  process.stderr.write(`${isUsage ? error.message : (error.stack ?? error.message)}\n`);
+  process.exit(isUsage ? 2 : 1);
 });

@@ -36,7 +36,7 @@ function table(title: string, sizes: SizeFigures[], rows: [label: string, cell: 
     .map(([label, cell]) => ({ label, cells: sizes.map((size) => cell(size) ?? '') }))
     .filter(({ cells }) => cells.some(Boolean))
     .map(({ label, cells }) => line(label, cells));
-  return [line(title, heads), ...body].join('\n');
+  return body.length === 0 ? '' : [line(title, heads), ...body].join('\n');
 }
 
 /** Four significant digits or so, without exponents where they can be avoided. */
@@ -79,7 +79,7 @@ export function sizeTables(sizes: SizeFigures[]): string {
     ['degrees of freedom, relative', ({ exactness }) => short(exactness?.edf)],
     ['leverages, relative', ({ exactness }) => short(exactness?.leverage)],
   ]);
-  return [seconds, ratios, differences, freedom, exactness].join('\n\n');
+  return [seconds, ratios, differences, freedom, exactness].filter(Boolean).join('\n\n');
 }
 
 export function lotLines({ points, lots, single, contiguous, interleaved }: LotFigures): string {
