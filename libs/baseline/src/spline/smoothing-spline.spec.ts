@@ -162,30 +162,6 @@ describe('period and penalty', () => {
     }
     expect(cross / square).toBeCloseTo(gain, 4);
   });
-
-  // Shares computed with numpy for a dense even grid: half-amplitude period over the lot's duration, interior and newest lot.
-  it.each([
-    [2, 0.742, 0.892],
-    [4, 0.484, 0.82],
-    [8, 0.263, 0.644],
-    [16, 0.14, 0.427],
-  ])('with T of %p lots, a shifted lot left in the fit pulls it by the known share', (lots, interior, last) => {
-    const size = 40;
-    const n = size * 6 * lots + size;
-    const share = (from: number) => {
-      const y = Array.from({ length: n }, (_, i) => (i >= from && i < from + size ? 1 : 0));
-      const fit = fitSmoothingSpline(
-        observations(
-          y.map((_, i) => i),
-          y,
-        ),
-        lambdaForPeriod(1, lots * size),
-      );
-      return fit.fitted.slice(from, from + size).reduce((a, b) => a + b) / size;
-    };
-    expect(share(size * 3 * lots)).toBeCloseTo(interior, 2);
-    expect(Math.abs(share(n - size) - last)).toBeLessThan(0.01);
-  });
 });
 
 describe('scale and origin', () => {
