@@ -121,11 +121,11 @@ function isModerate(x: number): boolean {
 type LotOrder = Pick<PreparedSeries, 'pointsByLot' | 'lotStart'>;
 
 function sortByLot(lot: Int32Array, lotCount: number): LotOrder {
-  const lotStart = new Int32Array(lotCount + 1);
-  for (let i = 0; i < lot.length; i++) lotStart[lot[i] + 1]++;
-  for (let j = 0; j < lotCount; j++) lotStart[j + 1] += lotStart[j];
+  // Counts go in two places late: sums then make start[j + 1] the start of lot j, and moving each along its points makes it the end, the next lot's start.
+  const start = new Int32Array(lotCount + 2);
+  for (let i = 0; i < lot.length; i++) start[lot[i] + 2]++;
+  for (let j = 1; j <= lotCount; j++) start[j + 1] += start[j];
   const pointsByLot = new Int32Array(lot.length);
-  const next = lotStart.slice(1);
-  for (let i = lot.length - 1; i >= 0; i--) pointsByLot[--next[lot[i]]] = i;
-  return { pointsByLot, lotStart };
+  for (let i = 0; i < lot.length; i++) pointsByLot[start[lot[i] + 1]++] = i;
+  return { pointsByLot, lotStart: start.subarray(0, lotCount + 1) };
 }

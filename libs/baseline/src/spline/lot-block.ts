@@ -82,10 +82,10 @@ export class LotBlock {
       total += a[s] * sum;
       work[s] = root[s] * sum;
     }
-    if (!this.isPulling) return total;
+    if (!this.isPulling) return Math.max(0, total);
     this.solveLower(work, 0);
     for (let s = 0; s < m; s++) total += work[s] * work[s];
-    return total;
+    return Math.max(0, total);
   }
 
   /** Writes Cov(g_I | others), m x m, scaled; after {@link delete}. */

@@ -38,16 +38,16 @@ export class LotDeleter {
 
   /**
    * Residuals of a lot's points, their weighted mean r = a' e and Var r = a' Cov a, in O(m) beyond the lot's span.
-   * @param count weight of each point of the series in its lot's mean @returns false when the other lots do not determine a line
+   * @param count weight of each point of the series in its lot's mean; none: all alike @returns false when the other lots do not determine a line
    */
-  score(lot: number, count: Float64Array): boolean {
+  score(lot: number, count?: Float64Array): boolean {
     const { pointsByLot, lotStart, weightScale, obs } = this.filtered.series;
     const from = lotStart[lot];
     const m = lotStart[lot + 1] - from;
     this.reserve(m);
     const { share } = this;
     let total = 0;
-    for (let s = 0; s < m; s++) total += share[s] = count[pointsByLot[from + s]];
+    for (let s = 0; s < m; s++) total += share[s] = count === undefined ? 1 : count[pointsByLot[from + s]];
     let own = 0;
     for (let s = 0; s < m; s++) {
       share[s] /= total;

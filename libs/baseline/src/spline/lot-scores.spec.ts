@@ -112,6 +112,40 @@ describe('lots spread out among others', () => {
       }
     }
   });
+  it('have the same both ways over weights of 18 decades, gaps of a millionth, ties and any smoothness', () => {
+    const random = lcg(58);
+    const p: Posterior = { value: 0, slope: 0, variance: 0, covariance: 0, slopeVariance: 0 };
+    let compared = 0;
+    for (let repeat = 0; repeat < 300; repeat++) {
+      const n = 20 + Math.floor(random() * 40);
+      const lots = 3 + Math.floor(random() * 12);
+      let at = 0;
+      const t = Array.from({ length: n }, () => (at += random() < 0.1 ? 0 : 10 ** (-6 * random())));
+      const series = observations(
+        t,
+        t.map((x) => Math.sin(x) + random() - 0.5),
+        t.map((_, i) => (i < lots ? i : Math.floor(random() * lots))),
+        t.map(() => 10 ** (18 * random() - 9)),
+      );
+      const filtered = filter(series, 10 ** (16 * random() - 8));
+      const { lotStart, pointsByLot, r, weightScale } = filtered.series;
+      const [block, walk] = [new LotBlock(filtered), new LotWalk(filtered)];
+      for (let lot = 0; lot < lots; lot++) {
+        const m = lotStart[lot + 1] - lotStart[lot];
+        block.fill(lotStart[lot], m, filtered.gains);
+        if (!block.delete()) continue;
+        walk.walk(lotStart[lot], m);
+        for (let s = 0; s < m; s++) {
+          const i = pointsByLot[lotStart[lot] + s];
+          expect(walk.posterior(s, p)).toBe(true);
+          const error = Math.max(1, Math.sqrt(p.variance + weightScale / series.weight[i]));
+          expect(Math.abs(block.residual[s] - (r[i] - p.value))).toBeLessThan(1e-9 * error);
+          compared++;
+        }
+      }
+    }
+    expect(compared).toBeGreaterThan(3000);
+  });
   it('hold nearly all weight of the fit: then the block declines and the walk gives the numbers', () => {
     const heavy = wavySeries(60, 55, (i) => i % 20);
     heavy.lot.forEach((lot, i) => (heavy.weight[i] = lot === 3 ? 1e12 : heavy.weight[i]));

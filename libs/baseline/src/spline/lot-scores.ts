@@ -23,7 +23,6 @@ export function scoreLots(
   const { n, obs, pointsByLot, lotStart } = filtered.series;
   if (count !== undefined) checkCounts(filtered, count);
   const lotCount = obs.pulls.length;
-  const counts = count ?? new Float64Array(n).fill(1);
   const deletedResidual = new Float64Array(n);
   const residual = new Float64Array(lotCount);
   const variance = new Float64Array(lotCount).fill(Infinity);
@@ -38,7 +37,7 @@ export function scoreLots(
       const s = 1 / (1 - fit.leverage[i]);
       residual[lot] = deletedResidual[i] = (obs.y[i] - fit.fitted[i]) * s;
       variance[lot] = 1 / obs.weight[i] + fit.standardError[i] * fit.standardError[i] * s;
-    } else if (deleter.score(lot, counts)) {
+    } else if (deleter.score(lot, count)) {
       for (let s = 0; s < m; s++) deletedResidual[pointsByLot[from + s]] = deleter.residual[s];
       residual[lot] = deleter.mean;
       variance[lot] = deleter.variance;
