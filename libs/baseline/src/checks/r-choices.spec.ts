@@ -1,10 +1,11 @@
 import { Matrix } from 'ml-matrix';
 import { chooseLambda } from '../choice/choose-lambda';
-import { byTime, rSeries } from './program-series';
+import { byTime, rSeries, sum } from './program-series';
 import { fitSmoothingSpline } from '../spline/smoothing-spline';
 import type { Observations } from '../observations';
 import { roughness } from '../testing/naive-spline';
-import { rangeOf } from '../testing/reference';
+import { rangeOf, reference, worstDifference } from '../testing/reference';
+import { observations } from '../testing/series';
 
 /** N RSS / (N - edf)^2, N readings. */
 function gcv(obs: Observations, lambda: number): number {
@@ -55,3 +56,52 @@ describe.each(rSeries())(
     }
   },
 );
+
+interface LongChoice {
+  n: number;
+  choices: { lambda: number; df: number; crit: number };
+  /** At every 800th point. */
+  fitted: number[];
+}
+
+// R's default knots, some 200, hold a slow curve of 17 degrees of freedom to 1e-6 of its range. Here the penalty is searched on a reduced basis, too.
+describe('the choice by GCV on a long series agrees with smooth.spline with its default knots', () => {
+  const { n, choices: r, fitted } = reference<{ long: LongChoice }>('r-smooth-spline.json').long;
+  const index = Array.from({ length: n }, (_, i) => i);
+  const noise = (i: number) => ((((i * i) % 100003) * i + 17 * i * i) % 100003) / 100003 - 0.5;
+  const y = index.map((i) => Math.sin((7 * i) / n) + noise(i));
+  const weight = index.map((i) => 1 + (i % 3));
+  const mean = sum(weight) / n;
+  const obs = observations(
+    index,
+    y,
+    undefined,
+    weight.map((w) => w / mean),
+  );
+  const at = fitted.map((_, k) => 800 * k);
+
+  it('at its penalty, in criterion, degrees of freedom and curve', () => {
+    const lambda = r.lambda * (n - 1) ** 3;
+    const fit = fitSmoothingSpline(obs, lambda);
+    expect(Math.abs(gcv(obs, lambda) / r.crit - 1)).toBeLessThan(1e-7);
+    expect(Math.abs(fit.edf / r.df - 1)).toBeLessThan(3e-4);
+    expect(
+      worstDifference(
+        at.map((i) => fit.fitted[i]),
+        fitted,
+      ),
+    ).toBeLessThan(2e-6 * rangeOf(fitted));
+  });
+  it('in what is chosen', () => {
+    const { lambda } = chooseLambda(obs, { rule: 'gcv', floorLambda: 0 });
+    const fit = fitSmoothingSpline(obs, lambda);
+    expect(gcv(obs, lambda)).toBeLessThan(gcv(obs, r.lambda * (n - 1) ** 3) * (1 + 1e-9));
+    expect(Math.abs(fit.edf / r.df - 1)).toBeLessThan(1e-3);
+    expect(
+      worstDifference(
+        at.map((i) => fit.fitted[i]),
+        fitted,
+      ),
+    ).toBeLessThan(1e-5 * rangeOf(fitted));
+  });
+});
