@@ -45,7 +45,7 @@ export function chooseBaseline(obs: Observations, options: ChooseBaselineOptions
   if (method === 'smoothing-spline') return chooseSmoothingSpline(obs, options, isLine);
   if (!(isLine && method === 'b-spline')) return chooseRegression(obs, method, options);
   const found = chooseRegression(obs, 'polynomial', rule === 'edf' ? { ...options, edf: 2 } : options);
-  return { ...found, isAtFloor: true };
+  return { ...found, isAtFloor: true, isAtBound: 'line' };
 }
 
 function chooseSmoothingSpline(obs: Observations, options: ChooseBaselineOptions, isLine: boolean): ChosenBaseline {

@@ -14,7 +14,7 @@ const LEAST_RATIO = 10;
 /** Most intervals: enough for 1,600 degrees of freedom. */
 const MOST_INTERVALS = 16384;
 /** Fewest points an interval on average. */
-const LEAST_POINTS = 4;
+const LEAST_POINTS = 2;
 /** Degrees of freedom of points even in time: 1 + (lambda / sum w range^4 ...)^(-1/4) / (2 sqrt 2), from the eigenvalues ((j + 1/2) pi)^4 of a free beam. */
 const EVEN_OFFSET = 1;
 /** A sum of squares below this share of the line's has lost too many digits as a difference. */

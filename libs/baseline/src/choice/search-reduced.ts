@@ -11,9 +11,15 @@ const RATIOS = [32, 128];
 /** Largest relative difference from the exact degrees of freedom at the choice. */
 const EDF_AGREEMENT = 1e-3;
 
+/** Up to so many points, penalties for which the basis is too coarse are looked at exactly; in longer series they are left alone. */
+const MOST_EXACT_POINTS = 20000;
+
 /**
- * The search of searchLambda by the reduced criterion, with one exact evaluation at the best minimum, which replaces it in the answer. The curve begins where the basis is fine enough.
- * @returns undefined where the basis does not serve: a minimum lies at the end of what it can resolve, the exact degrees of freedom differ, or digits were lost
+ * The search of searchLambda by the reduced criterion, with one exact evaluation at the best minimum, which replaces it in the answer. Penalties for which no basis
+ * is fine enough (more than 1,600 degrees of freedom, or a tenth of the points) are evaluated exactly in series of up to 20,000 points. In longer ones the
+ * curve begins above them: a second minimum there, beyond a rise, is not found.
+ * @returns undefined where the basis does not serve: the criterion still falls at the end of what it can resolve, the exact degrees of freedom differ by more
+ *   than 0.1 %, or digits were lost
  */
 export function searchReduced(
   series: PreparedSeries,
@@ -24,15 +30,19 @@ export function searchReduced(
 ): LambdaSearch | undefined {
   for (const ratio of RATIOS) {
     const reduced = new ReducedCriterion(series, low, ratio);
-    const from = Math.max(low, reduced.lowest);
+    const from = series.n > MOST_EXACT_POINTS ? Math.max(low, reduced.lowest) : low;
     if (!(from < high)) return undefined;
     let hasFailed = false;
-    const checked = (evaluate: Evaluate) => (lambda: number) => {
-      const candidate = evaluate(lambda);
-      if (Number.isNaN(candidate.value)) hasFailed = true;
-      return candidate;
+    const evaluatorFrom = (least: number): Evaluate => {
+      if (least < reduced.lowest * (1 - 1e-9)) return exact;
+      const evaluate = reduced.evaluatorFrom(least, rule);
+      return (lambda) => {
+        const candidate = evaluate(lambda);
+        if (Number.isNaN(candidate.value)) hasFailed = true;
+        return candidate;
+      };
     };
-    const search = searchLambda(from, high, (lambda) => checked(reduced.evaluatorFrom(lambda, rule)));
+    const search = searchLambda(from, high, evaluatorFrom);
     const best = bestOf(search.minima);
     if (hasFailed || best === undefined) return undefined;
     if (from > low && search.minima.some((c) => isNear(c.smoothness, from))) return undefined;
