@@ -16,13 +16,13 @@ export interface FilteredSeries {
 
 /** A filtered series whose states and gains are worked out when something asks for them, and kept. */
 export class LazilyFiltered implements FilteredSeries {
+  private forwardStates?: Float64Array;
   private backwardStates?: Float64Array;
   private gainProducts?: GainProducts;
 
   constructor(
     readonly series: PreparedSeries,
     readonly q: number,
-    private forwardStates?: Float64Array,
   ) {}
 
   get forward(): Float64Array {

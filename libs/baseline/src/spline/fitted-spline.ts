@@ -47,7 +47,7 @@ export class FittedSpline implements SmoothingSplineFit {
     this.curvature = points.curvature;
     this.standardError = points.standardError;
     this.leverage = points.leverage;
-    this.filtered = new LazilyFiltered(series, q, smoothed.forward);
+    this.filtered = new LazilyFiltered(series, q);
     this.logDet = logDeterminant(series, smoothed.lastState, smoothed.logDelta);
     const sums = this.edf + this.weightedRss + this.penalty + this.logDet;
     const ends = points.slope[0] + points.slope[n - 1] + points.fitted[0] + points.fitted[n - 1];

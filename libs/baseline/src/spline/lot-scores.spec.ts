@@ -2,8 +2,7 @@ import { BaselineError } from '../baseline-error';
 import type { Observations } from '../observations';
 import { prepareSeries } from '../prepared-series';
 import { LazilyFiltered, scaledInverse } from './filtered-series';
-import { filterForward } from './filter-passes';
-import { STATE_SIZE, type Posterior } from './information-state';
+import type { Posterior } from './information-state';
 import { LotBlock } from './lot-block';
 import { LotWalk } from './lot-walk';
 import { fitSmoothingSpline } from './smoothing-spline';
@@ -73,10 +72,7 @@ describe('lots spread out among others', () => {
   /** Filtered at lambda, as a fit has it. */
   function filter(obs: Observations, lambda: number): LazilyFiltered {
     const series = prepareSeries(obs);
-    const q = scaledInverse(series, lambda);
-    const forward = new Float64Array(STATE_SIZE * series.n);
-    filterForward(series.gap, series.pull, series.r, q, forward);
-    return new LazilyFiltered(series, q, forward);
+    return new LazilyFiltered(series, scaledInverse(series, lambda));
   }
   const uniform = lcg(53);
   const obs = withFactors(

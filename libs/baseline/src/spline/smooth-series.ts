@@ -3,10 +3,12 @@ import { filterRange } from './filter-passes';
 import { STATE_SIZE } from './information-state';
 import { smoothBackward, type SmoothedPoints } from './smoothing-pass';
 
-/** Up to this many points all forward states are kept (3 MB); beyond, memory costs more than working them out once more. */
-const KEPT_POINTS = 65536;
-/** Points whose forward states are worked out together in a long series: 100 kB, which stay in the processor's cache. */
+/** Up to this many points the forward states of a whole series are held at once, in 3 MB that are kept for the next series. */
+const WHOLE_POINTS = 65536;
+/** Points whose forward states are worked out together in a longer series: 100 kB, which stay in the processor's cache. */
 const BLOCK = 2048;
+/** Fresh memory for the states would cost more than working them out. */
+let scratch = new Float64Array(0);
 
 /** A smoothed series: arrays in raw units, sums in scaled units. */
 export interface SmoothedSeries {
@@ -17,20 +19,19 @@ export interface SmoothedSeries {
   logDelta: number;
   /** The state before the last point. */
   lastState: Float64Array;
-  /** All forward states, where they were kept. */
-  forward?: Float64Array;
 }
 
 /**
  * Forward and backward over a series, O(n). Of a long series the forward pass keeps the state before each block only, and each block's states are worked out again
- * just before the backward pass reaches it: the memory beyond the answer is n/BLOCK states and one block.
+ * just before the backward pass reaches it: the memory beyond the answer is n/BLOCK states and one block. No state outlives the call.
  * @returns undefined when the numbers leave the range of doubles
  */
 export function smoothSeries(series: PreparedSeries, q: number): SmoothedSeries | undefined {
   const { n, gap, pull, r } = series;
-  const size = n <= KEPT_POINTS ? n : BLOCK;
+  const size = n <= WHOLE_POINTS ? n : BLOCK;
   const blocks = Math.ceil(n / size);
-  const states = new Float64Array(STATE_SIZE * size);
+  if (scratch.length < STATE_SIZE * size) scratch = new Float64Array(STATE_SIZE * size);
+  const states = scratch;
   const starts = new Float64Array(STATE_SIZE * blocks);
   const state = new Float64Array(STATE_SIZE);
   let logDelta = 0;
@@ -58,5 +59,5 @@ export function smoothSeries(series: PreparedSeries, q: number): SmoothedSeries 
     if (!smoothBackward(series, q, from, to, states, carry, points)) return undefined;
   }
   const { edf, rss, penalty } = carry;
-  return { points, edf, rss, penalty, logDelta, lastState, forward: blocks === 1 ? states : undefined };
+  return { points, edf, rss, penalty, logDelta, lastState };
 }
