@@ -19,12 +19,18 @@ import { pullingTimes } from './regression-range';
  * - 'gcv': N RSS / (N - edf)^2 over the N pulling points (Craven & Wahba 1979, Numer. Math. 31:377); 'gcv14': N RSS / (N - 1.4 edf)^2, inadmissible once
  *   1.4 edf >= N (Kim & Gu 2004, J. R. Statist. Soc. B 66:337).
  * - 'reml': -2 log restricted likelihood (Wahba 1985, Ann. Statist. 13:1378); smoothing spline only.
- * - 'edf': nothing is minimised; the fit has the degrees of freedom asked for, for the smoothing spline to 1e-11.
+ * - 'edf': nothing is minimised; the fit has the degrees of freedom asked for, for the smoothing spline to 1e-10.
  *
  * Smoothing spline: 25 penalties evenly spaced in log lambda, from the floor (without one: near interpolation) to the straight line, then Brent's method from
  * every local minimum among them, to 1e-4 of lambda; all are returned, the best decides. When the points lie on a line to rounding, no
  * criterion has a minimum, and the line is chosen. Regression: every number of knots up to 40 (degree 1 to 4) that the distinct times allow. Ties go to the smoother.
  * Candidates for which a pulling lot cannot be left out, or which the points do not determine, are left out of the curve.
+ *
+ * In series of more than 3,000 points GCV and REML are looked for on penalised cubic B-splines on equal intervals, at least 10 a degree of freedom, and the best is
+ * then evaluated exactly: its edf and value are those of the exact fit. Against the exact search (4,000 to 20,000 points, even, in shifts and clustered) lambda
+ * differs by less than 0.2 %, edf by less than 0.05 %, the criterion by less than 1e-9 of itself; values on the rest of the curve by less than 1e-5. The exact edf
+ * must agree to 0.1 %, or the search is made exactly. Above 20,000 points penalties with more than 1,600 degrees of freedom are looked at only if the criterion
+ * still falls there; the curve then ends before them. 'lot-cv' is exact at any length, and 'edf' polished exactly.
  *
  * With a shortest drift period T, lambda is at least kappa (T/2 pi)^4 (see lambdaForPeriod; kappa from the weights as given, over all points) and the number of
  * knots at most 2 window/T - 1, at least T/2 apart (degree at most 2 window/T); when T exceeds the window, the answer is the straight line (for a b-spline, which

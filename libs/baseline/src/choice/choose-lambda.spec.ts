@@ -20,16 +20,17 @@ function naiveLotCv(obs: Observations, lambda: number): number {
     const own = fitted.map((_, i) => i).filter((i) => obs.lot[i] === lot);
     const weight = own.reduce((sum, i) => sum + obs.weight[i], 0);
     const mean = own.reduce((sum, i) => sum + obs.weight[i] * (obs.y[i] - fitted[i]), 0) / weight;
-    total += weight * mean * mean;
+    total += obs.pulls[lot] * weight * mean * mean;
   }
   return total / lots;
 }
 
 function naiveGcv(obs: Observations, lambda: number, inflation: number): number {
   const { fitted, covariance } = naiveSpline(obs, lambda);
-  const pulling = fitted.map((_, i) => i).filter((i) => obs.pulls[obs.lot[i]] === 1);
-  const rss = pulling.reduce((sum, i) => sum + obs.weight[i] * (obs.y[i] - fitted[i]) ** 2, 0);
-  const edf = pulling.reduce((sum, i) => sum + obs.weight[i] * covariance.get(i, i), 0);
+  const pulling = fitted.map((_, i) => i).filter((i) => obs.pulls[obs.lot[i]] > 0);
+  const pull = (i: number) => obs.weight[i] * obs.pulls[obs.lot[i]];
+  const rss = pulling.reduce((sum, i) => sum + pull(i) * (obs.y[i] - fitted[i]) ** 2, 0);
+  const edf = pulling.reduce((sum, i) => sum + pull(i) * covariance.get(i, i), 0);
   return (pulling.length * rss) / (pulling.length - inflation * edf) ** 2;
 }
 
@@ -47,12 +48,13 @@ function naiveReml(obs: Observations, lambda: number, variance: 'known' | 'estim
 describe('the criteria agree with refits by dense algebra', () => {
   const lots = wavySeries(32, 21, (i) => Math.floor(i / 4), [2]);
   const mixed = wavySeries(30, 22, (i) => i % 7);
+  const fractional = { ...mixed, pulls: Float64Array.of(1, 0.2, 0, 0.7, 1, 1, 1) };
   it.each<[string, Rule, (obs: Observations, lambda: number) => number]>([
     ['leave-one-lot-out', { rule: 'lot-cv' }, naiveLotCv],
     ['GCV', { rule: 'gcv' }, (obs, lambda) => naiveGcv(obs, lambda, 1)],
     ['GCV inflated by 1.4', { rule: 'gcv', gcvInflation: 1.4 }, (obs, lambda) => naiveGcv(obs, lambda, 1.4)],
   ])('%s', (_name, rule, naive) => {
-    for (const obs of [lots, mixed]) {
+    for (const obs of [lots, mixed, fractional]) {
       const chosen = chooseLambda(obs, { ...rule, floorLambda: 0.01 });
       expect(chosen.curve.length).toBeGreaterThan(20);
       for (const { lambda, value } of chosen.curve) {

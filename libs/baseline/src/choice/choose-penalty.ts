@@ -50,7 +50,7 @@ export function choosePenalty(
   const evaluate = (lambda: number) => exact.evaluate(lambda, rule);
   const { low, high } = penaltyRange(series, floorLambda);
   if (low >= high) {
-    const chosen = evaluate(low);
+    const chosen = admissible(evaluate(low));
     return { chosen, curve: [chosen], minima: [chosen], isAtFloor: true, isAtBound: 'line' };
   }
   const isLine = series.lineRss <= EXACT_LINE_SHARE * series.sumSquares;
@@ -59,11 +59,10 @@ export function choosePenalty(
     (isLong && !isLine ? searchReduced(series, rule, low, high, evaluate) : undefined) ??
     searchLambda(low, high, () => evaluate);
   if (isLine) {
-    const line = evaluate(high);
+    const line = admissible(evaluate(high));
     return { ...search, minima: [line], chosen: line, isAtFloor: false, isAtBound: 'line' };
   }
-  const best = bestOf(search.minima);
-  if (best === undefined) throw new BaselineError('insufficient-data', 'No smoothness leaves anything to judge it by.');
+  const best = admissible(bestOf(search.minima));
   if (!hasOneStandardError) return { ...search, chosen: best, ...where(best.smoothness, low, high, floorLambda) };
   const { standardError } = exact.lotCriterion(best.smoothness);
   const smoother = search.curve.filter((c) => c.smoothness > best.smoothness);
@@ -103,6 +102,11 @@ export function penaltyWithEdf(
 /** The penalty that has these degrees of freedom were the points even in time: (sum w) range^3 / (2 sqrt 2 (edf - 1))^4 (see ReducedCriterion). */
 function evenPenalty(series: PreparedSeries, edf: number): number {
   return (series.totalWeight * series.timeScale ** 3) / (2 * Math.SQRT2 * (edf - 1)) ** 4;
+}
+
+function admissible(candidate: Candidate | undefined): Candidate {
+  if (candidate !== undefined && Number.isFinite(candidate.value)) return candidate;
+  throw new BaselineError('ill-posed', 'No penalty has a criterion within the range of double precision.');
 }
 
 function checkFloor(floorLambda: number): void {

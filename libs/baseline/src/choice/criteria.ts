@@ -33,15 +33,20 @@ export function generalisedCrossValidation(pullCount: number, rss: number, edf: 
 /**
  * Mean of one term a lot and the standard error of that mean, sd / sqrt(J) (Breiman, Friedman, Olshen & Stone 1984, 3.4.3;
  * Hastie, Tibshirani & Friedman 2009, 7.10).
- * @param terms at least `count` numbers @param count J, lots that pull
+ * @param terms at least `count` numbers, >= 0 @param count J, lots that pull
  */
 export function meanOfTerms(terms: Float64Array, count: number): LotCriterion {
   let sum = 0;
-  for (let j = 0; j < count; j++) sum += terms[j];
+  let largest = 0;
+  for (let j = 0; j < count; j++) {
+    sum += terms[j];
+    largest = Math.max(largest, terms[j]);
+  }
   const value = sum / count;
+  if (!(largest > 0 && count > 1)) return { value, standardError: 0 };
   let squares = 0;
-  for (let j = 0; j < count; j++) squares += (terms[j] - value) * (terms[j] - value);
-  return { value, standardError: count > 1 ? Math.sqrt(squares / (count - 1) / count) : 0 };
+  for (let j = 0; j < count; j++) squares += ((terms[j] - value) / largest) ** 2;
+  return { value, standardError: largest * Math.sqrt(squares / (count - 1) / count) };
 }
 
 /**
