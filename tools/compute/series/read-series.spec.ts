@@ -1,4 +1,4 @@
-import { Readable } from 'node:stream';
+import { PassThrough, Readable } from 'node:stream';
 import { readSeries } from './read-series';
 
 const read = (text: string, pieceLength = text.length) => {
@@ -29,6 +29,14 @@ describe('a series', () => {
     const plain = await read('t,y,lot\n1,2,L 1\n2,3,"L,2"\n');
     expect(await read('\ufeff"t", y,lot\r\n"1",2,L 1\r\n2, 3 ,"L,2"\r\n\r\n  \r\n')).toEqual(plain);
     expect(await read('\ufefft,y,lot\r\n1,2,L 1\r\n2,3,"L,2"\r\n', 3)).toEqual(plain);
+  });
+
+  it('tells its first problem while more is still to come', async () => {
+    const input = new PassThrough();
+    const answer = readSeries(input);
+    input.write('t;y\n0;1\n');
+    await expect(answer).rejects.toThrow('row 1: fields are separated by semicolons');
+    expect(input.destroyed).toBe(true);
   });
 
   it('keeps epoch seconds without loss and counts ISO times without a zone', async () => {

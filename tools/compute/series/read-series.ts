@@ -40,12 +40,20 @@ export async function readSeries(input: Readable): Promise<Series> {
     record_delimiter: ['\r\n', '\n', '\r'],
     max_record_size: LONGEST_ROW,
   });
+  // The pipeline may answer a consumer that throws with an abort of its own: the first problem is the one to tell.
+  let problem: unknown;
   try {
     await pipeline(input, parser, async (records: AsyncIterable<string[]>) => {
-      for await (const fields of records) take(fields);
+      try {
+        for await (const fields of records) take(fields);
+      } catch (error) {
+        problem = error;
+        throw error;
+      }
     });
   } catch (error) {
-    throw error instanceof CsvError ? csvProblem(error) : error;
+    const first = problem ?? error;
+    throw first instanceof CsvError ? csvProblem(first) : first;
   }
   if (rows === undefined) throw new InputError('row 1: there is no header; columns are t,y[,w][,lot]');
   return rows.finish();
