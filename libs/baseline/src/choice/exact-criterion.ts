@@ -44,30 +44,19 @@ export class ExactCriterion {
   /** The leave-one-lot-out criterion with its standard error. */
   lotCriterion(lambda: number): LotCriterion {
     this.spline.evaluate(lambda);
-    return this.lotTerms();
+    return this.overLots();
   }
 
   private criterion(rule: PenaltyRule): number {
-    const { edf, rss } = this.spline;
-    if (rule.rule === 'lot-cv') return this.lotTerms().value;
-    if (rule.rule === 'reml') return this.spline[rule.variance];
-    return generalisedCrossValidation(this.series.pullCount, rss, edf, rule.inflation);
+    const { spline, series } = this;
+    if (rule.rule === 'lot-cv') return this.overLots().value;
+    if (rule.rule === 'reml') return spline[rule.variance];
+    return generalisedCrossValidation(series.pullCount, spline.rss, spline.edf, rule.inflation);
   }
 
-  private lotTerms(): LotCriterion {
-    const { pull, pointsByLot, lotStart, weightScale } = this.series;
+  private overLots(): LotCriterion {
+    const { lotStart } = this.series;
     if (this.terms.length < lotStart.length) this.terms = new Float64Array(lotStart.length);
-    const { spline, terms } = this;
-    let count = 0;
-    for (let lot = 0; lot + 1 < lotStart.length; lot++) {
-      const from = lotStart[lot];
-      const to = lotStart[lot + 1];
-      if (to === from || pull[pointsByLot[from]] === 0) continue;
-      let weight = 0;
-      for (let s = from; s < to; s++) weight += pull[pointsByLot[s]];
-      const mean = spline.meanResidual(lot);
-      terms[count++] = weight * weightScale * mean * mean;
-    }
-    return meanOfTerms(terms, count);
+    return meanOfTerms(this.terms, this.spline.lotTerms(this.terms));
   }
 }

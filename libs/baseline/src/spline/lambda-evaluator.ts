@@ -1,13 +1,19 @@
 import type { PreparedSeries } from '../prepared-series';
-import { scaledInverse, outOfRange, type FilteredSeries } from './filtered-series';
-import { filterBackward, filterRange } from './filter-passes';
+import { addBackward } from './backward-sums';
+import { outOfRange, scaledInverse, type FilteredSeries } from './filtered-series';
+import { filterBackward, filterForward, filterRange } from './filter-passes';
 import { combine, STATE_SIZE, type Posterior } from './information-state';
 import { LotDeleter, nothingLeft } from './lot-deletion';
-import { determinantConstant, logDeterminant, penalisedRss, restrictedDeviance } from './restricted-likelihood';
+import { determinantConstant, logDeterminant, restrictedDeviance } from './restricted-likelihood';
+
+/** Points whose forward states are held at once; those of longer series are worked out again block by block, which is cheaper than fresh memory for all. */
+const WHOLE_POINTS = 65536;
+const BLOCK = 2048;
 
 /**
- * What the rules for choosing lambda look at, for one series and many lambda, in buffers that are made once: exact, O(n) a call. The fields speak of the
- * last call of {@link evaluate} (all but the deviances' use of it: {@link evaluateLikelihood}).
+ * What the rules for choosing lambda look at, for one series and many lambda, in buffers that are made once: exact, O(n) a call. The fields speak of the last call of
+ * {@link evaluate}. The information is that of the fit, combined at each point without writing the fit; only the leaving out of lots needs the states of all
+ * points, and makes room for them when it is first asked for.
  * @example
  * const evaluator = new LambdaEvaluator(prepareSeries(obs));
  * evaluator.evaluate(lambda);
@@ -20,37 +26,31 @@ export class LambdaEvaluator implements FilteredSeries {
   rss = 0;
   /** PRSS = RSS + lambda * integral g''^2, raw. */
   prss = 0;
-  /** log|A| - (m - 2) log alpha (see logDeterminant). */
-  logDet = 0;
-  /** -2 log restricted likelihood with sigma^2 = 1: PRSS + logDet; and with sigma^2 profiled out: (N - 2) log(PRSS/(N - 2)) + logDet. */
-  known = 0;
-  estimated = 0;
 
   q = 0;
-  readonly forward: Float64Array;
-  private readonly state = new Float64Array(STATE_SIZE);
   private lambda = NaN;
-  private readonly later: Float64Array;
-  private isLaterStored = false;
-  private readonly constant: number;
+  private readonly block: number;
+  private readonly states: Float64Array;
+  private readonly starts: Float64Array;
+  private readonly state = new Float64Array(STATE_SIZE);
+  private readonly later = new Float64Array(STATE_SIZE);
+  /** edf, RSS and PRSS in scaled weights. */
+  private readonly sums = new Float64Array(3);
+  private logInformation = 0;
+  private constant: number | undefined;
+  private forwardStates: Float64Array | undefined;
+  private backwardStates: Float64Array | undefined;
+  private isForwardStored = false;
+  private isBackwardStored = false;
   private readonly deleter: LotDeleter;
   private readonly posterior: Posterior = { value: 0, slope: 0, variance: 0, covariance: 0, slopeVariance: 0 };
 
   constructor(readonly series: PreparedSeries) {
-    this.forward = new Float64Array(STATE_SIZE * series.n);
-    this.later = new Float64Array(STATE_SIZE * series.n);
-    this.constant = determinantConstant(series);
+    const { n } = series;
+    this.block = n <= WHOLE_POINTS ? n : BLOCK;
+    this.states = new Float64Array(STATE_SIZE * this.block);
+    this.starts = new Float64Array(STATE_SIZE * Math.ceil(n / this.block));
     this.deleter = new LotDeleter(this);
-  }
-
-  /** States before each point from the later points, of the last lambda. */
-  get backward(): Float64Array {
-    if (!this.isLaterStored) {
-      const { gap, pull, r } = this.series;
-      filterBackward(gap, pull, r, this.q, this.later);
-      this.isLaterStored = true;
-    }
-    return this.later;
   }
 
   /**
@@ -59,48 +59,71 @@ export class LambdaEvaluator implements FilteredSeries {
    * @throws BaselineError 'bad-argument', 'non-finite', 'ill-posed'
    */
   evaluate(lambda: number): void {
-    this.evaluateLikelihood(lambda);
-    const { forward, backward } = this;
-    const { n, pull, r, weightScale } = this.series;
-    let edf = 0;
-    let rss = 0;
-    for (let k = 0, i = 0; k < n; k++, i += STATE_SIZE) {
-      const w = pull[k];
-      if (w === 0) continue;
-      const a = forward[i] + w;
-      const c = forward[i + 2];
-      const ab = backward[i];
-      const cb = backward[i + 2];
-      const both = c + cb;
-      const b = forward[i + 1];
-      const bb = backward[i + 1];
-      const det = forward[i + 3] + w * c + backward[i + 3] + a * cb + ab * c + 2 * b * bb;
-      const s = 1 / det;
-      const h0 = forward[i + 4] + w * r[k] + backward[i + 4];
-      const h1 = forward[i + 5] - backward[i + 5];
-      const e = r[k] - (both * h0 + (b - bb) * h1) * s;
-      edf += w * both * s;
-      rss += w * e * e;
+    const { series, block, states, starts, state, later, sums } = this;
+    const { n, gap, pull, r, weightScale } = series;
+    const q = scaledInverse(series, lambda);
+    this.q = q;
+    this.lambda = lambda;
+    this.isForwardStored = false;
+    this.isBackwardStored = false;
+    const blocks = starts.length / STATE_SIZE;
+    state.fill(0);
+    let logDelta = 0;
+    for (let k = 0; k < blocks; k++) {
+      starts.set(state, STATE_SIZE * k);
+      logDelta += filterRange(gap, pull, r, q, k * block, Math.min(n, (k + 1) * block), state, states);
     }
-    this.edf = edf;
-    this.rss = rss * weightScale;
-    if (!Number.isFinite(this.edf + this.rss)) throw outOfRange(lambda);
+    this.logInformation = logDeterminant(series, state, logDelta);
+    later.fill(0);
+    sums.fill(0);
+    for (let k = blocks - 1; k >= 0; k--) {
+      const from = k * block;
+      const to = Math.min(n, from + block);
+      if (k < blocks - 1) {
+        for (let j = 0; j < STATE_SIZE; j++) state[j] = starts[STATE_SIZE * k + j];
+        filterRange(gap, pull, r, q, from, to, state, states);
+      }
+      addBackward(series, q, from, to, states, later, sums);
+    }
+    this.edf = sums[0];
+    this.rss = sums[1] * weightScale;
+    this.prss = sums[2] * weightScale;
+    if (!Number.isFinite(this.edf + this.rss + this.prss + this.logInformation)) throw outOfRange(lambda);
   }
 
-  /** prss, logDet, known and estimated only, by the forward pass alone; edf and rss keep what they were. */
-  evaluateLikelihood(lambda: number): void {
-    const { series, forward } = this;
-    this.q = scaledInverse(series, lambda);
-    this.lambda = lambda;
-    this.isLaterStored = false;
-    this.state.fill(0);
-    const logDelta = filterRange(series.gap, series.pull, series.r, this.q, 0, series.n, this.state, forward);
-    this.prss = penalisedRss(series, forward) * series.weightScale;
-    this.logDet = logDeterminant(series, this.state, logDelta) + this.constant;
-    if (!Number.isFinite(this.prss + this.logDet)) throw outOfRange(lambda);
-    const { known, estimated } = restrictedDeviance(series.pullCount, this.prss, this.logDet);
-    this.known = known;
-    this.estimated = estimated;
+  /** log|A| - (m - 2) log alpha (see logDeterminant). */
+  get logDet(): number {
+    this.constant ??= determinantConstant(this.series);
+    return this.logInformation + this.constant;
+  }
+
+  /** -2 log restricted likelihood with sigma^2 = 1: PRSS + logDet. */
+  get known(): number {
+    return restrictedDeviance(this.series.pullCount, this.prss, this.logDet).known;
+  }
+
+  /** The same with sigma^2 profiled out: (N - 2) log(PRSS/(N - 2)) + logDet. */
+  get estimated(): number {
+    return restrictedDeviance(this.series.pullCount, this.prss, this.logDet).estimated;
+  }
+
+  /** States before each point from the earlier points, of the last lambda. */
+  get forward(): Float64Array {
+    const { series, block, states } = this;
+    if (block === series.n) return states;
+    this.forwardStates ??= new Float64Array(STATE_SIZE * series.n);
+    if (!this.isForwardStored) filterForward(series.gap, series.pull, series.r, this.q, this.forwardStates);
+    this.isForwardStored = true;
+    return this.forwardStates;
+  }
+
+  /** States before each point from the later points, of the last lambda. */
+  get backward(): Float64Array {
+    const { series } = this;
+    this.backwardStates ??= new Float64Array(STATE_SIZE * series.n);
+    if (!this.isBackwardStored) filterBackward(series.gap, series.pull, series.r, this.q, this.backwardStates);
+    this.isBackwardStored = true;
+    return this.backwardStates;
   }
 
   /**
@@ -117,13 +140,14 @@ export class LambdaEvaluator implements FilteredSeries {
   }
 
   /**
-   * Leave-one-lot-out criterion at the last lambda: sum over pulling lots of W_j m_j^2, m_j the lot's {@link meanResidual}, W_j its sum of weights (raw, with
-   * factors).
+   * Terms of the leave-one-lot-out criterion at the last lambda: W_j m_j^2 of each pulling lot, m_j its {@link meanResidual}, W_j its sum of weights (raw, with factors).
+   * @param terms receives them, in the order of the lots
+   * @returns J, their number
    * @throws BaselineError 'insufficient-data' when a lot holds all but one of the distinct times, 'ill-posed'
    */
-  lotCv(): number {
+  lotTerms(terms: Float64Array): number {
     const { pull, pointsByLot, lotStart, weightScale } = this.series;
-    let total = 0;
+    let count = 0;
     for (let lot = 0; lot + 1 < lotStart.length; lot++) {
       const from = lotStart[lot];
       const to = lotStart[lot + 1];
@@ -131,9 +155,10 @@ export class LambdaEvaluator implements FilteredSeries {
       let weight = 0;
       for (let s = from; s < to; s++) weight += pull[pointsByLot[s]];
       const mean = this.meanResidual(lot);
-      total += weight * mean * mean;
+      const term = weight * weightScale * mean * mean;
+      if (!Number.isFinite(term)) throw outOfRange(this.lambda);
+      terms[count++] = term;
     }
-    if (!Number.isFinite(total)) throw outOfRange(this.lambda);
-    return total * weightScale;
+    return count;
   }
 }

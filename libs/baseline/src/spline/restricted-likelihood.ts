@@ -1,5 +1,4 @@
 import type { PreparedSeries } from '../prepared-series';
-import { STATE_SIZE } from './information-state';
 
 /**
  * The determinant in the restricted likelihood, log|A| - (m - 2) log alpha (Wahba 1985, Ann. Statist. 13:1378), with A = W + alpha K on the m
@@ -54,29 +53,6 @@ export function determinantConstant(series: PreparedSeries): number {
     span += gap[k];
   }
   return -(logSum + Math.log(product));
-}
-
-/**
- * PRSS = RSS + alpha * integral g''^2 from the forward pass alone, as the sum of its squared standardised prediction errors (scaled weights).
- */
-export function penalisedRss(series: PreparedSeries, forward: Float64Array): number {
-  const { n, pull, r } = series;
-  let prss = 0;
-  for (let k = 0, i = 0; k < n; k++, i += STATE_SIZE) {
-    const w = pull[k];
-    if (w === 0) continue;
-    const a = forward[i];
-    const c = forward[i + 2];
-    const det = forward[i + 3];
-    if (det > 0) {
-      const v = r[k] - (c * forward[i + 4] + forward[i + 1] * forward[i + 5]) / det;
-      prss += w * (det / (det + w * c)) * v * v;
-    } else if (a > 0 && !(c > 0)) {
-      const v = r[k] - forward[i + 4] / a;
-      prss += w * (a / (a + w)) * v * v;
-    }
-  }
-  return prss;
 }
 
 /**
