@@ -8,7 +8,8 @@ export interface Person {
 }
 
 export interface PersonWithPassword extends Person {
-  passwordHash: string;
+  /** Null until an invited person has chosen a password. */
+  passwordHash: string | null;
 }
 
 /** The person who may sign in under this address; not one who is disabled. */

@@ -9,9 +9,9 @@ export function hashPassword(password: string): Promise<string> {
 
 let nobodysHash: Promise<string> | undefined;
 
-/** Whether the password is right. Without a hash (nobody of that name) it takes as long and answers no. */
-export async function isPasswordRight(password: string, passwordHash: string | undefined): Promise<boolean> {
+/** Whether the password is right. Without a hash (nobody of that name, or invited and without a password yet) it takes as long and answers no. */
+export async function isPasswordRight(password: string, passwordHash: string | null | undefined): Promise<boolean> {
   nobodysHash ??= hashPassword('nobody has this password');
   const isRight = await verify(passwordHash ?? (await nobodysHash), password);
-  return isRight && passwordHash !== undefined;
+  return isRight && typeof passwordHash === 'string';
 }
