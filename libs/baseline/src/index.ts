@@ -9,7 +9,7 @@ export type {
   PiecewiseCubic,
   StepEstimates,
 } from './baseline-fit';
-export { chooseBaseline } from './choice/choose-baseline';
+export { chooseAndFit, chooseBaseline } from './choice/choose-baseline';
 export { chooseLambda, type ChooseLambdaOptions, type ChosenLambda, type LambdaRule } from './choice/choose-lambda';
 export type { ChooseBaselineOptions, ChosenBaseline, SmoothnessBound, SmoothnessRule } from './choice/chosen-baseline';
 export type { Candidate } from './choice/criteria';

@@ -1,10 +1,4 @@
-import {
-  chooseBaseline,
-  fitSmoothingSpline,
-  type LotScores,
-  type Observations,
-  type SmoothingSplineFit,
-} from '@app/baseline';
+import { type BaselineFit, chooseAndFit, fitSmoothingSpline, type LotScores, type Observations } from '@app/baseline';
 
 /** The fixed penalty: that of a drift period of this share of the window (half the amplitude of such a wave passes; Silverman 1984). */
 export const PERIOD_SHARE = 1 / 8;
@@ -17,7 +11,7 @@ export function fixedLambda({ t, weight }: Observations): number {
 }
 
 export interface ScoredFit {
-  fit: SmoothingSplineFit;
+  fit: BaselineFit;
   scores: LotScores;
 }
 
@@ -29,7 +23,8 @@ export function fitAndScore(obs: Observations, lambda: number): ScoredFit {
 
 /** The same with lambda chosen by generalised cross-validation. */
 export function chooseFitAndScore(obs: Observations): ScoredFit {
-  return fitAndScore(obs, chooseBaseline(obs, { method: 'smoothing-spline', rule: 'gcv' }).smoothness);
+  const { fit } = chooseAndFit(obs, { method: 'smoothing-spline', rule: 'gcv' });
+  return { fit, scores: fit.scoreLots() };
 }
 
 /** Arrays of one double a point that a scored fit answers with: value, slope, curvature, standard error, leverage, deleted residual; by lot residual and variance. */

@@ -8,7 +8,8 @@ import { naiveRegression } from '../testing/naive-regression';
 import { lcg } from '../testing/lcg';
 import { naiveSpline } from '../testing/naive-spline';
 import { observations, wavySeries } from '../testing/series';
-import { chooseBaseline } from './choose-baseline';
+import { chooseAndFit, chooseBaseline } from './choose-baseline';
+import type { ChooseBaselineOptions } from './chosen-baseline';
 
 type Regression = Exclude<BaselineMethod, 'smoothing-spline'>;
 
@@ -311,5 +312,19 @@ describe('options that have no answer', () => {
   ])('%s', (_name, run, expected) => expect(code(run)).toBe(expected));
   it('says which degrees of freedom are possible', () => {
     expect(() => chooseBaseline(obs, { method: 'polynomial', rule: 'edf', edf: 9 })).toThrow('2 to 5 degrees');
+  });
+});
+
+describe('choosing and fitting at once', () => {
+  it.each<ChooseBaselineOptions>([
+    { method: 'smoothing-spline', rule: 'gcv' },
+    { method: 'smoothing-spline', rule: 'edf', edf: 5 },
+    { method: 'natural-spline', rule: 'lot-cv' },
+  ])('is the choice and its fit, to the bit: $method, $rule', (options) => {
+    const obs = wavySeries(90, 51, (i) => Math.floor(i / 3));
+    const { chosen, fit } = chooseAndFit(obs, options);
+    expect(chosen).toEqual(chooseBaseline(obs, options));
+    expect(fit.fitted).toEqual(fitBaseline(obs, chosen.spec).fitted);
+    expect(fit.edf).toBeCloseTo(chosen.edf, 9);
   });
 });
