@@ -41,6 +41,7 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   const n = t.length;
   const origin = t[0];
   const timeScale = t[n - 1] - origin;
+  const perTime = 1 / timeScale;
   const gap = new Float64Array(n);
   const pull = new Float64Array(n);
   const r = new Float64Array(n);
@@ -54,7 +55,7 @@ export function prepareSeries(obs: Observations): PreparedSeries {
     if (w === 0) continue;
     pullCount++;
     totalWeight += w;
-    st += w * ((t[i] - origin) / timeScale);
+    st += w * ((t[i] - origin) * perTime);
     sy += w * y[i];
   }
   const u0 = st / totalWeight;
@@ -62,23 +63,24 @@ export function prepareSeries(obs: Observations): PreparedSeries {
   let suu = 0;
   let suy = 0;
   for (let i = 0; i < n; i++) {
-    const u = (t[i] - origin) / timeScale - u0;
+    const u = (t[i] - origin) * perTime - u0;
     const wu = pull[i] * u;
     suu += wu * u;
     suy += wu * (y[i] - lineLevel);
   }
   const slope = suu > 0 ? suy / suu : 0;
   const weightScale = totalWeight / pullCount;
+  const perWeight = 1 / weightScale;
   let lineRss = 0;
   let sumSquares = 0;
   for (let i = 0; i < n; i++) {
-    const v = y[i] - lineLevel - slope * ((t[i] - origin) / timeScale - u0);
+    const v = y[i] - lineLevel - slope * ((t[i] - origin) * perTime - u0);
     const w = pull[i];
     lineRss += w * v * v;
     sumSquares += w * y[i] * y[i];
     r[i] = v;
-    pull[i] = w / weightScale;
-    if (i > 0) gap[i - 1] = (t[i] - t[i - 1]) / timeScale;
+    pull[i] = w * perWeight;
+    if (i > 0) gap[i - 1] = (t[i] - t[i - 1]) * perTime;
   }
   if (!Number.isFinite(timeScale + weightScale + lineRss + sumSquares)) {
     throw new BaselineError('ill-posed', 'Times, values or weights are so large that sums over them overflow.');

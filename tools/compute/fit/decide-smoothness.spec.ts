@@ -77,15 +77,20 @@ describe('the shortest period', () => {
     expect(await refusal('--method', 'polynomial', '--degree', '4', '--shortest-period', '60')).toBe(
       'compute: --degree 4 is faster than --shortest-period 60: at most 3 over this record\n',
     );
+  });
+
+  it('moves knots apart that stand nearer than half of it', async () => {
     const uneven = csvOf({
       t: series.Nile.x.filter((x) => x < 1890 || x > 1960),
       y: series.Nile.y.filter((_, i) => i < 19 || i > 89),
     });
-    const { stderr } = await run(
-      ['fit', '--method', 'natural-spline', '--knots', '5', '--shortest-period', '22'],
-      uneven,
-    );
-    expect(stderr).toMatch(/--knots 5 puts two knots nearer than half of --shortest-period 22, at \d+/);
+    const options = ['--method', 'natural-spline', '--knots', '5'];
+    const free = await fit(options, uneven);
+    const moved = await fit([...options, '--shortest-period', '22'], uneven);
+    expect(moved.smoothness).toMatchObject({ rule: 'knots', value: 5, atFloor: false });
+    expect(moved.fitted).not.toEqual(free.fitted);
+    // Quantiles of 30 years lie 5 apart, less than 11: one knot of each crowd moves into the empty middle.
+    expect((await fit([...options, '--shortest-period', '2'], uneven)).fitted).toEqual(free.fitted);
   });
 
   it('bounds how far the baseline is projected, naming both options', async () => {

@@ -5,7 +5,7 @@ import type { ArrangedSeries } from '../series/arranged';
 import { NOTHING_CHOSEN, type DecidedSmoothness } from './decided-smoothness';
 import type { WeighingRows } from './weighing-rows';
 
-/** Interior knots to the number given. @throws InputError when they cannot be placed, or are faster than the shortest period */
+/** Interior knots to the number given, at least half a shortest period apart. @throws InputError when they cannot be placed, or are faster than the shortest period */
 export function givenKnots(
   { obs }: ArrangedSeries,
   rows: WeighingRows,
@@ -18,8 +18,8 @@ export function givenKnots(
       `--knots ${count} gives --method ${method} ${degreesOfFreedom} degrees of freedom; the rows have ${rows.distinctTimes} distinct times`,
     );
   refuseTooMany(rows, count, method, shortestPeriod);
-  const knots = place(() => placeKnots(obs, count, placement), count, placement);
-  refuseTooClose(knots, shortestPeriod);
+  const minimumSpacing = shortestPeriod === undefined ? undefined : shortestPeriod / 2;
+  const knots = place(() => placeKnots(obs, count, placement, { minimumSpacing }), count, placement);
   return {
     spec: { method: method === 'b-spline' ? 'b-spline' : 'natural-spline', knots },
     rule: 'knots',
@@ -39,16 +39,6 @@ function refuseTooMany({ window }: WeighingRows, count: number, method: string, 
     );
   const most = mostKnots(window, shortestPeriod);
   if (count > most) throw new InputError(`${faster}: at most ${most} over this record`);
-}
-
-function refuseTooClose(knots: Float64Array, shortestPeriod?: number): void {
-  if (shortestPeriod === undefined) return;
-  for (let k = 1; k < knots.length; k++) {
-    if (knots[k] - knots[k - 1] < shortestPeriod / 2)
-      throw new InputError(
-        `--knots ${knots.length} puts two knots nearer than half of --shortest-period ${shortestPeriod}, at ${knots[k - 1]} and ${knots[k]}`,
-      );
-  }
 }
 
 function place(run: () => Float64Array, count: number, placement: string): Float64Array {

@@ -151,7 +151,11 @@ function bending(intervals: number): { penalty: Float64Array; logConstant: numbe
   const penalty = new Float64Array(BAND * size);
   const cube = intervals ** 3;
   for (let j = 0, i = 0; j < size; j++, i += BAND) {
-    // Function j has its piece a in interval j - a: all of them, but for three functions at either end.
+    // Function j has its piece a in interval j - a: all of them, as function 3, but for three functions at either end.
+    if (j > 3 && j < intervals) {
+      for (let d = 0; d < BAND; d++) penalty[i + d] = penalty[3 * BAND + d];
+      continue;
+    }
     const from = Math.max(0, j - intervals + 1);
     for (let d = 0; d < BAND; d++) {
       let sum = 0;
