@@ -11,4 +11,5 @@ export * from './api/intakes';
 export * from './api/lots';
 export * from './api/holds';
 export * from './api/plans';
+export * from './api/set-up';
 export * from './decision-rights';

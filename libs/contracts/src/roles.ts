@@ -27,6 +27,9 @@ export const PERMISSIONS = {
   send_summary: ['quality_manager'],
   read_audit: ['engineer', 'quality_manager', 'director', 'administrator'],
   set_up_plant: ['administrator'],
+  propose_specification: ['engineer', 'quality_manager', 'administrator'],
+  /** Not by who proposed it. */
+  approve_specification: ['quality_manager'],
 } as const satisfies Record<string, readonly Role[]>;
 
 export type Permission = keyof typeof PERMISSIONS;
