@@ -3,7 +3,7 @@ import type { Transaction } from './database';
 export interface AuditEntry {
   plantId: number | null;
   at: Date;
-  actor: { id: number; name: string } | null;
+  actor: { id: number; name: string; address?: string } | null;
   action: string;
   thingKind: string;
   thingId: number;
@@ -11,6 +11,7 @@ export interface AuditEntry {
   sentence: string;
   before?: unknown;
   after?: unknown;
+  /** Only where it is not the actor's own. */
   address?: string | null;
 }
 
@@ -27,7 +28,7 @@ export async function insertAuditEntry(tx: Transaction, entry: AuditEntry): Prom
     sentence: entry.sentence,
     before: entry.before === undefined ? null : JSON.stringify(entry.before),
     after: entry.after === undefined ? null : JSON.stringify(entry.after),
-    address: entry.address ?? null,
+    address: entry.address ?? entry.actor?.address ?? null,
   });
 }
 

@@ -5,6 +5,8 @@ export interface Person {
   id: number;
   name: string;
   email: string;
+  /** From where the person acts in this request; unknown to work that is done later in the person's name. */
+  address?: string;
 }
 
 export interface PersonWithPassword extends Person {

@@ -41,7 +41,9 @@ export class AuthService {
   async me(person: Person): Promise<Me> {
     const memberships = await listMemberships(this.database, person.id);
     return {
-      ...person,
+      id: person.id,
+      name: person.name,
+      email: person.email,
       memberships: memberships.map(({ plantId, plantName, timeZone, roles, lineIds }) => ({
         plant: { id: plantId, name: plantName, timeZone },
         roles,

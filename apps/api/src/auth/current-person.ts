@@ -2,7 +2,7 @@ import { createParamDecorator, type ExecutionContext } from '@nestjs/common';
 import type { Person } from '@app/data';
 import type { Request } from 'express';
 
-/** Who is signed in: `{id, name, email}`. */
+/** Who is signed in, and from where: `{id, name, email, address}`. */
 export const CurrentPerson = createParamDecorator(
   (_data: unknown, context: ExecutionContext) => context.switchToHttp().getRequest<Request & { user: Person }>().user,
 );

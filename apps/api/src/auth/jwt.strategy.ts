@@ -2,6 +2,7 @@ import { Inject, Injectable } from '@nestjs/common';
 import { PassportStrategy } from '@nestjs/passport';
 import { type Database, findPerson, type Person } from '@app/data';
 import { CLOCK, type Clock, CONFIG, type Config, DATABASE } from '@app/platform';
+import type { Request } from 'express';
 import { ExtractJwt, Strategy } from 'passport-jwt';
 
 export interface AccessTokenPayload {
@@ -21,13 +22,15 @@ export class JwtStrategy extends PassportStrategy(Strategy) {
       jwtFromRequest: ExtractJwt.fromAuthHeaderAsBearerToken(),
       secretOrKey: config.jwtSecret,
       algorithms: ['HS256'],
+      passReqToCallback: true,
       // Expiry is checked below, by the program's own clock.
       ignoreExpiration: true,
     });
   }
 
-  async validate(payload: AccessTokenPayload): Promise<Person | null> {
+  async validate(request: Request, payload: AccessTokenPayload): Promise<Person | null> {
     if (!(payload.exp * 1000 > this.clock.now().getTime())) return null;
-    return (await findPerson(this.database, Number(payload.sub))) ?? null;
+    const person = await findPerson(this.database, Number(payload.sub));
+    return person ? { ...person, address: request.ip } : null;
   }
 }
