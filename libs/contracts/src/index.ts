@@ -1,9 +1,11 @@
 export * from './errors';
 export * from './roles';
+export * from './subscriptions';
 export * from './states';
 export * from './jobs';
 export * from './format';
 export * from './wording';
+export * from './reminder-wording';
 export * from './api/common';
 export * from './api/people';
 export * from './api/lines';
@@ -13,3 +15,4 @@ export * from './api/holds';
 export * from './api/plans';
 export * from './api/set-up';
 export * from './decision-rights';
+export * from './api/summaries';
