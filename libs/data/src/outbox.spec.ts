@@ -2,7 +2,6 @@ import {
   insertMails,
   leaseMail,
   listDueMailIds,
-  listLineRecipients,
   type OutboxMail,
   updateMailFailed,
   updateMailLease,
@@ -127,15 +126,5 @@ describe('mails that wait', () => {
     expect(await leaseMail(place.db, sent, after(99), 20)).toBeUndefined();
     expect(await leaseMail(place.db, failed, after(99), 20)).toBeUndefined();
     expect(await place.db('outbox').orderBy('id').pluck('state')).toEqual(['sent', 'failed']);
-  });
-
-  it('go to the line’s engineers and leads and to the quality managers, not to others or to who may no longer sign in', async () => {
-    const [line, otherLine] = place.plant.lines;
-    const emails = async (lineId: number) => (await listLineRecipients(place.db, lineId)).map(({ email }) => email);
-    const everybody = ['engineer2', 'engineer', 'lead', 'manager'].map((name) => `${name}@marrowby.example`);
-    expect(await emails(line.id)).toEqual(everybody);
-    expect(await emails(otherLine.id)).toEqual(['manager@marrowby.example']);
-    await place.db('people').where({ email: everybody[1] }).update({ disabled_at: AT });
-    expect(await emails(line.id)).toEqual([everybody[0], everybody[2], everybody[3]]);
   });
 });

@@ -94,16 +94,3 @@ export async function listDueMailIds(db: Queryable, now: Date, limit: number): P
   );
   return found.map((row) => row.id);
 }
-
-/** Who gets mail about a line: its engineers and line leads, and the plant's quality managers. */
-export async function listLineRecipients(db: Queryable, lineId: number): Promise<{ email: string; name: string }[]> {
-  return rows<{ email: string; name: string }>(
-    db,
-    `select distinct p.email, p.name from people p join memberships m on m.person_id = p.id join lines l on l.plant_id = m.plant_id
-     where l.id = :lineId and p.disabled_at is null and (m.role = 'quality_manager'
-       or (m.role in ('engineer', 'line_lead') and exists (
-         select 1 from line_assignments a where a.line_id = l.id and a.person_id = p.id)))
-     order by p.email`,
-    { lineId },
-  );
-}

@@ -121,7 +121,7 @@ export class DecisionsService {
       causes: hold.sentences,
       url: `${this.config.publicUrl}/holds/${hold.id}`,
     });
-    const recipients = await listLineRecipients(tx, hold.lineId);
+    const recipients = await listLineRecipients(tx, hold.lineId, 'decisions');
     const mails = recipients.map(({ email }) => ({
       event: `decision-${decisionId}`,
       kind: 'decision',

@@ -56,7 +56,7 @@ export class HeldLotsMailService {
       )
       .filter((lot) => lot.causes.length > 0);
     const mail = heldLotsMail({ plantName: place.plantName, lineName: place.lineName, occasion, lots });
-    const recipients = await listLineRecipients(tx, lineId);
+    const recipients = await listLineRecipients(tx, lineId, 'held_lots');
     const key = `${event}-line-${lineId}`;
     const mails = recipients.map(({ email }) => ({ event: key, kind: 'held-lots', recipient: email, ...mail }));
     return insertMails(tx, place.plantId, mails, at);
