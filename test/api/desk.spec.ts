@@ -84,6 +84,40 @@ describe('the desk', () => {
     expect(await desk('director')).toEqual([]);
   });
 
+  it('of the manager holds a specification that another person proposed, and not their own', async () => {
+    const { plant } = shift;
+    const proposal = {
+      plant_id: plant.id,
+      product_id: plant.productId,
+      characteristic_id: plant.channels[0].characteristicId,
+      nominal: 182,
+      lower: 178,
+      upper: 186,
+      applies_to_individuals: true,
+      valid_from: new Date('2026-03-12T06:00:00Z'),
+      reason: 'New customer agreement.',
+      proposed_by: plant.people.engineer.id,
+      proposed_at: new Date('2026-03-11T10:00:00Z'),
+    };
+    const [{ id }] = await app.database('specification_proposals').insert(proposal).returning('id');
+    const path = `/plants/${plant.id}/set-up/specifications`;
+    const found = async (name: string) => (await desk(name)).filter((item) => item.action.path === path);
+    expect(await found('manager')).toEqual([
+      {
+        group: 'approve',
+        lineId: null,
+        lineName: null,
+        sentence: 'A specification of SEP-16, Coat weight, was proposed by engineer 2 h ago.',
+        since: '2026-03-11T10:00:00.000Z',
+        action: { label: 'Read the specification', path },
+      },
+    ]);
+    expect(await found('engineer2')).toEqual([]);
+    await app.database('specification_proposals').where({ id }).update({ proposed_by: plant.people.manager.id });
+    expect(await found('manager')).toEqual([]);
+    await app.database('specification_proposals').where({ id }).delete();
+  });
+
   it('asks nobody to set aside on a line that is not theirs', async () => {
     await app.database('line_assignments').where({ person_id: shift.plant.people.lead.id }).delete();
     expect(await desk('lead')).toEqual([]);

@@ -97,6 +97,30 @@ export function listDeskPlans(db: Queryable, plantId: number, personId: number):
   );
 }
 
+export interface DeskSpecificationRow {
+  id: number;
+  productCode: string;
+  characteristicName: string;
+  proposedByName: string;
+  proposedAt: Date;
+}
+
+/** Proposed versions of specifications that the person did not propose. */
+export function listDeskSpecifications(
+  db: Queryable,
+  plantId: number,
+  personId: number,
+): Promise<DeskSpecificationRow[]> {
+  return rows<DeskSpecificationRow>(
+    db,
+    `select s.id, d.code as "productCode", c.name as "characteristicName", p.name as "proposedByName", s.proposed_at as "proposedAt"
+     from specification_proposals s join products d on d.id = s.product_id join characteristics c on c.id = s.characteristic_id
+     join people p on p.id = s.proposed_by
+     where s.plant_id = :plantId and s.state = 'proposed' and s.proposed_by <> :personId order by s.proposed_at, s.id`,
+    { plantId, personId },
+  );
+}
+
 export interface DeskChannelRow {
   channelId: number;
   channelName: string;

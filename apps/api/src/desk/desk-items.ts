@@ -1,5 +1,5 @@
 import { type DeskItem, formatSpan } from '@app/contracts';
-import type { DeskChannelRow, DeskHoldRow, DeskIntakeRow, DeskPlanRow } from '@app/data';
+import type { DeskChannelRow, DeskHoldRow, DeskIntakeRow, DeskPlanRow, DeskSpecificationRow } from '@app/data';
 
 const ago = (since: Date, now: Date) => formatSpan(now.getTime() - since.getTime());
 const causesOf = (hold: DeskHoldRow) => hold.sentences.join('; it also ') || 'is held';
@@ -56,6 +56,17 @@ export function approveItem(plan: DeskPlanRow, now: Date): DeskItem {
     sentence: `Plan ${plan.revision} for ${plan.channelName}, ${plan.lineName}, was proposed by ${plan.proposedByName} ${ago(plan.proposedAt, now)} ago.`,
     since: plan.proposedAt.toISOString(),
     action: { label: `Read plan ${plan.revision}`, path: `/plans/${plan.id}` },
+  };
+}
+
+export function approveSpecificationItem(proposal: DeskSpecificationRow, plantId: number, now: Date): DeskItem {
+  return {
+    group: 'approve',
+    lineId: null,
+    lineName: null,
+    sentence: `A specification of ${proposal.productCode}, ${proposal.characteristicName}, was proposed by ${proposal.proposedByName} ${ago(proposal.proposedAt, now)} ago.`,
+    since: proposal.proposedAt.toISOString(),
+    action: { label: 'Read the specification', path: `/plants/${plantId}/set-up/specifications` },
   };
 }
 

@@ -8,12 +8,13 @@ import {
   listDeskHolds,
   listDeskIntakes,
   listDeskPlans,
+  listDeskSpecifications,
   type Person,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE } from '@app/platform';
 import { AccessService } from '../access/access.service';
 import { mayDecide } from '../holds/may-decide';
-import { approveItem, checkItem, decideItem, fixItem, setAsideItem } from './desk-items';
+import { approveItem, approveSpecificationItem, checkItem, decideItem, fixItem, setAsideItem } from './desk-items';
 
 /** A refused workbook stays on the desk so long. */
 const REFUSED_FOR = 3 * 86_400_000;
@@ -34,12 +35,13 @@ export class DeskService {
     const permissions = permissionsOf(roles);
     const ifMay = <T>(permission: Permission, load: () => Promise<T[]>) =>
       permissions.includes(permission) ? load() : Promise.resolve([]);
-    const [holds, intakes, plans, channels] = await Promise.all([
+    const [holds, intakes, plans, specifications, channels] = await Promise.all([
       ifMay('set_aside', () => listDeskHolds(this.database, plantId, person.id)),
       ifMay('upload_intake', () =>
         listDeskIntakes(this.database, plantId, person.id, new Date(now.getTime() - REFUSED_FOR)),
       ),
       ifMay('approve_plan', () => listDeskPlans(this.database, plantId, person.id)),
+      ifMay('approve_specification', () => listDeskSpecifications(this.database, plantId, person.id)),
       ifMay('record_gauge_check', () => listDeskChannels(this.database, plantId, now)),
     ]);
     return {
@@ -47,6 +49,7 @@ export class DeskService {
         ...decidable(holds, person.id, roles).map((hold) => decideItem(hold, now)),
         ...intakes.map((intake) => fixItem(intake, now)),
         ...plans.map((plan) => approveItem(plan, now)),
+        ...specifications.map((proposal) => approveSpecificationItem(proposal, plantId, now)),
         ...channels.map(checkItem),
         ...holds.filter((hold) => !hold.isSetAside && hold.isOwnLine).map((hold) => setAsideItem(hold, now)),
       ] satisfies DeskItem[],

@@ -67,8 +67,9 @@ export type DeskGroup = (typeof DESK_GROUPS)[number];
 
 export interface DeskItem {
   group: DeskGroup;
-  lineId: number;
-  lineName: string;
+  /** Null for what belongs to the plant as a whole. */
+  lineId: number | null;
+  lineName: string | null;
   sentence: string;
   since: Instant;
   action: { label: string; path: string };
