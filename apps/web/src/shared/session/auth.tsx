@@ -15,6 +15,8 @@ interface Auth {
   signIn: (email: string, password: string) => Promise<void>;
   signOut: () => Promise<void>;
   checkAgain: () => void;
+  /** After something that changes what the person may do where, or a plant's name. */
+  readMeAgain: () => Promise<void>;
 }
 
 const AuthContext = createContext<Auth | null>(null);
@@ -62,7 +64,15 @@ export function AuthProvider({ children }: { children: ReactNode }) {
     setRound((before) => before + 1);
   }, []);
 
-  const value = useMemo(() => ({ state, signIn, signOut, checkAgain }), [state, signIn, signOut, checkAgain]);
+  const readMeAgain = useCallback(async () => {
+    const me = await apiGet<Me>('/me');
+    setState((before) => (before.kind === 'signed_in' ? { kind: 'signed_in', me } : before));
+  }, []);
+
+  const value = useMemo(
+    () => ({ state, signIn, signOut, checkAgain, readMeAgain }),
+    [state, signIn, signOut, checkAgain, readMeAgain],
+  );
   return <AuthContext value={value}>{children}</AuthContext>;
 }
 
