@@ -12,6 +12,7 @@ import { RunningWork } from './owed/running-work';
 import { StopService } from './owed/stop.service';
 import { WorkProcessor } from './owed/work.processor';
 import { ProposePlanHandler } from './plans/propose-plan.handler';
+import { HoldRemindersService } from './reminders/hold-reminders.service';
 
 const HANDLERS = [ReadIntakeHandler, ScoreIntakeHandler, ScoreChannelsHandler, ProposePlanHandler];
 
@@ -34,6 +35,7 @@ export class WorkerModule {
         StopService,
         ...(isMailing ? MAILING : []),
         OwedWorkService,
+        HoldRemindersService,
       ],
       exports: [WorkProcessor],
     };

@@ -6,5 +6,6 @@ export type { MailCatcherOptions } from './catcher/mail-catcher';
 export type { CaughtMessage } from './catcher/caught-message';
 export { decisionMail, type DecisionFacts } from './messages/decision';
 export { heldLotsMail, type HeldCause, type HeldLotFacts, type HeldLotsFacts } from './messages/held-lots';
+export { holdReminderMail, type HoldReminderFacts, type OldHoldFacts } from './messages/hold-reminder';
 export type { Mail } from './messages/layout';
 export { zonedText } from './messages/zoned-text';
