@@ -62,6 +62,17 @@ describe('the desk', () => {
     expect(items[3].action).toEqual({ label: 'Set lot 24118 aside', path: `/holds/${shift.holds.open}` });
   });
 
+  it('says of an old hold that it was reminded of', async () => {
+    const row = { plant_id: shift.plant.id, hold_id: shift.holds.open, audience: 'quality_manager' };
+    await app.database('hold_reminders').insert({ ...row, reminded_at: new Date('2026-03-11T11:00:00Z') });
+    const [item] = await desk('manager');
+    expect(item.sentence).toMatch(/ Held 3 h 12 min\. The quality managers were reminded 1 h ago\.$/);
+    const headers = await signIn(app, 'manager@marrowby.example');
+    const { body } = await app.http.get(`/api/holds/${shift.holds.open}`).set(headers).expect(200);
+    expect(body.reminders).toEqual([{ audience: 'quality_manager', at: '2026-03-11T11:00:00.000Z' }]);
+    await app.database('hold_reminders').delete();
+  });
+
   it('of an engineer leaves out a hold of their own intake', async () => {
     expect(groups(await desk('engineer'))).toEqual(['check', 'set_aside']);
   });

@@ -49,6 +49,7 @@ describe('holds', () => {
       line: { id: shift.plant.lines[0].id, name: 'Coater 2' },
       product: 'SEP-16',
       openedAt: '2026-03-11T08:49:00.000Z',
+      reminders: [],
       isLate: false,
       causes: [
         {

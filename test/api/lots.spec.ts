@@ -57,7 +57,7 @@ describe('lots', () => {
         isExcluded: false,
       },
       farthest: { channelId: shift.plant.channels[0].id, channelName: 'Coat weight', score: -4.3 },
-      hold: { id: shift.holds.open, state: 'open' },
+      hold: { id: shift.holds.open, state: 'open', openedAt: '2026-03-11T08:48:00.000Z' },
       disposition: null,
     });
     expect(body.items[1]).toMatchObject({ farthest: null, hold: null, mark: { controlState: 'not_scored' } });

@@ -1,5 +1,6 @@
-import type { IntakeState } from '@app/contracts';
+import type { HoldReminder, IntakeState } from '@app/contracts';
 import { type Queryable, rows } from './database';
+import { REMINDERS_OF_HOLD } from './hold-reminders';
 
 export interface DeskHoldRow {
   id: number;
@@ -7,6 +8,7 @@ export interface DeskHoldRow {
   lineId: number;
   lineName: string;
   openedAt: Date;
+  reminders: HoldReminder[];
   sentences: string[];
   isSetAside: boolean;
   isForControlLimitsAlone: boolean;
@@ -21,7 +23,7 @@ export function listDeskHolds(db: Queryable, plantId: number, personId: number):
   return rows<DeskHoldRow>(
     db,
     `select h.id, l.number as "lotNumber", n.id as "lineId", n.name as "lineName", h.opened_at as "openedAt",
-       coalesce(k.sentences, '[]') as sentences, s.hold_id is not null as "isSetAside",
+       ${REMINDERS_OF_HOLD} as reminders, coalesce(k.sentences, '[]') as sentences, s.hold_id is not null as "isSetAside",
        coalesce(k.is_mean_alone, true) as "isForControlLimitsAlone", p.engineer_may_release as "engineerMayRelease",
        coalesce(k.confirmers, '[]') as "confirmerIds", a.person_id is not null as "isOwnLine"
      from holds h join lots l on l.id = h.lot_id join lines n on n.id = h.line_id join plants p on p.id = h.plant_id

@@ -12,6 +12,10 @@ const due = (audience: ReminderAudience) => `h.state = 'open'
   and h.opened_at <= cast(:now as timestamptz) - make_interval(secs => ${HOURS[audience]} * 3600)
   and not exists (select 1 from hold_reminders r where r.hold_id = h.id and r.audience = :audience)`;
 
+/** The reminders of a hold `h` as JSON, for a query's column. */
+export const REMINDERS_OF_HOLD = `coalesce((select json_agg(json_build_object('audience', m.audience, 'at', m.reminded_at)
+  order by m.reminded_at, m.audience) from hold_reminders m where m.hold_id = h.id), '[]')`;
+
 export interface ReminderPlant {
   plantId: number;
   plantName: string;

@@ -1,5 +1,6 @@
-import type { Disposition, HoldState, SignalName } from '@app/contracts';
+import type { Disposition, HoldReminder, HoldState, SignalName } from '@app/contracts';
 import { findRow, type Queryable, rows } from './database';
+import { REMINDERS_OF_HOLD } from './hold-reminders';
 
 export interface HoldCauseRow {
   channelId: number;
@@ -33,6 +34,7 @@ export interface HoldRow {
   openedAt: Date;
   isLate: boolean;
   evidenceVersion: number;
+  reminders: HoldReminder[];
   causes: HoldCauseRow[];
   setAsideBy: string | null;
   setAsideAt: Date | null;
@@ -44,6 +46,7 @@ const SELECT = `
   select h.id, h.plant_id as "plantId", h.state, l.id as "lotId", l.number as "lotNumber", n.id as "lineId", n.name as "lineName",
     p.code as product, l.quantity, l.quantity_unit as "quantityUnit", l.starts_at as "lotStartsAt", l.ends_at as "lotEndsAt",
     h.opened_at as "openedAt", h.is_late as "isLate", h.evidence_version as "evidenceVersion",
+    ${REMINDERS_OF_HOLD} as reminders,
     coalesce((select json_agg(json_build_object('channelId', c.id, 'channelName', c.name, 'signal', k.signal, 'sentence', k.sentence)
       order by k.id) from hold_causes k join channels c on c.id = k.channel_id where k.hold_id = h.id), '[]') as causes,
     w.name as "setAsideBy", s.confirmed_at as "setAsideAt", s.place as "setAsidePlace",

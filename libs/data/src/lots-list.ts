@@ -42,6 +42,7 @@ export interface LotListRow {
   farthestScore: number | null;
   holdId: number | null;
   holdState: HoldState | null;
+  holdOpenedAt: Date | null;
 }
 
 const current = (condition: string) =>
@@ -133,12 +134,13 @@ export function listLots(
        select distinct on (v.lot_id) v.lot_id, c.id, c.name, v.score from verdicts v join channels c on c.id = v.channel_id
        where v.is_current and v.score is not null and v.lot_id in (select id from page) order by v.lot_id, abs(v.score) desc, c.id
      ), held as (
-       select distinct on (lot_id) lot_id, id, state from holds where lot_id in (select id from page)
+       select distinct on (lot_id) lot_id, id, state, opened_at from holds where lot_id in (select id from page)
        order by lot_id, state = 'open' desc, id desc
      )
      select l.id, l.number, n.id as "lineId", n.name as "lineName", p.code as product, l.quantity, l.quantity_unit as "quantityUnit",
        l.starts_at as "startsAt", l.ends_at as "endsAt", f.id as "farthestChannelId", f.name as "farthestChannelName",
-       f.score as "farthestScore", h.id as "holdId", h.state as "holdState"
+       f.score as "farthestScore", h.id as "holdId", h.state as "holdState",
+       h.opened_at as "holdOpenedAt"
      from page g join lots l on l.id = g.id join lines n on n.id = l.line_id join products p on p.id = l.product_id
      left join farthest f on f.lot_id = l.id left join held h on h.lot_id = l.id order by g.place`,
     { ...bindings, limit: page.limit, offset: page.offset },

@@ -1,15 +1,18 @@
-import { type DeskItem, formatSpan } from '@app/contracts';
+import { type DeskItem, formatSpan, remindedSentence } from '@app/contracts';
 import type { DeskChannelRow, DeskHoldRow, DeskIntakeRow, DeskPlanRow, DeskSpecificationRow } from '@app/data';
 
 const ago = (since: Date, now: Date) => formatSpan(now.getTime() - since.getTime());
 const causesOf = (hold: DeskHoldRow) => hold.sentences.join('; it also ') || 'is held';
+/** "Held 9 h 12 min. The quality managers were reminded 1 h ago." */
+const heldWords = ({ openedAt, reminders }: DeskHoldRow, now: Date) =>
+  [`Held ${ago(openedAt, now)}.`, remindedSentence(reminders, now)].filter((sentence) => sentence !== null).join(' ');
 const place = (row: { lineId: number; lineName: string }) => ({ lineId: row.lineId, lineName: row.lineName });
 
 export function decideItem(hold: DeskHoldRow, now: Date): DeskItem {
   return {
     group: 'decide',
     ...place(hold),
-    sentence: `Lot ${hold.lotNumber}, ${hold.lineName}: ${causesOf(hold)}. Held ${ago(hold.openedAt, now)}.`,
+    sentence: `Lot ${hold.lotNumber}, ${hold.lineName}: ${causesOf(hold)}. ${heldWords(hold, now)}`,
     since: hold.openedAt.toISOString(),
     action: { label: `Decide lot ${hold.lotNumber}`, path: `/holds/${hold.id}` },
   };
@@ -19,7 +22,7 @@ export function setAsideItem(hold: DeskHoldRow, now: Date): DeskItem {
   return {
     group: 'set_aside',
     ...place(hold),
-    sentence: `Lot ${hold.lotNumber}, ${hold.lineName}, is held and not yet set aside: it ${causesOf(hold)}. Held ${ago(hold.openedAt, now)}.`,
+    sentence: `Lot ${hold.lotNumber}, ${hold.lineName}, is held and not yet set aside: it ${causesOf(hold)}. ${heldWords(hold, now)}`,
     since: hold.openedAt.toISOString(),
     action: { label: `Set lot ${hold.lotNumber} aside`, path: `/holds/${hold.id}` },
   };

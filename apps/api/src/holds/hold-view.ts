@@ -18,6 +18,7 @@ export function toHoldListItem(row: HoldRow): HoldListItem {
     product: row.product,
     openedAt: row.openedAt.toISOString(),
     isLate: row.isLate,
+    reminders: row.reminders.map(({ audience, at }) => ({ audience, at: new Date(at).toISOString() })),
     causes: row.causes.map(({ channelId, channelName, signal, sentence }) => ({
       channel: { id: channelId, name: channelName },
       signal,

@@ -21,7 +21,8 @@ export function toLotListItem(row: LotListRow, mark: LotMark): LotListItem {
       row.farthestChannelId === null
         ? null
         : { channelId: row.farthestChannelId, channelName: row.farthestChannelName!, score: row.farthestScore! },
-    hold: row.holdId === null ? null : { id: row.holdId, state: row.holdState! },
+    hold:
+      row.holdId === null ? null : { id: row.holdId, state: row.holdState!, openedAt: row.holdOpenedAt!.toISOString() },
   };
 }
 
@@ -36,7 +37,7 @@ export function toLotView(
   return {
     ...common(row, mark),
     plantId: row.plantId,
-    hold: newest ? { id: newest.id, state: newest.state } : null,
+    hold: newest ? { id: newest.id, state: newest.state, openedAt: newest.openedAt.toISOString() } : null,
     verdicts,
     holds: holds.map((hold) => ({ id: hold.id, state: hold.state, openedAt: hold.openedAt.toISOString() })),
     history,

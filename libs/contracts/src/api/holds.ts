@@ -1,3 +1,4 @@
+import type { HoldReminder } from '../reminder-wording';
 import type { Disposition, HoldState, SignalName } from '../states';
 import type { Instant, Named, VerdictView } from './common';
 import type { HistoryEntry } from './lots';
@@ -27,6 +28,8 @@ export interface HoldListItem {
   product: string;
   openedAt: Instant;
   isLate: boolean;
+  /** Who was told that the hold grows old, and when. */
+  reminders: HoldReminder[];
   causes: HoldCauseView[];
   isSetAside: boolean;
   decision: DecisionView | null;

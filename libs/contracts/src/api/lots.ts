@@ -14,7 +14,7 @@ export interface LotListItem {
   mark: LotMark;
   /** The channel on which the lot stands out most; null while nothing is scored. */
   farthest: { channelId: number; channelName: string; score: number } | null;
-  hold: { id: number; state: HoldState } | null;
+  hold: { id: number; state: HoldState; openedAt: Instant } | null;
   disposition: Disposition | null;
 }
 

@@ -1,8 +1,9 @@
-import type { HoldView } from '@app/contracts';
+import { remindedSentence, type HoldView } from '@app/contracts';
 import { useRef } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import { urls } from '../../../app/urls';
 import { useShowsLine } from '../../../shared/line-context/line-context';
+import { useNow } from '../../../shared/time/use-now';
 import { Age } from '../../../shared/ui/age';
 import { Loaded } from '../../../shared/ui/loaded';
 import { FATE_WORDS } from '../../../shared/ui/mark-words';
@@ -18,6 +19,11 @@ import { quantityText } from '../components/hold-words';
 import { SetAside } from '../components/set-aside';
 import { SimilarLots } from '../components/similar-lots';
 import '../components/hold.css';
+
+function Reminded({ reminders }: Pick<HoldView, 'reminders'>) {
+  const sentence = remindedSentence(reminders, new Date(useNow()));
+  return sentence === null ? null : ` ${sentence}`;
+}
 
 /** Shall this lot go? */
 export function HoldPage() {
@@ -69,7 +75,8 @@ function Hold({ hold }: { hold: HoldView }) {
               , for <Age since={hold.openedAt} /> now
             </>
           )}
-          .{hold.isLate && ' It came late: later readings moved the baseline under the lot.'}
+          .{hold.state === 'open' && <Reminded reminders={hold.reminders} />}
+          {hold.isLate && ' It came late: later readings moved the baseline under the lot.'}
         </p>
       </Sheet>
       <div ref={evidence} tabIndex={-1} className="hold-evidence">

@@ -4,6 +4,7 @@ import { DataTable } from 'primereact/datatable';
 import { Link } from 'react-router-dom';
 import { urls } from '../../../app/urls';
 import { scoreText } from '../../../shared/record/record-words';
+import { Age } from '../../../shared/ui/age';
 import { Mark } from '../../../shared/ui/mark';
 import { fateWords, verdictWords } from '../../../shared/ui/mark-words';
 import { When } from '../../../shared/ui/when';
@@ -67,8 +68,14 @@ function fateCell(lot: LotListItem) {
   if (fate === null) return null;
   if (lot.hold === null) return fate;
   return (
-    <Link to={urls.hold(lot.hold.id)} aria-label={`${fate}: the hold of lot ${lot.number}`}>
+    <Link to={urls.hold(lot.hold.id)} title={`The hold of lot ${lot.number}`}>
       {fate}
+      {lot.hold.state === 'open' && (
+        <>
+          {' '}
+          for <Age since={lot.hold.openedAt} />
+        </>
+      )}
     </Link>
   );
 }
