@@ -7,6 +7,7 @@ import * as holdsAndDecisions from './migrations/20261201090400_create_holds_and
 import * as outboxAndAudit from './migrations/20261201090500_create_outbox_and_audit';
 import * as robustPlans from './migrations/20261201131000_add_robust_to_plan_revisions';
 import * as setUpAndPeople from './migrations/20261201140000_add_set_up_and_people';
+import * as auditIndexes from './migrations/20261201141500_index_audit_by_person_and_thing';
 
 /** Every migration by name, oldest first. They are listed here, not read from a folder, so that they go into the bundle. */
 const MIGRATIONS: Record<string, Knex.Migration> = {
@@ -18,6 +19,7 @@ const MIGRATIONS: Record<string, Knex.Migration> = {
   '20261201090500_create_outbox_and_audit': outboxAndAudit,
   '20261201131000_add_robust_to_plan_revisions': robustPlans,
   '20261201140000_add_set_up_and_people': setUpAndPeople,
+  '20261201141500_index_audit_by_person_and_thing': auditIndexes,
 };
 
 export const migrationNames = Object.keys(MIGRATIONS);

@@ -2,6 +2,7 @@ import { type DynamicModule, Module, type Type } from '@nestjs/common';
 import { APP_FILTER, APP_PIPE } from '@nestjs/core';
 import { type Clock, type Config, PlatformModule, QueueModule } from '@app/platform';
 import { AccessModule } from './access/access.module';
+import { AuditModule } from './audit/audit.module';
 import { AuthModule } from './auth/auth.module';
 import { BreaksModule } from './breaks/breaks.module';
 import { ChannelsModule } from './channels/channels.module';
@@ -33,6 +34,7 @@ export class AppModule {
         loggingModule(config),
         AccessModule,
         AuthModule,
+        AuditModule,
         HealthModule,
         PlantsModule,
         ChannelsModule,

@@ -1,5 +1,6 @@
 export { createDatabase, type Database, type Queryable, type Transaction } from './database';
 export * from './audit';
+export * from './audit-list';
 export * from './owed-jobs';
 export * from './health';
 export * from './people';
