@@ -15,4 +15,9 @@ export type {
   Severity,
   WorkbookReport,
 } from './types';
+export type * from './set-up/document';
+export { cellOf } from './set-up/loose';
+export { readSetUp, type ReadSetUpOptions } from './set-up/read-set-up';
+export { sheetOf } from './set-up/sheets';
+export { writeSetUp } from './set-up/write-set-up';
 export { escapeFormula, writeTable, type TableColumn, type TableOptions } from './write-table';
