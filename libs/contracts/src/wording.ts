@@ -91,6 +91,8 @@ export function notScoredSentence(reason: string): string {
       return 'the lot has no reading with a value';
     case 'censored':
       return 'readings off the scale are missing from its mean';
+    case 'not_judged':
+      return 'its readings have not been judged yet';
     case 'constant_data':
       return 'the readings since the baseline’s start are all the same';
     case 'non_finite':
