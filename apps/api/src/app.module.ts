@@ -12,6 +12,7 @@ import { HealthModule } from './health/health.module';
 import { HoldsModule } from './holds/holds.module';
 import { IntakesModule } from './intakes/intakes.module';
 import { LotsModule } from './lots/lots.module';
+import { MailsModule } from './mails/mails.module';
 import { PlansModule } from './plans/plans.module';
 import { PlantsModule } from './plants/plants.module';
 import { loggingModule } from './platform/logging.module';
@@ -45,6 +46,7 @@ export class AppModule {
         DecisionsModule,
         BreaksModule,
         PlansModule,
+        MailsModule,
         ...extraImports,
       ],
       providers: [

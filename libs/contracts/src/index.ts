@@ -16,6 +16,7 @@ export * from './api/lots';
 export * from './api/holds';
 export * from './api/plans';
 export * from './api/mails';
+export * from './api/mails';
 export * from './api/set-up';
 export * from './decision-rights';
 export * from './api/summaries';

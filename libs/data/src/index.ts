@@ -37,6 +37,7 @@ export * from './lots-verdicts';
 export * from './holds-reading';
 export * from './desk';
 export * from './hold-reminders';
+export * from './mails';
 export * from './set-up-plants';
 export * from './set-up-lines';
 export * from './set-up-shifts';
