@@ -39,6 +39,7 @@ describe('signing in', () => {
       id: plant.people.lead.id,
       name: 'lead',
       email: 'lead@marrowby.example',
+      theme: 'system',
       memberships: [
         {
           plant: { id: plant.id, name: 'Marrowby Works', timeZone: 'Europe/London' },
@@ -47,6 +48,7 @@ describe('signing in', () => {
           lineIds: [plant.lines[0].id],
         },
       ],
+      isInstallationAdministrator: false,
       mailCatcherUrl: null,
     });
   });
@@ -93,6 +95,41 @@ describe('signing in', () => {
     await app.database('people').where({ id: plant.people.engineer2.id }).update({ disabled_at: new Date() });
     expectProblem(await me(response.body.accessToken), 401, 'not-signed-in');
     expectProblem(await refresh(tokenOf(response)), 401, 'session-ended');
+  });
+
+  it('ends the access token with the session that it came of', async () => {
+    const [here, there] = [await tryPassword(ENGINEER, PASSWORD), await tryPassword(ENGINEER, PASSWORD)];
+    await app.http.post('/api/auth/sign-out').set('cookie', tokenOf(here)).expect(204);
+    expectProblem(await me(here.body.accessToken), 401, 'not-signed-in');
+    await me(there.body.accessToken).expect(200);
+  });
+
+  it('leaves a trail: who came, who left, which password was wrong, which session was taken twice', async () => {
+    const before = Number((await app.database('audit_entries').max('id as id'))[0].id ?? 0);
+    const first = await tryPassword(ENGINEER, PASSWORD, '10.0.0.7');
+    await tryPassword(ENGINEER, 'wrong', '10.0.0.8');
+    await tryPassword('stranger@marrowby.example', 'wrong', '10.0.0.8');
+    await app.http.post('/api/auth/sign-out').set('cookie', tokenOf(first)).expect(204);
+    await app.http.post('/api/auth/sign-out').set('cookie', tokenOf(first)).expect(204);
+    const second = await tryPassword(ENGINEER, PASSWORD, '10.0.0.7');
+    await refresh(tokenOf(second)).expect(200);
+    app.clock.advance(11_000);
+    await refresh(tokenOf(second)).set('x-forwarded-for', '10.0.0.66').expect(401);
+    const told = await app.database('audit_entries').where('id', '>', before).orderBy('id');
+    expect(told.map(({ action, actor_name, address }) => [action, actor_name, address])).toEqual([
+      ['sign-in', 'engineer', '10.0.0.7'],
+      ['sign-in-failed', 'Ebbline', '10.0.0.8'],
+      ['sign-out', 'engineer', expect.any(String)],
+      ['sign-in', 'engineer', '10.0.0.7'],
+      ['end-reused-session', 'Ebbline', '10.0.0.66'],
+    ]);
+    for (const entry of told)
+      expect(entry).toMatchObject({
+        plant_id: plant.id,
+        thing_kind: 'person',
+        thing_id: plant.people.engineer.id,
+        sentence: expect.stringContaining('engineer'),
+      });
   });
 
   describe('refreshing', () => {

@@ -1,4 +1,4 @@
-import type { Role } from '@app/contracts';
+import type { Role, Theme } from '@app/contracts';
 import { findRow, type Queryable, rows } from './database';
 
 export interface Person {
@@ -35,6 +35,11 @@ export function findPersonWithPassword(db: Queryable, id: number): Promise<Perso
 /** The person unless disabled. */
 export function findPerson(db: Queryable, id: number): Promise<Person | undefined> {
   return findRow<Person>(db, `select id, name, email from people where id = :id and disabled_at is null`, { id });
+}
+
+/** What the person has chosen for the pages. */
+export async function getTheme(db: Queryable, id: number): Promise<Theme> {
+  return (await findRow<{ theme: Theme }>(db, `select theme from people where id = :id`, { id }))?.theme ?? 'system';
 }
 
 /** The roles of a person at a plant; none: the person is nobody there. */

@@ -55,6 +55,34 @@ export async function updateFamilyRevoked(tx: Transaction, family: string, at: D
   await tx('refresh_sessions').where({ family }).whereNull('revoked_at').update({ revoked_at: at });
 }
 
+/** Ends every session of the person, but the family that is to be kept. */
+export async function updateSessionsRevoked(
+  tx: Transaction,
+  personId: number,
+  at: Date,
+  keptFamily?: string,
+): Promise<void> {
+  const which = { personId, keptFamily: keptFamily ?? null, at };
+  const isOpen = `person_id = :personId and revoked_at is null and family is distinct from cast(:keptFamily as uuid)`;
+  // A refresh under way holds its family's lock: the token that it brings is seen by the statement below.
+  await tx.raw(
+    `select pg_advisory_xact_lock(hashtextextended(cast(family as text), 0))
+     from (select distinct family from refresh_sessions where ${isOpen} order by family) as f`,
+    which,
+  );
+  await tx.raw(`update refresh_sessions set revoked_at = :at where ${isOpen}`, which);
+}
+
+/** Whether anything of the family of tokens is left: an access token ends with the sign-in that it came of. */
+export async function isFamilyAlive(db: Queryable, personId: number, family: string): Promise<boolean> {
+  const alive = await findRow(
+    db,
+    `select 1 from refresh_sessions where family = :family and person_id = :personId and revoked_at is null limit 1`,
+    { family, personId },
+  );
+  return alive !== undefined;
+}
+
 /** Tokens that can bring nothing any more, kept for a while so that their reuse is still seen. */
 export async function deleteSessionsExpiredBefore(db: Queryable, at: Date): Promise<void> {
   await db('refresh_sessions').where('expires_at', '<', at).delete();

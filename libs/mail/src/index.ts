@@ -7,5 +7,7 @@ export type { CaughtMessage } from './catcher/caught-message';
 export { decisionMail, type DecisionFacts } from './messages/decision';
 export { heldLotsMail, type HeldCause, type HeldLotFacts, type HeldLotsFacts } from './messages/held-lots';
 export { holdReminderMail, type HoldReminderFacts, type OldHoldFacts } from './messages/hold-reminder';
+export { invitationMail, type InvitationFacts } from './messages/invitation';
+export { passwordResetMail, type PasswordResetFacts } from './messages/password-reset';
 export type { Mail } from './messages/layout';
 export { zonedText } from './messages/zoned-text';

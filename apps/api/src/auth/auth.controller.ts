@@ -32,15 +32,23 @@ export class AuthController {
   @Post('refresh')
   @Public()
   @HttpCode(200)
-  async refresh(@Req() request: Request, @Res({ passthrough: true }) response: Response): Promise<SignInAnswer> {
-    return this.answer(response, await this.auth.refresh(tokenOf(request)));
+  async refresh(
+    @Req() request: Request,
+    @Ip() address: string,
+    @Res({ passthrough: true }) response: Response,
+  ): Promise<SignInAnswer> {
+    return this.answer(response, await this.auth.refresh(tokenOf(request), address));
   }
 
   @Post('sign-out')
   @Public()
   @HttpCode(204)
-  async signOut(@Req() request: Request, @Res({ passthrough: true }) response: Response): Promise<void> {
-    await this.auth.signOut(tokenOf(request));
+  async signOut(
+    @Req() request: Request,
+    @Ip() address: string,
+    @Res({ passthrough: true }) response: Response,
+  ): Promise<void> {
+    await this.auth.signOut(tokenOf(request), address);
     response.clearCookie(COOKIE, this.cookieOptions());
   }
 

@@ -7,4 +7,13 @@ export const CurrentPerson = createParamDecorator(
   (_data: unknown, context: ExecutionContext) => context.switchToHttp().getRequest<Request & { user: Person }>().user,
 );
 
+export interface WithSession {
+  sessionFamily?: string;
+}
+
+/** Which of the person's sessions asks. */
+export const CurrentSession = createParamDecorator(
+  (_data: unknown, context: ExecutionContext) => context.switchToHttp().getRequest<WithSession>().sessionFamily,
+);
+
 export type { Person };

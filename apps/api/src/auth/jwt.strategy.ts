@@ -1,16 +1,19 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { PassportStrategy } from '@nestjs/passport';
-import { type Database, findPerson, type Person } from '@app/data';
+import { type Database, findPerson, isFamilyAlive, type Person } from '@app/data';
 import { CLOCK, type Clock, CONFIG, type Config, DATABASE } from '@app/platform';
 import type { Request } from 'express';
 import { ExtractJwt, Strategy } from 'passport-jwt';
+import type { WithSession } from './current-person';
 
 export interface AccessTokenPayload {
   sub: string;
+  /** Of the sign-in that it came of; it ends with it. */
+  family: string;
   exp: number;
 }
 
-/** Takes the bearer token; the person is read at each request, so that one who is disabled is out at once. */
+/** Takes the bearer token; the person is read at each request, so that one who is disabled or signed out elsewhere is out at once. */
 @Injectable()
 export class JwtStrategy extends PassportStrategy(Strategy) {
   constructor(
@@ -28,9 +31,12 @@ export class JwtStrategy extends PassportStrategy(Strategy) {
     });
   }
 
-  async validate(request: Request, payload: AccessTokenPayload): Promise<Person | null> {
+  async validate(request: Request & WithSession, payload: AccessTokenPayload): Promise<Person | null> {
     if (!(payload.exp * 1000 > this.clock.now().getTime())) return null;
-    const person = await findPerson(this.database, Number(payload.sub));
+    const personId = Number(payload.sub);
+    if (!payload.family || !(await isFamilyAlive(this.database, personId, payload.family))) return null;
+    request.sessionFamily = payload.family;
+    const person = await findPerson(this.database, personId);
     return person ? { ...person, address: request.ip } : null;
   }
 }

@@ -8,6 +8,7 @@ import {
   findBlockedUntil,
   findPersonForSignIn,
   findPersonWithPassword,
+  insertAccountEntry,
   type Person,
   type PersonWithPassword,
   upsertFailure,
@@ -35,19 +36,28 @@ export class PasswordChecks {
   /** The person of this address and password; the same answer in the same time whichever of them is wrong. */
   async signIn(email: string, password: string, address: string): Promise<Person> {
     const person = await findPersonForSignIn(this.database, email);
-    if (!(await this.check(email, person, password, address)))
+    if (!(await this.check(email, person, password, address))) {
+      if (person) await this.noteFailure(person, 'sign-in-failed', 'A sign-in', address);
       throw new DomainError('unauthenticated', 'sign-in-failed', 'The e-mail address or the password is wrong.');
+    }
     return { id: person!.id, name: person!.name, email: person!.email };
   }
 
   /** The password given again under a signature. Call it before the transaction opens: wrong ones count even when nothing else is written. */
-  async verifyPassword(personId: number, password: string, address?: string): Promise<void> {
+  async verifyPassword(personId: number, password: string, address?: string, pointer = '/password'): Promise<void> {
     const person = await findPersonWithPassword(this.database, personId);
     if (await this.check(person?.email ?? `#${personId}`, person, password, address)) return;
+    if (person) await this.noteFailure(person, 'password-refused', 'A password given again', address);
     const detail = 'This is not your password.';
-    throw new DomainError('invalid', 'wrong-password', detail, [
-      { pointer: '/password', code: 'wrong-password', detail },
-    ]);
+    throw new DomainError('invalid', 'wrong-password', detail, [{ pointer, code: 'wrong-password', detail }]);
+  }
+
+  /** Without an actor: whoever it was need not have been the person. */
+  private async noteFailure(person: Person, action: string, what: string, address?: string): Promise<void> {
+    const sentence = `${what} as ${person.name} failed: the password was wrong.`;
+    await this.database.transaction((tx) =>
+      insertAccountEntry(tx, person.id, { at: this.clock.now(), actor: null, action, sentence, address }),
+    );
   }
 
   /**

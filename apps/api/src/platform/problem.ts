@@ -7,6 +7,7 @@ const STATUS_OF_KIND: Record<ErrorKind, number> = {
   unauthenticated: 401,
   forbidden: 403,
   not_found: 404,
+  gone: 410,
   conflict: 409,
   too_large: 413,
   unprocessable: 422,
