@@ -41,7 +41,15 @@ export const router = createBrowserRouter([
         Component: (await import('../features/intake/pages/intake-page')).IntakePage,
       })),
       page(routes.plans, async () => ({ Component: (await import('../features/plan/pages/plan-page')).PlanPage })),
+      page(routes.mails, async () => ({ Component: (await import('../features/mails/pages/mails-page')).MailsPage })),
+      page(routes.mail, async () => ({ Component: (await import('../features/mails/pages/mail-page')).MailPage })),
       { path: routes.plan, element: <PlanRedirect /> },
+      page(routes.newPlant, async () => ({
+        Component: (await import('../features/set-up/pages/new-plant-page')).NewPlantPage,
+      })),
+      ...[routes.setUp, routes.setUpSection].map((path) =>
+        page(path, async () => ({ Component: (await import('../features/set-up/pages/set-up-page')).SetUpPage })),
+      ),
       { path: '*', element: <NotFoundPage /> },
     ],
   },

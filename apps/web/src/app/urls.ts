@@ -11,6 +11,10 @@ export const routes = {
   intakes: '/lines/:lineId/intakes',
   intake: '/intakes/:intakeId',
   hold: '/holds/:holdId',
+  summaries: '/plants/:plantId/summaries',
+  summary: '/summaries/:summaryId',
+  mails: '/plants/:plantId/mails',
+  mail: '/mails/:mailId',
 } as const;
 
 export interface LotFilters {
@@ -37,6 +41,15 @@ export const urls = {
   intakes: (lineId: number) => `/lines/${lineId}/intakes`,
   intake: (intakeId: number) => `/intakes/${intakeId}`,
   hold: (holdId: number) => `/holds/${holdId}`,
+  newPlant: () => routes.newPlant,
+  setUp: (plantId: number, section?: string) =>
+    section === undefined ? `/plants/${plantId}/set-up` : `/plants/${plantId}/set-up/${section}`,
+  people: (plantId: number) => `/plants/${plantId}/people`,
+  summaries: (plantId: number) => `/plants/${plantId}/summaries`,
+  summary: (summaryId: number) => `/summaries/${summaryId}`,
+  mails: (plantId: number, filters: { state?: string | null; kind?: string | null; page?: number | null } = {}) =>
+    withQuery(`/plants/${plantId}/mails`, { ...filters }),
+  mail: (mailId: number) => `/mails/${mailId}`,
 };
 
 type QueryValue = string | number | boolean | null | undefined;
