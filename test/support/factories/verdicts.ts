@@ -24,6 +24,7 @@ export interface VerdictOptions {
   isProvisional?: boolean;
   isCurrent?: boolean;
   specificationState?: string;
+  constantState?: string;
   signals?: { signal: SignalName; action: 'holds' | 'notice' | 'off'; facts?: object }[];
 }
 
@@ -56,7 +57,7 @@ export async function insertVerdict(
     control_high: score === null ? null : channel.nominal + 0.3,
     specification_id: channel.specificationId,
     specification_state: options.specificationState ?? 'inside_specification',
-    constant_state: 'within_control_limits',
+    constant_state: options.constantState ?? 'within_control_limits',
     constant_low: channel.nominal - 1,
     constant_high: channel.nominal + 1,
     constant_score: 0.2,
