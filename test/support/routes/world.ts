@@ -1,0 +1,122 @@
+import { ROLES } from '@app/contracts';
+import { hashOfSecret, newSecret } from '../../../apps/api/src/auth/secret-tokens';
+import { startTestApp, type TestApp } from '../app';
+import { insertRow } from '../factories/insert';
+import { insertHold } from '../factories/holds';
+import { insertIntake, insertLot, insertReadings } from '../factories/lots';
+import { insertPerson, signIn, type TestPerson } from '../factories/people';
+import { insertPlan } from '../factories/plans';
+import { insertPlant, type TestPlant } from '../factories/plant';
+import { insertShift, type TestShift } from '../factories/shift';
+import { insertFit, insertVerdict } from '../factories/verdicts';
+import { ONE_ROLE_EACH, type OneRole } from './who';
+
+export type Headers = { authorization: string };
+
+/** A plant with one of each thing, somebody of each role and no other, and somebody who may do everything at another plant. */
+export interface World {
+  app: TestApp;
+  shift: TestShift;
+  plant: TestPlant;
+  /** Open, for control limits alone, from an intake that the second engineer confirmed. */
+  holdId: number;
+  proposedPlanId: number;
+  /** An engineer of the plant to whom things are done. */
+  colleague: TestPerson;
+  /** Of a link by which the colleague may choose another password. */
+  linkSecret: string;
+  /** A mail of the plant that was given up. */
+  mailId: number;
+  as: Record<OneRole | 'stranger', Headers>;
+}
+
+export const PLANT_NAME = 'Marrowby Works';
+
+export async function openWorld(): Promise<World> {
+  const app = await startTestApp();
+  const db = app.database;
+  const shift = await insertShift(app, { name: PLANT_NAME, engineerMayRelease: true });
+  const { plant } = shift;
+  const other = await insertPlant(db, { name: 'Overdale', domain: 'overdale.example' });
+  await insertPerson(db, { email: 'stranger@overdale.example', plantId: other.id, roles: [...ROLES] });
+  const colleague = await insertPerson(db, {
+    email: 'colleague@marrowby.example',
+    plantId: plant.id,
+    roles: ['engineer'],
+  });
+  await answerUploadsAtOnce(app);
+  const as = {} as World['as'];
+  for (const name of ONE_ROLE_EACH) as[name] = await signIn(app, plant.people[name].email);
+  as.stranger = await signIn(app, 'stranger@overdale.example');
+  const proposedPlanId = await insertPlan(db, plant, plant.channels[0], { state: 'proposed', revision: 2 });
+  return {
+    app,
+    shift,
+    plant,
+    holdId: await openHold(app, shift),
+    proposedPlanId,
+    colleague,
+    linkSecret: await issueSecret(app, colleague.id),
+    mailId: await insertFailedMail(app, plant),
+    as,
+  };
+}
+
+/** The secret of a link that resets a person's password. */
+export async function issueSecret(app: TestApp, personId: number): Promise<string> {
+  const secret = newSecret();
+  await insertRow(app.database, 'person_tokens', {
+    person_id: personId,
+    purpose: 'password_reset',
+    token_hash: hashOfSecret(secret),
+    created_at: app.clock.now(),
+    expires_at: new Date(app.clock.now().getTime() + 3_600_000),
+  });
+  return secret;
+}
+
+function insertFailedMail(app: TestApp, plant: TestPlant): Promise<number> {
+  return insertRow(app.database, 'outbox', {
+    plant_id: plant.id,
+    event: 'intake-1',
+    kind: 'held-lots',
+    recipient: plant.people.lead.email,
+    subject: 'Lot 24118 is held',
+    html: '<p>Lot 24118 is held.</p>',
+    plain_text: 'Lot 24118 is held.',
+    message_id: '<one@marrowby.example>',
+    state: 'failed',
+    last_error: 'no such mailbox',
+    next_attempt_at: app.clock.now(),
+    created_at: app.clock.now(),
+  });
+}
+
+let lots = 24300;
+
+/** Another open hold that all who may decide may decide. */
+export async function openHold(app: TestApp, { plant, planId }: TestShift): Promise<number> {
+  const db = app.database;
+  const channel = plant.channels[0];
+  const intakeId = await insertIntake(db, plant, { confirmedBy: plant.people.engineer2.id });
+  const lot = await insertLot(db, plant, { number: String(lots++), startsAt: '2026-03-11T09:00:00Z' });
+  await insertReadings(db, plant, { channel, lot, intakeId }, [60, 60.1]);
+  const fitId = await insertFit(db, plant, channel.id, planId);
+  const verdictId = await insertVerdict(db, plant, { channel, lot }, { fitId, score: 4.2 });
+  return insertHold(db, plant, { lot, causes: [{ channel, verdictId, intakeId }] });
+}
+
+/** No worker reads here, for which an upload would wait: the database refuses each intake in its place. */
+async function answerUploadsAtOnce(app: TestApp): Promise<void> {
+  await app.database.raw(`
+    create function refuse_at_once() returns trigger language plpgsql as $$
+    begin
+      if new.state = 'received' then
+        new.state := 'refused';
+        new.failure := 'Nobody reads here.';
+      end if;
+      return new;
+    end $$;
+    create trigger intakes_refused_at_once before insert on intakes for each row execute function refuse_at_once();
+  `);
+}
