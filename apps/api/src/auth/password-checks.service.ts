@@ -5,7 +5,6 @@ import {
   deleteFailures,
   deleteFailuresBefore,
   type FailureRules,
-  findBlockedUntil,
   findPersonForSignIn,
   findPersonWithPassword,
   insertAccountEntry,
@@ -14,7 +13,7 @@ import {
   upsertFailure,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE } from '@app/platform';
-import { RetryLaterError } from '../platform/retry-later-error';
+import { refuseBlocked } from './attempts';
 import { isPasswordRight } from './passwords';
 
 /** Five wrong passwords in a row, then a wait of 5 s that doubles with every further one, to a quarter of an hour. */
@@ -74,8 +73,9 @@ export class PasswordChecks {
     const place = address === undefined ? undefined : `address:${address}`;
     const subjects = place === undefined ? [account] : [account, place];
     const now = this.clock.now();
-    await this.refuseBlocked(subjects, now);
-    if (!(await upsertFailure(this.database, account, now, RULES))) await this.refuseBlocked(subjects, now, true);
+    await refuseBlocked(this.database, { subjects, now, ...TOO_MANY });
+    if (!(await upsertFailure(this.database, account, now, RULES)))
+      await refuseBlocked(this.database, { subjects, now, ...TOO_MANY, isSure: true });
     if (await isPasswordRight(password, person?.passwordHash)) {
       await deleteFailures(this.database, account);
       await deleteFailuresBefore(this.database, new Date(now.getTime() - 2 * RULES.forgottenAfterSeconds * 1000));
@@ -84,15 +84,6 @@ export class PasswordChecks {
     if (place !== undefined) await upsertFailure(this.database, place, now, RULES);
     return false;
   }
-
-  private async refuseBlocked(subjects: string[], now: Date, isSure = false): Promise<void> {
-    const until = await findBlockedUntil(this.database, subjects, now);
-    if (until === undefined && !isSure) return;
-    const seconds = until === undefined ? 1 : Math.max(1, Math.ceil((until.getTime() - now.getTime()) / 1000));
-    throw new RetryLaterError(
-      'too-many-wrong-passwords',
-      `Too many wrong passwords. Try again in ${seconds === 1 ? '1 second' : `${seconds} seconds`}.`,
-      seconds,
-    );
-  }
 }
+
+const TOO_MANY = { code: 'too-many-wrong-passwords', what: 'Too many wrong passwords' };

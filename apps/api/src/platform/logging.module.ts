@@ -3,6 +3,7 @@ import type { IncomingMessage } from 'node:http';
 import { type DynamicModule, RequestMethod } from '@nestjs/common';
 import type { Config } from '@app/platform';
 import { LoggerModule } from 'nestjs-pino';
+import { loggedPath } from './logged-path';
 
 const SECRETS = ['req.headers.authorization', 'req.headers.cookie', 'res.headers["set-cookie"]'];
 
@@ -20,7 +21,7 @@ export function loggingModule(config: Config): DynamicModule {
         req: (request: { id: unknown; method: string; url: string; remoteAddress: string }) => ({
           id: request.id,
           method: request.method,
-          path: request.url.split('?')[0],
+          path: loggedPath(request.url),
           address: request.remoteAddress,
         }),
         res: (response: { statusCode: number }) => ({ status: response.statusCode }),

@@ -1,6 +1,7 @@
 import { type ArgumentsHost, Catch, type ExceptionFilter, Logger } from '@nestjs/common';
 import { DomainError } from '@app/contracts';
 import type { Request, Response } from 'express';
+import { loggedPath } from './logged-path';
 import { problemBody, problemOf } from './problem';
 import { RetryLaterError } from './retry-later-error';
 
@@ -31,6 +32,9 @@ export class ProblemFilter implements ExceptionFilter {
   private logUnknown(error: unknown, request: Request & { id?: string }): void {
     const told = error instanceof DomainError ? error.detail : error instanceof Error ? error.message : String(error);
     const stack = error instanceof Error ? error.stack : undefined;
-    this.logger.error(`${request.method} ${request.path} failed (${request.id ?? 'no number'}): ${told}`, stack);
+    this.logger.error(
+      `${request.method} ${loggedPath(request.path)} failed (${request.id ?? 'no number'}): ${told}`,
+      stack,
+    );
   }
 }
