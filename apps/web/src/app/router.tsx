@@ -50,6 +50,12 @@ export const router = createBrowserRouter([
       ...[routes.setUp, routes.setUpSection].map((path) =>
         page(path, async () => ({ Component: (await import('../features/set-up/pages/set-up-page')).SetUpPage })),
       ),
+      page(routes.newPlant, async () => ({
+        Component: (await import('../features/set-up/pages/new-plant-page')).NewPlantPage,
+      })),
+      ...[routes.setUp, routes.setUpSection].map((path) =>
+        page(path, async () => ({ Component: (await import('../features/set-up/pages/set-up-page')).SetUpPage })),
+      ),
       { path: '*', element: <NotFoundPage /> },
     ],
   },

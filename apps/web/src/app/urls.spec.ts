@@ -23,4 +23,9 @@ test('each thing has one address', () => {
   ]);
   expect(urls.channel(5, { from: 10, to: 20 })).toBe('/channels/5?from=10&to=20');
   expect(urls.plans(5)).toBe('/channels/5/plans');
+  expect([urls.newPlant(), urls.setUp(2), urls.setUp(2, 'gauges')]).toEqual([
+    '/plants/new',
+    '/plants/2/set-up',
+    '/plants/2/set-up/gauges',
+  ]);
 });

@@ -15,6 +15,9 @@ export const routes = {
   summary: '/summaries/:summaryId',
   mails: '/plants/:plantId/mails',
   mail: '/mails/:mailId',
+  newPlant: '/plants/new',
+  setUp: '/plants/:plantId/set-up',
+  setUpSection: '/plants/:plantId/set-up/:section',
 } as const;
 
 export interface LotFilters {

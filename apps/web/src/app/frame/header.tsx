@@ -6,7 +6,7 @@ import { PlantChoice } from './plant-choice';
 import { ThemeChoice } from './theme-choice';
 
 export function Header() {
-  const { me, signOut } = useSession();
+  const { me, plant, can, signOut } = useSession();
   return (
     <header className="header">
       <Link className="header__name" to={urls.desk()} aria-label="Ebbline, to the desk">
@@ -19,6 +19,7 @@ export function Header() {
           </a>
         )}
         <PlantChoice />
+        {can('propose_specification') && <Link to={urls.setUp(plant.id)}>Set-up</Link>}
         <span className="header__person">{me.name}</span>
         <ThemeChoice />
         <Action kind="plain" onPress={() => void signOut()}>

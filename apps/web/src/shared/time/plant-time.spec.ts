@@ -6,6 +6,7 @@ test('an instant is shown in the plant’s zone, in 24 hours', () => {
   expect(formatInstant(Date.UTC(2026, 11, 1, 14, 5), 'UTC', 'time')).toBe('14:05');
   expect(formatInstant('2026-12-01T14:05:09Z', 'UTC', 'seconds')).toBe('1 Dec 14:05:09');
   expect(formatInstant('2026-12-01T14:05:09Z', 'UTC', 'day')).toBe('Tue 1 Dec');
+  expect(formatInstant('2026-12-31T23:30:00Z', 'Europe/Berlin', 'date')).toBe('1 Jan 2027');
 });
 
 test('what is no instant is a dash and not a date', () => {

@@ -1,10 +1,11 @@
 import type { Instant } from '@app/contracts';
 
 /** How much of an instant is shown. All in 24 h and in the plant's own zone. */
-export type TimeForm = 'full' | 'short' | 'day' | 'weekday' | 'time' | 'seconds';
+export type TimeForm = 'full' | 'date' | 'short' | 'day' | 'weekday' | 'time' | 'seconds';
 
 const FORMS: Record<TimeForm, Intl.DateTimeFormatOptions> = {
   full: { weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit' },
+  date: { day: 'numeric', month: 'short', year: 'numeric' },
   short: { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' },
   day: { weekday: 'short', day: 'numeric', month: 'short' },
   weekday: { weekday: 'short', day: 'numeric' },
