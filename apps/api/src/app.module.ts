@@ -13,8 +13,10 @@ import { HoldsModule } from './holds/holds.module';
 import { IntakesModule } from './intakes/intakes.module';
 import { LotsModule } from './lots/lots.module';
 import { MailsModule } from './mails/mails.module';
+import { PeopleModule } from './people/people.module';
 import { PlansModule } from './plans/plans.module';
 import { PlantsModule } from './plants/plants.module';
+import { SetUpModule } from './set-up/set-up.module';
 import { loggingModule } from './platform/logging.module';
 import { ProblemFilter } from './platform/problem.filter';
 import { createValidationPipe } from './platform/validation';
@@ -35,6 +37,7 @@ export class AppModule {
         loggingModule(config),
         AccessModule,
         AuthModule,
+        PeopleModule,
         AuditModule,
         HealthModule,
         PlantsModule,
@@ -47,6 +50,7 @@ export class AppModule {
         BreaksModule,
         PlansModule,
         MailsModule,
+        SetUpModule,
         ...extraImports,
       ],
       providers: [

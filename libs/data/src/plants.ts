@@ -36,13 +36,14 @@ export function findPlant(db: Queryable, id: number): Promise<(PlantRow & { plan
   return findRow(db, `select id, id as "plantId", name, time_zone as "timeZone" from plants where id = :id`, { id });
 }
 
+/** The lines in use. */
 export function listLines(db: Queryable, plantId: number): Promise<LineRow[]> {
   return rows<LineRow>(
     db,
     `select l.id, l.name, l.plant_id as "plantId", coalesce(h.count, 0)::int as "heldCount"
      from lines l left join (select line_id, count(*) from holds where plant_id = :plantId and state = 'open' group by line_id) h
        on h.line_id = l.id
-     where l.plant_id = :plantId order by l.name`,
+     where l.plant_id = :plantId and l.retired_at is null order by l.name`,
     { plantId },
   );
 }
