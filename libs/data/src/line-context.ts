@@ -1,6 +1,6 @@
 import { rows, type Queryable } from './database';
 
-/** What a line's workbooks may name: its channels, with the names a column may have for them, and the plant's products. */
+/** What a line's workbooks may name: its channels in use, with the names a column may have for them, and the plant's products in use. */
 export interface LineContextRow {
   timeZone: string;
   channels: { id: number; name: string; aliases: string[]; unit: string }[];
@@ -17,13 +17,14 @@ export async function getLineContext(db: Queryable, lineId: number): Promise<Lin
     db,
     `select c.id, c.name, x.unit, array_remove(array_cat(array[x.name, c.position],
        array(select g.asset_number from channel_gauges cg join gauges g on g.id = cg.gauge_id where cg.channel_id = c.id
-         and 1 = (select count(distinct o.channel_id) from channel_gauges o where o.gauge_id = g.id))), c.name) as aliases
-     from channels c join characteristics x on x.id = c.characteristic_id where c.line_id = :lineId order by c.id`,
+         and 1 = (select count(distinct o.channel_id) from channel_gauges o join channels d on d.id = o.channel_id
+           where o.gauge_id = g.id and d.retired_at is null))), c.name) as aliases
+     from channels c join characteristics x on x.id = c.characteristic_id where c.line_id = :lineId and c.retired_at is null order by c.id`,
     { lineId },
   );
   const products = await rows<{ code: string; name: string }>(
     db,
-    'select code, name from products where plant_id = :id order by code',
+    'select code, name from products where plant_id = :id and retired_at is null order by code',
     {
       id: plant.id,
     },
