@@ -15,9 +15,13 @@ export type {
   Severity,
   WorkbookReport,
 } from './types';
+export { changeSentence, sheetSummary, titleOf } from './set-up/change-words';
+export { compareSetUps, identityOf, type RowComparison, type SheetComparison } from './set-up/compare-set-up';
 export type * from './set-up/document';
 export { cellOf } from './set-up/loose';
+export { ProblemList } from './set-up/problem-list';
 export { readSetUp, type ReadSetUpOptions } from './set-up/read-set-up';
 export { sheetOf } from './set-up/sheets';
+export { sentencesOf } from './set-up/texts';
 export { writeSetUp } from './set-up/write-set-up';
 export { escapeFormula, writeTable, type TableColumn, type TableOptions } from './write-table';

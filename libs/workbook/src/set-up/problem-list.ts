@@ -1,4 +1,5 @@
 import type { SetUpProblem } from './document';
+import { SHEETS } from './sheets';
 
 /** Problems listed of one sheet; the rest are counted. */
 export const MAX_PROBLEMS_PER_SHEET = 50;
@@ -23,12 +24,19 @@ export class ProblemList {
     return this.bySheet.size === 0;
   }
 
+  /** In the order of the sheets and of their rows. */
   list(): SetUpProblem[] {
-    return [...this.bySheet].flatMap(([sheet, { listed, more }]) =>
-      more === 0 ? listed : [...listed, { sheet, cell: null, code: 'more-problems', ...moreOf(more) }],
-    );
+    const place = (sheet: string | null) => (sheet === null ? -1 : SHEETS.findIndex(({ name }) => name === sheet));
+    return [...this.bySheet]
+      .sort(([one], [other]) => place(one) - place(other))
+      .flatMap(([sheet, { listed, more }]) => {
+        const sorted = listed.sort((one, other) => rowOf(one) - rowOf(other));
+        return more === 0 ? sorted : [...sorted, { sheet, cell: null, code: 'more-problems', ...moreOf(more) }];
+      });
   }
 }
+
+const rowOf = ({ cell }: SetUpProblem): number => Number(/\d+$/.exec(cell ?? '')?.[0] ?? 0);
 
 const moreOf = (more: number) => ({
   what: `${more} more ${more === 1 ? 'problem of this sheet is' : 'problems of this sheet are'} not listed.`,

@@ -11,6 +11,7 @@ import type { LooseDocument, LooseRow } from './loose';
 import { ProblemList } from './problem-list';
 import { type FoundSheet, readSheets } from './read-sheets';
 import { SHEETS } from './sheets';
+import { sentencesOf } from './texts';
 
 export interface ReadSetUpOptions {
   /** IANA name of the plant's zone, for times when the workbook's own cannot be read. */
@@ -45,23 +46,23 @@ export async function readSetUp(bytes: Uint8Array, options: ReadSetUpOptions): P
       const sheet = found.find((one) => one.definition.key === key);
       if (!sheet) continue;
       places[key] = placesOf(sheet);
-      loose[key] = sheet.rows.map((row) => readRow(sheet, row, context, problems));
-      const zone = key === 'plant' ? loose.plant?.[0]?.timeZone : undefined;
+      const isOneRow = key === 'plant';
+      loose[key] = sheet.rows.map((row, at) => (isOneRow && at > 0 ? {} : readRow(sheet, row, context, problems)));
+      const zone = isOneRow ? loose.plant?.[0]?.timeZone : undefined;
       if (typeof zone === 'string') context.zone = new ZoneClock(zone);
     }
     checkSetUp(loose, places, problems, notices);
   } catch (error) {
     if (!(error instanceof WorkbookRefusedError)) throw error;
-    problems.add({ sheet: null, cell: null, code: error.code, ...sentencesOf(error.detail) });
+    problems.add({
+      sheet: null,
+      cell: null,
+      code: error.code,
+      ...sentencesOf(error.detail, 'Begin from a fresh download.'),
+    });
   }
   const document = problems.isEmpty ? (loose as unknown as SetUpDocument) : null;
   return { document, places, problems: problems.list(), notices: notices.list() };
-}
-
-/** The first sentence says what is wrong, the others what to do. */
-function sentencesOf(detail: string): { what: string; whatToDo: string } {
-  const [what, ...rest] = detail.split(/(?<=\.)\s+(?=[A-Z])/);
-  return { what, whatToDo: rest.join(' ') || 'Begin from a fresh download.' };
 }
 
 const placesOf = ({ columns, rows }: FoundSheet): SetUpPlaces[SheetKey] => ({

@@ -11,3 +11,9 @@ export const unescapeText = (text: string): string => (/^'+[=+\-@\t\r\n]/.test(t
 
 /** A text of a cell for a sentence. */
 export const quoted = (text: string): string => `"${text.length > 40 ? `${text.slice(0, 39)}…` : text}"`;
+
+/** A detail in two parts: its first sentence says what is wrong, the others, or else `otherwise`, what to do. */
+export function sentencesOf(detail: string, otherwise: string): { what: string; whatToDo: string } {
+  const [what, ...rest] = detail.split(/(?<=\.)\s+(?=[A-Z])/);
+  return { what, whatToDo: rest.join(' ') || otherwise };
+}
