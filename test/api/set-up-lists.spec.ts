@@ -183,6 +183,11 @@ describe('the set-up of a plant', () => {
       ]);
       const shown = await app.http.get(`/api/plants/${plant.id}/lines`).set(as.lead).expect(200);
       expect((shown.body as Page<{ name: string }>).items.map(({ name }) => name)).toEqual(['Calender 1', 'Coater 2']);
+      const upload = await app.http
+        .post(`/api/lines/${id}/intakes`)
+        .set(as.manager)
+        .attach('file', Buffer.from('PK\x03\x04'), 'slurry.xlsx');
+      expectProblem(upload, 409, 'line-retired');
       await send('patch', `lines/${id}`, as.admin, { isRetired: false }).expect(200);
       expect(await newest()).toMatchObject({ sentence: 'admin brought line Slurry 4 back into use.' });
     });

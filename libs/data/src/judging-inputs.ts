@@ -197,6 +197,21 @@ export async function getChannelInputs(
   return inputs;
 }
 
+/** The plant's shares of the tolerance that a channel's baseline may move: told, and the most. */
+export async function getAllowanceShares(
+  db: Queryable,
+  channelId: number,
+): Promise<{ noticeShare: number; capShare: number }> {
+  const shares = await findRow<{ noticeShare: number; capShare: number }>(
+    db,
+    `select p.allowance_notice_share as "noticeShare", p.allowance_cap_share as "capShare"
+     from channels c join plants p on p.id = c.plant_id where c.id = :channelId`,
+    { channelId },
+  );
+  if (!shares) throw new Error(`no channel ${channelId}`);
+  return shares;
+}
+
 /** The lots of a channel's newest segment, for proposing a plan, with the unit's tolerance where every product has the same. */
 export async function getProposalInputs(
   db: Queryable,

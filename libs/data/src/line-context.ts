@@ -7,7 +7,11 @@ export interface LineContextRow {
   products: { code: string; name: string }[];
 }
 
-export async function getLineContext(db: Queryable, lineId: number): Promise<LineContextRow> {
+export async function getLineContext(
+  db: Queryable,
+  lineId: number,
+  { isWithRetired = false } = {},
+): Promise<LineContextRow> {
   const [plant] = await rows<{ id: number; timeZone: string }>(
     db,
     `select p.id, p.time_zone as "timeZone" from plants p join lines l on l.plant_id = p.id where l.id = :lineId`,
@@ -19,8 +23,8 @@ export async function getLineContext(db: Queryable, lineId: number): Promise<Lin
        array(select g.asset_number from channel_gauges cg join gauges g on g.id = cg.gauge_id where cg.channel_id = c.id
          and 1 = (select count(distinct o.channel_id) from channel_gauges o join channels d on d.id = o.channel_id
            where o.gauge_id = g.id and d.retired_at is null))), c.name) as aliases
-     from channels c join characteristics x on x.id = c.characteristic_id where c.line_id = :lineId and c.retired_at is null order by c.id`,
-    { lineId },
+     from channels c join characteristics x on x.id = c.characteristic_id where c.line_id = :lineId and (:isWithRetired or c.retired_at is null) order by c.id`,
+    { lineId, isWithRetired },
   );
   const products = await rows<{ code: string; name: string }>(
     db,

@@ -17,6 +17,7 @@ export interface LineRow {
 export interface LinePlace {
   id: number;
   name: string;
+  isRetired: boolean;
   plantId: number;
   plantName: string;
   timeZone: string;
@@ -51,7 +52,7 @@ export function listLines(db: Queryable, plantId: number): Promise<LineRow[]> {
 export function findLine(db: Queryable, id: number): Promise<LinePlace | undefined> {
   return findRow<LinePlace>(
     db,
-    `select l.id, l.name, l.plant_id as "plantId", p.name as "plantName", p.time_zone as "timeZone"
+    `select l.id, l.name, l.retired_at is not null as "isRetired", l.plant_id as "plantId", p.name as "plantName", p.time_zone as "timeZone"
      from lines l join plants p on p.id = l.plant_id where l.id = :id`,
     { id },
   );

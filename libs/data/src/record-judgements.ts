@@ -150,7 +150,8 @@ async function insertVerdicts(
     `select i.lot_id as "lotId", v.id as "formerId", v.control_state as "formerState"
      from jsonb_to_recordset(:incoming) as i(${RECORD}) join lot_channels lc on lc.channel_id = :channelId and lc.lot_id = i.lot_id
      left join verdicts v on v.channel_id = :channelId and v.lot_id = i.lot_id and v.is_current
-     where v.id is null or v.reading_count <> lc.count or (v.control_state, v.is_provisional, v.not_scored_reason, v.score, v.score_limit, v.lot_mean, v.specification_state, v.constant_state)
+     where v.id is null or v.reading_count <> lc.count or v.specification_id is distinct from lc.specification_id
+       or (v.control_state, v.is_provisional, v.not_scored_reason, v.score, v.score_limit, v.lot_mean, v.specification_state, v.constant_state)
        is distinct from (i.control_state, i.is_provisional, i.not_scored_reason, i.score, i.score_limit, i.lot_mean, i.specification_state, i.constant_state)`,
     { incoming, channelId: channel.channelId },
   );

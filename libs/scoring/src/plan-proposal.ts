@@ -12,6 +12,8 @@ export interface PlanInput {
   limitMultiple?: number;
   /** Upper minus lower specification limit, in the unit. Null or absent: no allowance is stated. */
   tolerance?: number | null;
+  /** Shares of the tolerance: a movement that is told, default 0.1; one beyond which lots are not scored, default 0.25. */
+  allowance?: { noticeShare: number; capShare: number };
   /** Lots of the reference period; default all that pull and end within the window before the newest. */
   referenceLotIds?: number[];
   /** Whether outlying lots are reweighted (see `PlanParameters.isRobust`); default no. */

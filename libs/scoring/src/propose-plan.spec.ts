@@ -70,6 +70,19 @@ describe('a proposed plan', () => {
     });
     expect(Math.abs(plan.fallbackNominal - 60)).toBeLessThan(3);
     expect(proposed({ lots }).plan).toMatchObject({ allowanceNotice: null, allowanceCap: null });
+    const allowance = { noticeShare: 0.05, capShare: 0.4 };
+    expect(proposed({ lots, tolerance: 20, allowance }).plan).toMatchObject({ allowanceNotice: 1, allowanceCap: 8 });
+  });
+
+  it('refuses shares that are none, or a cap below its notice', () => {
+    for (const allowance of [
+      { noticeShare: 0, capShare: 0.2 },
+      { noticeShare: NaN, capShare: 0.2 },
+      { noticeShare: 0.3, capShare: 0.2 },
+      { noticeShare: 0.1, capShare: NaN },
+      { noticeShare: 0.1, capShare: Infinity },
+    ])
+      expect(() => proposePlan({ lots, tolerance: 20, allowance })).toThrow(ScoringError);
   });
 
   it('has the mean and standard deviation of the scores by dense kriging as centre and scale', () => {

@@ -18,8 +18,7 @@ export const REFERENCE_LOTS_NEEDED = 20;
 const WINDOW_SECONDS = 30 * 86_400;
 const LIMIT_MULTIPLE = 3;
 /** Shares of the tolerance that the baseline may move: notice, and the cap (common practice). */
-const NOTICE_SHARE = 0.1;
-const CAP_SHARE = 0.25;
+const DEFAULT_ALLOWANCE = { noticeShare: 0.1, capShare: 0.25 };
 
 const insufficient = (reason: PlanInsufficientReason, detail: string): PlanProposal => ({
   status: 'insufficient',
@@ -34,13 +33,15 @@ const insufficient = (reason: PlanInsufficientReason, detail: string): PlanPropo
  *
  * @param input lots of one segment in time order; periods in s, tolerance in the unit
  * @returns the plan with a report for those who approve it, or why there is none
- * @throws ScoringError bad-argument for lots out of order, unknown reference lots, periods, multiples or tolerances not above 0
+ * @throws ScoringError bad-argument for lots out of order, unknown reference lots, periods, multiples, tolerances or shares not above 0, or a
+ *   cap below its notice
  * @example proposePlan({ lots, tolerance: 0.8 })
  */
 export function proposePlan(input: PlanInput): PlanProposal {
   const windowSeconds = positive(input.windowSeconds ?? WINDOW_SECONDS, 'window');
   const limit = positive(input.limitMultiple ?? LIMIT_MULTIPLE, 'limit multiple');
   const tolerance = input.tolerance == null ? null : positive(input.tolerance, 'tolerance');
+  const allowance = checkedAllowance(input.allowance ?? DEFAULT_ALLOWANCE);
   const { usable, unusableLotIds, hasNonFinite } = referenceLots(input, windowSeconds);
   if (hasNonFinite) return insufficient('non_finite', 'A reading of a reference lot is not a finite number.');
   if (usable.length < REFERENCE_LOTS_NEEDED)
@@ -82,8 +83,8 @@ export function proposePlan(input: PlanInput): PlanProposal {
     limit,
     referenceLotCount: staying.length,
     fallbackNominal,
-    allowanceNotice: tolerance === null ? null : NOTICE_SHARE * tolerance,
-    allowanceCap: tolerance === null ? null : CAP_SHARE * tolerance,
+    allowanceNotice: tolerance === null ? null : allowance.noticeShare * tolerance,
+    allowanceCap: tolerance === null ? null : allowance.capShare * tolerance,
     constant: { centre: chart.centre, halfWidth: chart.halfWidth },
     signals: { ...DEFAULT_SIGNALS },
   };
@@ -139,6 +140,16 @@ function tried<T>(compute: () => T): T | BaselineError {
     if (error instanceof BaselineError) return error;
     throw error;
   }
+}
+
+function checkedAllowance(allowance: { noticeShare: number; capShare: number }) {
+  positive(allowance.noticeShare, 'share that is told');
+  if (!(allowance.capShare >= allowance.noticeShare && allowance.capShare < Infinity))
+    throw new ScoringError(
+      'bad-argument',
+      'The share beyond which lots are not scored is not below the one that is told.',
+    );
+  return allowance;
 }
 
 function positive(value: number, name: string): number {

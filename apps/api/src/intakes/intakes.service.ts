@@ -45,6 +45,12 @@ export class IntakesService {
       await findLine(this.database, lineId),
       'upload_intake',
     );
+    if (line.isRetired)
+      throw new DomainError(
+        'conflict',
+        'line-retired',
+        `${line.name} is retired. An administrator brings it back into use before its workbooks are taken in.`,
+      );
     const receivedAt = this.clock.now();
     const { intakeId, owedJobId } = await this.database.transaction(async (tx) => {
       const sha256 = createHash('sha256').update(file.bytes).digest();
@@ -142,7 +148,7 @@ export class IntakesService {
     const [sameFile, problems, context, outcome] = await Promise.all([
       findSameFile(this.database, intake),
       listIntakeProblems(this.database, intake.id, SHOWN_PROBLEMS),
-      getLineContext(this.database, intake.lineId),
+      getLineContext(this.database, intake.lineId, { isWithRetired: true }),
       intake.state === 'scored' ? getIntakeOutcome(this.database, intake.id) : null,
     ]);
     const channels = new Map(context.channels.map((channel) => [channel.id, channel]));

@@ -48,6 +48,16 @@ describe('working out a plan', () => {
     expect(await audited()).toEqual([{ action: 'propose', actor_name: 'engineer' }]);
   });
 
+  it('states the allowance by the shares of the plant', async () => {
+    await insertHistory(bench.db, bench.place.plant);
+    await bench.db('plants').update({ allowance_notice_share: 0.25, allowance_cap_share: 0.5 });
+    await bench.processor.runOwed((await drafted()).owedJobId);
+    // The tolerance of coat weight is 2.4 g/m².
+    const { parameters } = await plan();
+    expect(parameters.allowanceNotice).toBeCloseTo(0.6, 12);
+    expect(parameters.allowanceCap).toBeCloseTo(1.2, 12);
+  });
+
   it('retires it with a sentence when the channel has no readings yet', async () => {
     await bench.processor.runOwed((await drafted()).owedJobId);
     expect(await plan()).toMatchObject({ state: 'retired', failure: expect.stringContaining('no readings yet') });

@@ -1,4 +1,4 @@
-import { createDatabase, findPlan, getProposalInputs } from '@app/data';
+import { createDatabase, findPlan, getAllowanceShares, getProposalInputs } from '@app/data';
 import { defaultShortestPeriod, type PlanParameters, type PlanReport, proposePlan } from '@app/scoring';
 
 export interface ProposePlanTask {
@@ -37,6 +37,7 @@ export default async function propose(task: ProposePlanTask): Promise<ProposePla
       shortestPeriodSeconds,
       windowSeconds: WINDOW_SECONDS,
       tolerance: inputs.tolerance,
+      allowance: await getAllowanceShares(db, plan.channelId),
       isRobust: plan.isRobust,
     });
     if (proposal.status === 'insufficient') return { status: 'insufficient', sentence: proposal.detail };
