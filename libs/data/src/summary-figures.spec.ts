@@ -140,14 +140,13 @@ describe.each(ZONES)('the figures of a week in %s across a change of the clocks'
   });
 
   it('of what removing the slow movement changed are those of the verdicts, lot by lot', async () => {
-    const verdicts = (await place
-      .db('verdicts')
-      .where({ is_current: true })
-      .select('lot_id', 'control_state', 'constant_state')) as {
-      lot_id: number;
-      control_state: string;
-      constant_state: string;
-    }[];
+    const verdicts = await place.db('verdicts').where({ is_current: true }).select<
+      {
+        lot_id: number;
+        control_state: string;
+        constant_state: string;
+      }[]
+    >('lot_id', 'control_state', 'constant_state');
     const lots = (
       await place.db.raw(`select l.id from lots l join plants p on true where ${IN_WEEK('l.ends_at')}`, {
         monday: startsOn,
@@ -169,19 +168,19 @@ describe.each(ZONES)('the figures of a week in %s across a change of the clocks'
     expect(ids(onlyUnadjusted)).toEqual(wanted('constant_state', 'control_state'));
     expect([onlyPlan.count, onlyUnadjusted.count]).toEqual([ids(onlyPlan).length, ids(onlyUnadjusted).length]);
     expect(onlyPlan.count * onlyUnadjusted.count).toBeGreaterThan(0);
-    const held = (await place.db('holds').select('lot_id', 'state')) as { lot_id: number; state: string }[];
+    const held = await place.db('holds').select<{ lot_id: number; state: string }[]>('lot_id', 'state');
     for (const { lot, hold } of onlyPlan.lots)
       expect(hold?.state ?? null).toBe(held.find(({ lot_id }) => lot_id === lot.id)?.state ?? null);
   });
 
   it('of lots without a score are one a lot, channel and reason', async () => {
-    const { rows } = (await place.db.raw(
+    const { rows } = await place.db.raw<{ rows: { name: string; reason: string }[] }>(
       `select c.name, coalesce((select v.not_scored_reason from verdicts v where v.lot_id = l.id and v.channel_id = c.id and v.is_current), 'not_judged') as reason
        from lots l join lot_channels lc on lc.lot_id = l.id join channels c on c.id = lc.channel_id join plants p on p.id = c.plant_id
        where ${IN_WEEK('l.ends_at')} and not exists (select 1 from verdicts v where v.lot_id = l.id and v.channel_id = c.id and v.is_current
          and v.control_state <> 'not_scored')`,
       { monday: startsOn },
-    )) as { rows: { name: string; reason: string }[] };
+    );
     const counted = new Map<string, number>();
     for (const { name, reason } of rows) counted.set(`${name} ${reason}`, (counted.get(`${name} ${reason}`) ?? 0) + 1);
     expect(Object.fromEntries(content.notScored.map((row) => [`${row.channel.name} ${row.reason}`, row.lots]))).toEqual(

@@ -44,16 +44,14 @@ export async function insertParts(
   parts: { disposition: Disposition; quantity: number | null }[],
 ): Promise<void> {
   await db.transaction(async (tx) => {
-    const [{ id }] = (await tx('decisions')
-      .insert({
-        plant_id: plant.id,
-        reason: 'measured again by hand',
-        decided_by: plant.people.manager.id,
-        printed_name: 'manager',
-        meaning: 'decided',
-        decided_at: at,
-      })
-      .returning('id')) as { id: number }[];
+    const id = await insertRow(tx, 'decisions', {
+      plant_id: plant.id,
+      reason: 'measured again by hand',
+      decided_by: plant.people.manager.id,
+      printed_name: 'manager',
+      meaning: 'decided',
+      decided_at: at,
+    });
     const whole = { plant_id: plant.id, decision_id: id, hold_id: holdId };
     await tx('decision_holds').insert({ ...whole, evidence_version: 1 });
     await tx('decision_parts').insert(parts.map((part) => ({ ...whole, ...part })));
@@ -156,7 +154,7 @@ async function hold(
   const holdId = await insertHold(db, plant, { lot, lineId, openedAt, causes: [{ channel, verdictId }] });
   if (random() < 0.3) return;
   const decidedAt = new Date(openedAt.getTime() + random() * 5 * 86_400_000);
-  const [{ quantity }] = (await db('lots').where({ id: lot.id }).select('quantity')) as { quantity: number | null }[];
+  const [{ quantity }] = await db('lots').where({ id: lot.id }).select<{ quantity: number | null }[]>('quantity');
   const split = quantity !== null && random() < 0.4;
   await insertParts(
     db,
