@@ -8,7 +8,7 @@ describe('an age in words', () => {
     expect(ageWords(20_000)).toBe('under a minute');
     expect(ageWords(40 * MINUTE)).toBe('40 min');
     expect(ageWords(9 * HOUR + 59 * MINUTE)).toBe('9 h');
-    expect(ageWords(47 * HOUR)).toBe('47 h');
+    expect(ageWords(47 * HOUR)).toBe('1 d 23 h');
     expect(ageWords(52 * HOUR + 30 * MINUTE)).toBe('2 d 4 h');
     expect(ageWords(72 * HOUR + MINUTE)).toBe('3 d');
   });

@@ -17,11 +17,9 @@ const AUDIENCE_WORDS: Record<ReminderAudience, string> = {
 
 const HOUR_MS = 3_600_000;
 
-/** An age as one says it: "40 min", "9 h", "2 d 4 h". Whole hours, rounded down, from one hour on; days from two days on. */
+/** An age as one says it: "40 min", "9 h", "2 d 4 h". Whole hours, rounded down, from one hour on. */
 export function ageWords(milliseconds: number): string {
-  if (milliseconds < HOUR_MS) return formatSpan(milliseconds);
-  const hours = Math.floor(milliseconds / HOUR_MS);
-  return hours < 48 ? `${hours} h` : formatSpan(hours * HOUR_MS);
+  return formatSpan(milliseconds < HOUR_MS ? milliseconds : Math.floor(milliseconds / HOUR_MS) * HOUR_MS);
 }
 
 /** "The quality managers were reminded 1 h ago, the plant director 5 min ago."; null when nobody was. */

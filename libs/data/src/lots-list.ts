@@ -12,7 +12,7 @@ export const LOT_STATE_FILTERS = [
   'within_control_limits',
   'outside_specification',
 ] as const;
-export const HELD_FILTERS = ['open', 'decided', 'never'] as const;
+export const HELD_FILTERS = ['open', 'decided', 'ever', 'never'] as const;
 export const LOT_SORTS = ['startsAt', '-startsAt', 'number', '-number', 'score', '-score'] as const;
 
 export interface LotFilter {
@@ -69,6 +69,7 @@ const STATE_CONDITIONS: Record<(typeof LOT_STATE_FILTERS)[number], string> = {
 const HELD_CONDITIONS: Record<(typeof HELD_FILTERS)[number], string> = {
   open: HOLD_OPEN,
   decided: `${EVER_HELD} and not ${HOLD_OPEN}`,
+  ever: EVER_HELD,
   never: `not ${EVER_HELD}`,
 };
 

@@ -33,7 +33,7 @@ describe('the reminder of old holds', () => {
         'Lot 24118 of Coater 2 (Marrowby Works) has been held for 9 h and nobody has decided it. It waits for a quality manager’s decision.',
         'Lot 24118 lies 4.3 σ below its baseline in coat weight',
         '11 Mar 2026, 08:48, for 9 h',
-        '500 kg (worth EUR 2100)',
+        '500\u202fkg (worth 2\u202f100\u202fEUR)',
         'nobody has confirmed it yet',
         'Adaeze Thornbury, Piotr Halvorsen',
         'http://ebbline.example/holds/9',
@@ -57,11 +57,13 @@ describe('the reminder of old holds', () => {
     const others = [hold, { ...hold, quantity: 300, quantityUnit: 'm²' }, { ...hold, quantity: null, value: null }];
     const mail = holdReminderMail({ ...facts, holds: others });
     expect(mail.subject).toBe('3 lots held for more than 8 h, Marrowby Works');
-    expect(mail.text).toContain('the oldest for 9 h. Together: 500 kg and 300 m² and 1 lot of unknown quantity.');
+    expect(mail.text).toContain(
+      'the oldest for 9 h. Together: 500\u202fkg and 300\u202fm² and 1 lot of unknown quantity.',
+    );
   });
 
   it('states no worth where the plant states none', () => {
-    expect(holdReminderMail({ ...facts, currency: null }).text).toContain('Quantity at risk: 500 kg\n');
+    expect(holdReminderMail({ ...facts, currency: null }).text).toContain('Quantity at risk: 500\u202fkg\n');
   });
 
   it('cannot be made to carry markup, and needs no image', () => {

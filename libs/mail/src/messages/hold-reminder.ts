@@ -1,4 +1,4 @@
-import { ageWords, formatNumber, holdReason, type ReminderAudience } from '@app/contracts';
+import { ageWords, formatNumber, formatQuantity, holdReason, type ReminderAudience } from '@app/contracts';
 import { escapeHtml, figures, FOOT, link, type Mail, page, PAPER, paragraph, sheet } from './layout';
 
 export interface OldHoldFacts {
@@ -70,16 +70,12 @@ function totalWords(holds: OldHoldFacts[], currency: string | null): string {
   const units = new Map<string, number>();
   for (const { quantity, quantityUnit } of holds)
     if (quantity !== null) units.set(quantityUnit ?? '', (units.get(quantityUnit ?? '') ?? 0) + quantity);
-  const parts = [...units].map(([unit, sum]) => `${formatNumber(sum, 0)} ${unit}`.trim());
+  const parts = [...units].map(([unit, sum]) => formatQuantity(sum, unit).trim());
   const unknown = holds.filter(({ quantity }) => quantity === null).length;
   if (unknown > 0) parts.push(`${unknown} ${unknown === 1 ? 'lot' : 'lots'} of unknown quantity`);
   const isPriced = currency !== null && holds.every(({ value }) => value !== null);
-  const worth = isPriced
-    ? ` (worth ${currency} ${formatNumber(
-        holds.reduce((sum, { value }) => sum + (value ?? 0), 0),
-        0,
-      )})`
-    : '';
+  const value = holds.reduce((sum, hold) => sum + (hold.value ?? 0), 0);
+  const worth = isPriced ? ` (worth ${formatQuantity(Math.round(value), currency)})` : '';
   return parts.join(' and ') + worth;
 }
 

@@ -19,6 +19,7 @@ export const HELD_CHOICES = [
   { value: '', label: 'held or not' },
   { value: 'open', label: 'held now' },
   { value: 'decided', label: 'held and decided' },
+  { value: 'ever', label: 'held at any time' },
   { value: 'never', label: 'never held' },
 ];
 
