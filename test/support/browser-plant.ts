@@ -40,6 +40,13 @@ export async function createPlayedPlant(): Promise<TestDatabase> {
   return createTestDatabase(await makeTemplate(name, play, await migratedTemplate()));
 }
 
+/** Marrowby Works as its set-up pages would leave it, before its first workbook. */
+export async function createSeededPlant(): Promise<TestDatabase> {
+  const database = await createTestDatabase();
+  await seed(database.url);
+  return database;
+}
+
 async function play(databaseUrl: string): Promise<void> {
   const { plant, people } = await seed(databaseUrl);
   const clock = new PlayClock();

@@ -32,8 +32,8 @@ export class Trial {
     private readonly browser: Browser,
   ) {}
 
-  static async start(): Promise<Trial> {
-    const database = await createPlayedPlant();
+  static async start(makeDatabase: () => Promise<TestDatabase> = createPlayedPlant): Promise<Trial> {
+    const database = await makeDatabase();
     const folder = await mkdtemp(join(tmpdir(), 'ebbline-browser-'));
     const catcher = await MailCatcher.start({ folder: join(folder, 'mails') });
     const [program, browser] = await Promise.all([
