@@ -63,7 +63,7 @@ describe('every write', () => {
     const thing = entry.thing?.(world, done);
     expect(found).toEqual(
       expect.objectContaining({
-        plant_id: world.plant.id,
+        plant_id: entry.plant?.(done) ?? world.plant.id,
         at: world.app.clock.now(),
         thing_kind: entry.kind,
         thing_id: thing ?? expect.any(Number),

@@ -27,6 +27,8 @@ export interface Entry {
   kind: string;
   /** Of the thing; undefined when the answer does not name it: then any will do. */
   thing?: (world: World, done: Done) => number;
+  /** The plant of the entry, where it is not the plant that all this is about. */
+  plant?: (done: Done) => number;
   /** True where nobody is signed in: the entry is then of whom the request named. */
   isOfNobody?: boolean;
 }
@@ -59,6 +61,7 @@ export const ofChannel = at((world) => world.plant.channels[0].id);
 export const ofLot = at((world) => world.shift.lots['24118'].id);
 export const ofHold = at((world) => world.holdId);
 export const ofIntake = at((world) => world.shift.intakeId);
+export const ofProposal = at((world) => world.proposalId);
 export const ofPlan = at((world) => world.proposedPlanId);
 
 /** The place's address with a body. */

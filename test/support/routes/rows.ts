@@ -1,10 +1,21 @@
 import type { Rows } from './row';
 import { MAIL_ROWS } from './rows/mails';
+import { PEOPLE_ROWS } from './rows/people';
 import { READING_ROWS } from './rows/reading';
+import { SET_UP_PLANT_ROWS } from './rows/set-up-plant';
+import { SET_UP_THING_ROWS } from './rows/set-up-things';
 import { SIGN_IN_ROWS } from './rows/sign-in';
 import { WORK_ROWS } from './rows/work';
 
-const AREAS: Rows[] = [SIGN_IN_ROWS, READING_ROWS, WORK_ROWS, MAIL_ROWS];
+const AREAS: Rows[] = [
+  SIGN_IN_ROWS,
+  READING_ROWS,
+  WORK_ROWS,
+  MAIL_ROWS,
+  PEOPLE_ROWS,
+  SET_UP_PLANT_ROWS,
+  SET_UP_THING_ROWS,
+];
 
 /** Every route by hand: who may, and what a write leaves in the audit. A new route needs its row here. */
 export const ROWS: Rows = Object.assign({}, ...AREAS) as Rows;

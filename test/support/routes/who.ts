@@ -17,14 +17,18 @@ const TABLE = {
   'send summaries': '- x - - - -',
   audit: 'x x - - x x',
   'people, set-up, mail failures': '- - - - - x',
+  // A specification is proposed by who drafts plans or sets the plant up; it is approved as a plan is.
+  'propose a specification': 'x x - - - x',
 } as const;
 
 /** Beside the table: what needs no sign-in, and what is everybody's own, at no plant in particular. */
-export type Who = keyof typeof TABLE | 'anybody, signed in or not' | 'everybody, of their own';
+export type Who =
+  keyof typeof TABLE | 'anybody, signed in or not' | 'everybody, of their own' | 'administrators of whichever plant';
 
 export const ONE_ROLE_EACH: readonly OneRole[] = COLUMNS;
 
 export function mayBe(who: Who): readonly OneRole[] {
+  if (who === 'administrators of whichever plant') return ['admin'];
   if (!(who in TABLE)) return COLUMNS;
   const marks = TABLE[who as keyof typeof TABLE].split(' ');
   return COLUMNS.filter((_, index) => marks[index] === 'x');

@@ -21,6 +21,10 @@ export interface World {
   /** Open, for control limits alone, from an intake that the second engineer confirmed. */
   holdId: number;
   proposedPlanId: number;
+  /** Of coat weight's next specification, by the engineer. */
+  proposalId: number;
+  /** Serves nowhere. */
+  spareGaugeId: number;
   /** An engineer of the plant to whom things are done. */
   colleague: TestPerson;
   /** Of a link by which the colleague may choose another password. */
@@ -55,11 +59,30 @@ export async function openWorld(): Promise<World> {
     plant,
     holdId: await openHold(app, shift),
     proposedPlanId,
+    proposalId: await insertProposal(app, plant, plant.productId),
+    spareGaugeId: await insertRow(db, 'gauges', { plant_id: plant.id, asset_number: 'LT-120', kind: 'laser gauge' }),
     colleague,
     linkSecret: await issueSecret(app, colleague.id),
     mailId: await insertFailedMail(app, plant),
     as,
   };
+}
+
+/** A specification of coat weight that the engineer proposed. */
+export function insertProposal(app: TestApp, plant: TestPlant, productId: number): Promise<number> {
+  return insertRow(app.database, 'specification_proposals', {
+    plant_id: plant.id,
+    product_id: productId,
+    characteristic_id: plant.channels[0].characteristicId,
+    nominal: 60,
+    lower: 59,
+    upper: 61,
+    applies_to_individuals: false,
+    valid_from: app.clock.now(),
+    reason: 'The customer asks for less spread.',
+    proposed_by: plant.people.engineer.id,
+    proposed_at: app.clock.now(),
+  });
 }
 
 /** The secret of a link that resets a person's password. */
