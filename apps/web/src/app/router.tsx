@@ -30,6 +30,7 @@ export const router = createBrowserRouter([
       page(routes.channels, async () => ({
         Component: (await import('../features/channels/pages/channels-page')).ChannelsPage,
       })),
+      page(routes.audit, async () => ({ Component: (await import('../features/audit/pages/audit-page')).AuditPage })),
       page(routes.channel, async () => ({
         Component: (await import('../features/channel-record/pages/channel-record-page')).ChannelRecordPage,
       })),

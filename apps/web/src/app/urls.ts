@@ -13,6 +13,7 @@ export const routes = {
   hold: '/holds/:holdId',
   summaries: '/plants/:plantId/summaries',
   summary: '/summaries/:summaryId',
+  audit: '/plants/:plantId/audit',
   mails: '/plants/:plantId/mails',
   mail: '/mails/:mailId',
   newPlant: '/plants/new',
@@ -50,6 +51,7 @@ export const urls = {
   people: (plantId: number) => `/plants/${plantId}/people`,
   summaries: (plantId: number) => `/plants/${plantId}/summaries`,
   summary: (summaryId: number) => `/summaries/${summaryId}`,
+  audit: (plantId: number) => `/plants/${plantId}/audit`,
   mails: (plantId: number, filters: { state?: string | null; kind?: string | null; page?: number | null } = {}) =>
     withQuery(`/plants/${plantId}/mails`, { ...filters }),
   mail: (mailId: number) => `/mails/${mailId}`,

@@ -19,6 +19,7 @@ export function Header() {
           </a>
         )}
         <PlantChoice />
+        {can('read_audit') && <Link to={urls.audit(plant.id)}>Audit</Link>}
         {can('propose_specification') && <Link to={urls.setUp(plant.id)}>Set-up</Link>}
         <span className="header__person">{me.name}</span>
         <ThemeChoice />

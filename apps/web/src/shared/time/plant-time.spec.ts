@@ -5,6 +5,7 @@ test('an instant is shown in the plant’s zone, in 24 hours', () => {
   expect(formatInstant('2026-07-01T22:30:00Z', 'America/New_York', 'short')).toBe('1 Jul 18:30');
   expect(formatInstant(Date.UTC(2026, 11, 1, 14, 5), 'UTC', 'time')).toBe('14:05');
   expect(formatInstant('2026-12-01T14:05:09Z', 'UTC', 'seconds')).toBe('1 Dec 14:05:09');
+  expect(formatInstant('2026-12-01T14:05:09Z', 'UTC', 'exact')).toBe('1 Dec 2026 14:05:09');
   expect(formatInstant('2026-12-01T14:05:09Z', 'UTC', 'day')).toBe('Tue 1 Dec');
   expect(formatInstant('2026-12-31T23:30:00Z', 'Europe/Berlin', 'date')).toBe('1 Jan 2027');
 });

@@ -1,7 +1,7 @@
 import type { Instant } from '@app/contracts';
 
 /** How much of an instant is shown. All in 24 h and in the plant's own zone. */
-export type TimeForm = 'full' | 'date' | 'short' | 'day' | 'weekday' | 'time' | 'seconds';
+export type TimeForm = 'full' | 'date' | 'short' | 'day' | 'weekday' | 'time' | 'seconds' | 'exact';
 
 const FORMS: Record<TimeForm, Intl.DateTimeFormatOptions> = {
   full: { weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit' },
@@ -11,6 +11,14 @@ const FORMS: Record<TimeForm, Intl.DateTimeFormatOptions> = {
   weekday: { weekday: 'short', day: 'numeric' },
   time: { hour: '2-digit', minute: '2-digit' },
   seconds: { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit', second: '2-digit' },
+  exact: {
+    day: 'numeric',
+    month: 'short',
+    year: 'numeric',
+    hour: '2-digit',
+    minute: '2-digit',
+    second: '2-digit',
+  },
 };
 
 const formatters = new Map<string, Intl.DateTimeFormat>();
