@@ -2,6 +2,7 @@ import {
   insertMails,
   leaseMail,
   listDueMailIds,
+  listMailAttachments,
   type OutboxMail,
   updateMailFailed,
   updateMailLease,
@@ -39,6 +40,23 @@ describe('mails that wait', () => {
     expect(await insert(mail(), mail({ subject: 'again' }))).toEqual([]);
     expect(await insert(mail({ kind: 'decision' }), mail({ event: 'intake-8-line-1' }))).toHaveLength(2);
     expect(await insert()).toEqual([]);
+  });
+
+  it('carry what goes with them, each its own, written once', async () => {
+    const chart = {
+      fileName: 'week.png',
+      mediaType: 'image/png',
+      contentId: 'chart',
+      bytes: Buffer.from([137, 80, 0, 255]),
+    };
+    const book = { fileName: 'week.xlsx', mediaType: 'application/zip', contentId: null, bytes: Buffer.from('PK') };
+    const write = (...mails: OutboxMail[]) =>
+      place.db.transaction((tx) => insertMails(tx, place.plant.id, mails, AT, [chart, book]));
+    const ids = await write(mail(), mail({ recipient: 'engineer@marrowby.example' }));
+    expect(await write(mail())).toEqual([]);
+    for (const id of ids) expect(await listMailAttachments(place.db, id)).toEqual([chart, book]);
+    const [bare] = await insert(mail({ kind: 'decision' }));
+    expect(await listMailAttachments(place.db, bare)).toEqual([]);
   });
 
   it('are one also when two transactions write them at once', async () => {

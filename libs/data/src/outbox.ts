@@ -1,5 +1,13 @@
 import { findRow, type Queryable, rows, type Transaction } from './database';
 
+export interface OutboxAttachment {
+  fileName: string;
+  mediaType: string;
+  /** Set: shown inline where the HTML names it as `cid:<contentId>`. */
+  contentId: string | null;
+  bytes: Buffer;
+}
+
 export interface OutboxMail {
   event: string;
   kind: string;
@@ -15,11 +23,28 @@ export interface WaitingMail extends OutboxMail {
   attempts: number;
 }
 
+/** What goes with a mail, in the order in which it was written. */
+export function listMailAttachments(db: Queryable, outboxId: number): Promise<OutboxAttachment[]> {
+  return rows<OutboxAttachment>(
+    db,
+    `select file_name as "fileName", media_type as "mediaType", content_id as "contentId", bytes from outbox_attachments
+     where outbox_id = :outboxId order by id`,
+    { outboxId },
+  );
+}
+
 /**
  * Writes mails in the transaction of the event that they tell of. The same event, recipient and kind is one mail. Returns the new ids.
+ * What goes with them goes with each.
  * The Message-ID is made here, once: two installations number their events alike, but none may pass for the other's.
  */
-export async function insertMails(tx: Transaction, plantId: number, mails: OutboxMail[], at: Date): Promise<number[]> {
+export async function insertMails(
+  tx: Transaction,
+  plantId: number,
+  mails: OutboxMail[],
+  at: Date,
+  attachments: OutboxAttachment[] = [],
+): Promise<number[]> {
   if (mails.length === 0) return [];
   const inserted = await rows<{ id: number }>(
     tx,
@@ -30,7 +55,14 @@ export async function insertMails(tx: Transaction, plantId: number, mails: Outbo
      on conflict (event, recipient, kind) do nothing returning id`,
     { plantId, at, mails: JSON.stringify(mails) },
   );
-  return inserted.map((row) => row.id);
+  const ids = inserted.map((row) => row.id);
+  for (const { fileName, mediaType, contentId, bytes } of ids.length > 0 ? attachments : [])
+    await tx.raw(
+      `insert into outbox_attachments (outbox_id, file_name, media_type, content_id, bytes)
+       select m.id, :fileName, :mediaType, :contentId, :bytes from unnest(cast(:ids as bigint[])) as m(id) order by m.id`,
+      { ids, fileName, mediaType, contentId, bytes } as never,
+    );
+  return ids;
 }
 
 /** Takes the mail for one attempt, for as long as the lease lasts; undefined when it is sent, not yet due or with somebody else. */

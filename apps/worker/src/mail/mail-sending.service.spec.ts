@@ -59,6 +59,23 @@ describe('sending mails', () => {
     ]);
   });
 
+  it('sends what goes with it, and the catcher shows the picture in its place', async () => {
+    const bytes = Buffer.from('iVBORw0KGgo=', 'base64');
+    const chart = { fileName: 'week.png', mediaType: 'image/png', contentId: 'chart@ebbline', bytes };
+    const book = { fileName: 'week.xlsx', mediaType: 'application/zip', contentId: null, bytes: Buffer.from('PK') };
+    const html = '<img src="cid:chart@ebbline" alt="Lots on hold">';
+    const mail = { event: 'w', kind: 'weekly-summary', recipient: 'd@works.example', subject: 's', html, text: 't' };
+    const [id] = await bench.db.transaction((tx) =>
+      insertMails(tx, bench.place.plant.id, [mail], bench.clock.now(), [chart, book]),
+    );
+    expect(await service.send(id)).toEqual({ sent: true });
+    const [caught] = catcher.messages();
+    const shown = await (await fetch(`${catcher.pageUrl}/mail/${caught.id}/html`)).text();
+    expect(shown).toContain(`src="data:image/png;base64,${bytes.toString('base64')}"`);
+    const page = await (await fetch(`${catcher.pageUrl}/mail/${caught.id}`)).text();
+    expect(page).toContain('week.xlsx');
+  });
+
   it('sends it once when it is asked twice, one after the other or at once', async () => {
     const id = await waiting();
     let begun = 0;

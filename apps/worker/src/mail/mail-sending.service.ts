@@ -2,6 +2,7 @@ import { Inject, Injectable, Logger, type OnApplicationShutdown } from '@nestjs/
 import {
   type Database,
   leaseMail,
+  listMailAttachments,
   updateMailFailed,
   updateMailLease,
   updateMailSent,
@@ -54,7 +55,13 @@ export class MailSendingService implements OnApplicationShutdown {
     }, KEEP_UP_MS);
     try {
       const { messageId, recipient, subject, html, text } = mail;
-      await this.transport.send({ messageId, to: recipient, subject, html, text });
+      const attachments = (await listMailAttachments(this.database, mail.id)).map((attachment) => ({
+        filename: attachment.fileName,
+        content: attachment.bytes,
+        contentType: attachment.mediaType,
+        ...(attachment.contentId !== null && { cid: attachment.contentId }),
+      }));
+      await this.transport.send({ messageId, to: recipient, subject, html, text, attachments });
     } finally {
       clearInterval(keepUp);
     }
