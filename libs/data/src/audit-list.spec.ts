@@ -1,4 +1,7 @@
+import { insertRow } from '../../../test/support/factories/insert';
+import { insertIntake, insertLot } from '../../../test/support/factories/lots';
 import { insertPerson } from '../../../test/support/factories/people';
+import { insertPlan } from '../../../test/support/factories/plans';
 import { insertPlant, type TestPlant } from '../../../test/support/factories/plant';
 import { type AuditEntry, insertAuditEntry } from './audit';
 import { type AuditFilter, getAuditCount, listAuditEntries, listAuditKinds, listAuditPeople } from './audit-list';
@@ -106,5 +109,38 @@ describe('the audit trail', () => {
     const kinds = await listAuditKinds(place.db, { ...plain, withPlantless: true });
     expect(kinds.at(-1)).toEqual({ kind: 'person', actions: ['reset', 'sign-in'] });
     expect(await listAuditPeople(place.db, { ...plain, withPlantless: true })).toHaveLength(7);
+  });
+
+  it('names each thing as it is called now, and leaves what is gone or unknown without a name', async () => {
+    const { id, lines, channels, productId, people } = plant;
+    const [channel] = channels;
+    const weekId = await insertRow(place.db, 'summaries', {
+      plant_id: id,
+      week_starts_on: '2026-03-02',
+      version: 1,
+      content: '{}',
+      made_at: at(0),
+    });
+    const planId = await insertPlan(place.db, plant, channel);
+    const intakeId = await insertIntake(place.db, plant);
+    const lot = await insertLot(place.db, plant, { number: '24117', startsAt: at(0) });
+    const names: [kind: string, id: number, name: string | null][] = [
+      ['plant', id, 'Marrowby Works'],
+      ['line', lines[0].id, 'Coater 2'],
+      ['channel', channel.id, 'Coat weight'],
+      ['gauge', channel.gaugeId, 'BG-204'],
+      ['product', productId, 'SEP-16'],
+      ['characteristic', channel.characteristicId, 'Coat weight'],
+      ['person', people.lead.id, 'lead'],
+      ['summary', weekId, 'week of 2 Mar 2026'],
+      ['plan', planId, 'Coat weight, revision 1'],
+      ['intake', intakeId, 'coater-2-early.xlsx'],
+      ['lot', lot.id, 'lot 24117'],
+      ['hold', 999_999, null],
+      ['something', 1, null],
+    ];
+    for (const [thingKind, thingId] of names) await write({ action: 'named', thingKind, thingId });
+    const found = await listAuditEntries(place.db, filter({ action: 'named' }), { limit: 100, offset: 0 });
+    expect(found.reverse().map((entry) => [entry.thingKind, entry.thingId, entry.thingName])).toEqual(names);
   });
 });

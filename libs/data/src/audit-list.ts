@@ -53,6 +53,10 @@ const THING_NAME = `case e.thing_kind
   when 'product' then (select d.code from products d where d.id = e.thing_id)
   when 'characteristic' then (select c.name from characteristics c where c.id = e.thing_id)
   when 'gauge' then (select g.asset_number from gauges g where g.id = e.thing_id)
+  when 'specification_proposal' then (select c.name || ' of ' || d.code from specification_proposals s
+    join products d on d.id = s.product_id join characteristics c on c.id = s.characteristic_id where s.id = e.thing_id)
+  when 'mail' then (select o.subject from outbox o where o.id = e.thing_id)
+  when 'summary' then (select 'week of ' || to_char(s.week_starts_on, 'FMDD Mon YYYY') from summaries s where s.id = e.thing_id)
   end`;
 
 function conditionsOf(filter: AuditFilter): { sql: string; bindings: Record<string, unknown> } {
