@@ -30,7 +30,6 @@ export const router = createBrowserRouter([
       page(routes.channels, async () => ({
         Component: (await import('../features/channels/pages/channels-page')).ChannelsPage,
       })),
-      page(routes.audit, async () => ({ Component: (await import('../features/audit/pages/audit-page')).AuditPage })),
       page(routes.channel, async () => ({
         Component: (await import('../features/channel-record/pages/channel-record-page')).ChannelRecordPage,
       })),
@@ -42,15 +41,16 @@ export const router = createBrowserRouter([
         Component: (await import('../features/intake/pages/intake-page')).IntakePage,
       })),
       page(routes.plans, async () => ({ Component: (await import('../features/plan/pages/plan-page')).PlanPage })),
+      page(routes.summaries, async () => ({
+        Component: (await import('../features/summary/pages/summaries-page')).SummariesPage,
+      })),
+      page(routes.summary, async () => ({
+        Component: (await import('../features/summary/pages/summary-page')).SummaryPage,
+      })),
+      page(routes.audit, async () => ({ Component: (await import('../features/audit/pages/audit-page')).AuditPage })),
       page(routes.mails, async () => ({ Component: (await import('../features/mails/pages/mails-page')).MailsPage })),
       page(routes.mail, async () => ({ Component: (await import('../features/mails/pages/mail-page')).MailPage })),
       { path: routes.plan, element: <PlanRedirect /> },
-      page(routes.newPlant, async () => ({
-        Component: (await import('../features/set-up/pages/new-plant-page')).NewPlantPage,
-      })),
-      ...[routes.setUp, routes.setUpSection].map((path) =>
-        page(path, async () => ({ Component: (await import('../features/set-up/pages/set-up-page')).SetUpPage })),
-      ),
       page(routes.newPlant, async () => ({
         Component: (await import('../features/set-up/pages/new-plant-page')).NewPlantPage,
       })),
