@@ -1,9 +1,10 @@
-import type { ChannelSetUpView, GaugeSetUpView, Page } from '@app/contracts';
+import type { ChannelSetUpView, DeskView, GaugeSetUpView, Page } from '@app/contracts';
 import { getLineContext } from '@app/data';
 import { startTestApp, type TestApp } from '../support/app';
 import { expectProblem } from '../support/expect-problem';
 import { insertIntake, insertLot, insertReadings } from '../support/factories/lots';
 import { signIn } from '../support/factories/people';
+import { insertPlan } from '../support/factories/plans';
 import { insertPlant, type TestPlant } from '../support/factories/plant';
 
 type Headers = { authorization: string };
@@ -95,7 +96,15 @@ describe('the channels of a plant', () => {
 
   it('are retired with what they hold, and brought back only with it', async () => {
     const [{ id }] = (await list()).filter(({ name }) => name === 'Thickness');
+    await insertPlan(app.database, plant, { ...plant.channels[1], id }, { state: 'proposed' });
+    const manager = await signIn(app, 'manager@marrowby.example');
+    const waiting = async () =>
+      ((await app.http.get(`/api/desk?plantId=${plant.id}`).set(manager).expect(200)).body as DeskView).items.map(
+        ({ group }) => group,
+      );
+    expect(await waiting()).toEqual(['approve']);
     await patch(`channels/${id}`, { name: 'Film thickness', isRetired: true }).expect(200);
+    expect(await waiting()).toEqual([]);
     expect((await getLineContext(app.database, plant.lines[1].id)).channels).toEqual([]);
     expect((await list()).map(({ name, isRetired }) => [name, isRetired])).toEqual([
       ['Coat weight', false],

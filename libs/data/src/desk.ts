@@ -87,14 +87,15 @@ export interface DeskPlanRow {
   proposedAt: Date;
 }
 
-/** Proposed plans that the person did not propose. */
+/** Proposed plans of channels in use that the person did not propose. */
 export function listDeskPlans(db: Queryable, plantId: number, personId: number): Promise<DeskPlanRow[]> {
   return rows<DeskPlanRow>(
     db,
     `select r.id, r.revision, c.name as "channelName", l.id as "lineId", l.name as "lineName", p.name as "proposedByName",
        r.proposed_at as "proposedAt"
      from plan_revisions r join channels c on c.id = r.channel_id join lines l on l.id = c.line_id join people p on p.id = r.proposed_by
-     where r.plant_id = :plantId and r.state = 'proposed' and r.proposed_by <> :personId order by r.proposed_at, r.id`,
+     where r.plant_id = :plantId and r.state = 'proposed' and r.proposed_by <> :personId and c.retired_at is null
+     order by r.proposed_at, r.id`,
     { plantId, personId },
   );
 }
@@ -133,7 +134,7 @@ export interface DeskChannelRow {
   lotStartsAt: Date;
 }
 
-/** Channels whose newest lot is not scored because the slow movement is beyond the plan's allowance. */
+/** Channels in use whose newest lot is not scored because the slow movement is beyond the plan's allowance. */
 export function listDeskChannels(db: Queryable, plantId: number, now: Date): Promise<DeskChannelRow[]> {
   return rows<DeskChannelRow>(
     db,
@@ -146,7 +147,7 @@ export function listDeskChannels(db: Queryable, plantId: number, now: Date): Pro
      ) newest
      join verdicts v on v.channel_id = c.id and v.lot_id = newest.id and v.is_current and v.not_scored_reason = 'beyond_allowance'
      left join channel_gauges cg on cg.channel_id = c.id and cg.served @> cast(:now as timestamptz) left join gauges g on g.id = cg.gauge_id
-     where c.plant_id = :plantId order by newest.starts_at, c.id`,
+     where c.plant_id = :plantId and c.retired_at is null order by newest.starts_at, c.id`,
     { plantId, now },
   );
 }

@@ -75,7 +75,7 @@ export interface ShiftCalendarsView {
 
 /**
  * PUT plants/:id/set-up/shifts: a whole calendar from a date on; the one before ends there and keeps its meaning. A calendar that was to
- * begin on that date or later is replaced. Once the plant has readings the date lies after today. Pointers: /validFrom, /shifts/1/endsAt …
+ * begin on that date or later is replaced. Where lots were made in the calendar the date lies after today. Pointers: /validFrom, /shifts/1/endsAt …
  */
 export interface ShiftCalendarBody {
   validFrom: string;
@@ -169,7 +169,7 @@ export interface SpecificationSetUpView {
 export interface SpecificationProposalBody extends SpecificationLimits {
   productId: number;
   characteristicId: number;
-  /** Not before the newest version's start. Lots that began since are judged again with it, held ones and decided ones keep their fate. */
+  /** After the newest version's start. Lots that began since are judged again with it; what was decided stays decided. */
   validFrom: Instant;
   reason: string;
 }
