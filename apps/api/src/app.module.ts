@@ -17,6 +17,7 @@ import { PeopleModule } from './people/people.module';
 import { PlansModule } from './plans/plans.module';
 import { PlantsModule } from './plants/plants.module';
 import { SetUpModule } from './set-up/set-up.module';
+import { SetUpWorkbookModule } from './set-up-workbook/set-up-workbook.module';
 import { loggingModule } from './platform/logging.module';
 import { ProblemFilter } from './platform/problem.filter';
 import { createValidationPipe } from './platform/validation';
@@ -51,6 +52,7 @@ export class AppModule {
         PlansModule,
         MailsModule,
         SetUpModule,
+        SetUpWorkbookModule,
         ...extraImports,
       ],
       providers: [

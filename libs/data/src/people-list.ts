@@ -16,8 +16,8 @@ export interface PlantPerson {
 
 const COLUMNS = `p.id, m.plant_id as "plantId", p.name, p.email, m.roles, p.password_hash is not null as "hasPassword",
   p.disabled_at as "disabledAt",
-  coalesce((select array_agg(a.line_id order by a.line_id) from line_assignments a
-            where a.person_id = p.id and a.plant_id = m.plant_id), '{}') as "lineIds",
+  coalesce((select json_agg(a.line_id order by a.line_id) from line_assignments a
+            where a.person_id = p.id and a.plant_id = m.plant_id), '[]') as "lineIds",
   (select max(t.expires_at) from person_tokens t where t.person_id = p.id and p.password_hash is null
      and t.purpose in ('invitation', 'first_administrator') and t.used_at is null and t.revoked_at is null) as "invitedUntil"`;
 

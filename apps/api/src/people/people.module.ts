@@ -1,0 +1,8 @@
+import { Module } from '@nestjs/common';
+import { InvitationsService } from './invitations.service';
+import { PeopleController } from './people.controller';
+import { PeopleService } from './people.service';
+import { PlantAdministration } from './plant-administration.service';
+
+@Module({ controllers: [PeopleController], providers: [InvitationsService, PeopleService, PlantAdministration] })
+export class PeopleModule {}
