@@ -95,6 +95,25 @@ describe('the set-up of a plant', () => {
       await send('patch', `plants/${id}/set-up`, as.admin, { timeZone: 'Europe/Berlin' }).expect(200);
     });
 
+    it('are made by the installation’s first administrator, who is nobody anywhere yet', async () => {
+      const person = await insertPerson(app.database, { email: 'first@ardley.example' });
+      const headers = await signIn(app, person.email);
+      const body = { name: 'Burnside', timeZone: 'Asia/Kolkata' };
+      expectProblem(await send('post', 'plants', headers, body), 403, 'forbidden');
+      await app.database('person_tokens').insert({
+        person_id: person.id,
+        purpose: 'first_administrator',
+        token_hash: Buffer.from('printed'),
+        created_at: new Date('2026-03-01T00:00:00Z'),
+        expires_at: new Date('2026-03-02T00:00:00Z'),
+        used_at: new Date('2026-03-01T01:00:00Z'),
+      });
+      const made = await send('post', 'plants', headers, body).expect(201);
+      expect(made.body).toMatchObject({ name: 'Burnside', timeZone: 'Asia/Kolkata', currency: null });
+      const plants = await app.http.get('/api/plants').set(headers).expect(200);
+      expect((plants.body as Page<{ name: string }>).items.map(({ name }) => name)).toEqual(['Burnside']);
+    });
+
     it('are refused to others, without a name, in a zone that is none, and by a name that is taken', async () => {
       const body = { name: 'Fenwick', timeZone: 'Europe/London' };
       expectProblem(await send('post', 'plants', as.manager, body), 403, 'forbidden');

@@ -81,6 +81,6 @@ export async function insertGaugeService(
   await tx.raw(
     `insert into channel_gauges (plant_id, channel_id, gauge_id, served)
      values (:plantId, :channelId, :gaugeId, tstzrange(cast(:since as timestamptz), null))`,
-    service as unknown as Record<string, never>,
+    { ...service },
   );
 }
