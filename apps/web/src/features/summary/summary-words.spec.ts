@@ -9,7 +9,7 @@ import {
   lastWeekWords,
   measureDetail,
 } from './summary-words';
-import { isMade, lastDay } from './week';
+import { lastDay, madeId } from './week';
 
 const THIN = '\u202f';
 
@@ -99,9 +99,9 @@ describe('a week', () => {
   it('is made once the list has the version asked for, or a later one', () => {
     const item = { id: 1, weekStartsOn: '2026-03-02', version: 2, madeAt: '2026-03-09T06:00:00Z', headline: 'x' };
     const asked = { weekStartsOn: '2026-03-02', version: 2 };
-    expect(isMade([item], asked)).toBe(true);
-    expect(isMade([item], { ...asked, version: 3 })).toBe(false);
-    expect(isMade([item], { ...asked, weekStartsOn: '2026-03-09' })).toBe(false);
-    expect(isMade(undefined, asked)).toBe(false);
+    expect(madeId([item], asked)).toBe(1);
+    expect(madeId([item], { ...asked, version: 3 })).toBeUndefined();
+    expect(madeId([item], { ...asked, weekStartsOn: '2026-03-09' })).toBeUndefined();
+    expect(madeId(undefined, asked)).toBeUndefined();
   });
 });

@@ -66,9 +66,3 @@ export function countBeside(count: number, lastWeek: number | null): string {
 /** "The newest 50 of 61 are listed."; null when all are. */
 export const cutSentence = (listed: number, count: number) =>
   listed < count ? `${listed} of ${count} are listed.` : null;
-
-/** What sending a summary came to. */
-export function sentSentence(recipients: number): string {
-  if (recipients === 0) return 'Nobody at this plant gets the summary by mail.';
-  return `The summary is on its way to ${recipients === 1 ? 'one person' : `${recipients} people`}.`;
-}

@@ -1,8 +1,8 @@
 import type { LocalDate, SummaryListItem, SummaryRequested } from '@app/contracts';
 
-/** Whether the list has the version that was asked for, or a later one. */
-export const isMade = (items: readonly SummaryListItem[] | undefined, asked: SummaryRequested) =>
-  items?.some((item) => item.weekStartsOn === asked.weekStartsOn && item.version >= asked.version) === true;
+/** The id of the version that was asked for, or of a later one, once the list has it. */
+export const madeId = (items: readonly SummaryListItem[] | undefined, asked: SummaryRequested): number | undefined =>
+  items?.find((item) => item.weekStartsOn === asked.weekStartsOn && item.version >= asked.version)?.id;
 
 /** The Sunday of a week that starts on this Monday. */
 export function lastDay(startsOn: LocalDate): LocalDate {

@@ -2,8 +2,7 @@ import type { SummaryListView, SummaryRequest, SummaryRequested, SummaryView } f
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { apiGet, apiSend } from '../../../shared/api/client';
 import { useToast } from '../../../shared/ui/toast';
-import { sentSentence } from '../summary-words';
-import { isMade } from '../week';
+import { madeId } from '../week';
 
 /** While a summary is being made. */
 const POLL_MS = 1_500;
@@ -15,7 +14,8 @@ export function useSummaries(plantId: number, awaited: SummaryRequested | null =
   return useQuery({
     queryKey: summariesKey(plantId),
     queryFn: ({ signal }) => apiGet<SummaryListView>(`/plants/${plantId}/summaries`, signal),
-    refetchInterval: ({ state }) => (awaited === null || isMade(state.data?.items, awaited) ? false : POLL_MS),
+    refetchInterval: ({ state }) =>
+      awaited === null || madeId(state.data?.items, awaited) !== undefined ? false : POLL_MS,
   });
 }
 
@@ -35,15 +35,5 @@ export function useMakeSummary(plantId: number, onRequested: (requested: Summary
     onSuccess: onRequested,
     onError: toast.failed,
     onSettled: () => queries.invalidateQueries({ queryKey: summariesKey(plantId) }),
-  });
-}
-
-/** Mails the version that is shown to whoever gets the plant's summaries. */
-export function useSendSummary(id: number) {
-  const toast = useToast();
-  return useMutation({
-    mutationFn: () => apiSend<{ recipients: number }>('POST', `/summaries/${id}/send`),
-    onSuccess: ({ recipients }) => toast.done(sentSentence(recipients)),
-    onError: toast.failed,
   });
 }

@@ -6,8 +6,8 @@ import { urls } from '../../../app/urls';
 import { download } from '../../../shared/api/download';
 import { Action } from '../../../shared/ui/action';
 import { useToast } from '../../../shared/ui/toast';
-import { useMakeSummary, useSendSummary, useSummaries } from '../api/summaries';
-import { isMade } from '../week';
+import { useMakeSummary, useSummaries } from '../api/summaries';
+import { madeId } from '../week';
 
 /** What can be done with a week's summary. */
 export function SummaryTools({ summary }: { summary: SummaryView }) {
@@ -17,12 +17,7 @@ export function SummaryTools({ summary }: { summary: SummaryView }) {
       <Action kind="quiet" onPress={() => window.print()}>
         Print
       </Action>
-      {summary.maySend && (
-        <>
-          <MakeAnew summary={summary} />
-          <Send summary={summary} />
-        </>
-      )}
+      {summary.maySend && <MakeAnew summary={summary} />}
     </>
   );
 }
@@ -40,32 +35,31 @@ function DownloadWorkbook({ summary }: { summary: SummaryView }) {
   );
 }
 
-/** Makes a new version from what is known now, and goes there. */
+/** Makes a new version from what is known now, sends it if asked to, and goes there. */
 function MakeAnew({ summary }: { summary: SummaryView }) {
   const [awaited, setAwaited] = useState<SummaryRequested | null>(null);
   const making = useMakeSummary(summary.plant.id, setAwaited);
   const made = useSummaries(summary.plant.id, awaited).data?.items;
   const navigate = useNavigate();
-  const newId =
-    awaited !== null && isMade(made, awaited)
-      ? made?.find((item) => item.weekStartsOn === awaited.weekStartsOn)?.id
-      : undefined;
+  const newId = awaited === null ? undefined : madeId(made, awaited);
   useEffect(() => {
     if (newId !== undefined) void navigate(urls.summary(newId));
   }, [newId, navigate]);
   const isBusy = making.isPending || awaited !== null;
+  const make = (send: boolean) => making.mutate({ weekStartsOn: summary.week.startsOn, send });
+  if (isBusy) {
+    return (
+      <Action kind="quiet" isBusy>
+        A new version is being made…
+      </Action>
+    );
+  }
   return (
-    <Action kind="quiet" isBusy={isBusy} onPress={() => making.mutate({ weekStartsOn: summary.week.startsOn })}>
-      {isBusy ? 'Being made…' : 'Make it anew'}
-    </Action>
-  );
-}
-
-function Send({ summary }: { summary: SummaryView }) {
-  const sending = useSendSummary(summary.id);
-  return (
-    <Action isBusy={sending.isPending} onPress={() => sending.mutate()}>
-      {sending.isPending ? 'Sending…' : 'Send'}
-    </Action>
+    <>
+      <Action kind="quiet" onPress={() => make(false)}>
+        Make it anew
+      </Action>
+      <Action onPress={() => make(true)}>Make it anew and send</Action>
+    </>
   );
 }

@@ -11,7 +11,7 @@ import { PageHeading } from '../../../shared/ui/page-heading';
 import { Sheet } from '../../../shared/ui/sheet';
 import { When } from '../../../shared/ui/when';
 import { useMakeSummary, useSummaries } from '../api/summaries';
-import { isMade } from '../week';
+import { madeId } from '../week';
 
 /** Which week? */
 export function SummariesPage() {
@@ -19,7 +19,7 @@ export function SummariesPage() {
   useShowsLine(undefined, plantId);
   const [awaited, setAwaited] = useState<SummaryRequested | null>(null);
   const query = useSummaries(plantId, awaited);
-  const isBeingMade = awaited !== null && !isMade(query.data?.items, awaited);
+  const isBeingMade = awaited !== null && madeId(query.data?.items, awaited) === undefined;
   return (
     <>
       <PageHeading
