@@ -20,6 +20,7 @@ export function Header() {
         )}
         <PlantChoice />
         {can('read_audit') && <Link to={urls.audit(plant.id)}>Audit</Link>}
+        {can('set_up_plant') && <Link to={urls.mails(plant.id)}>Mail</Link>}
         {can('propose_specification') && <Link to={urls.setUp(plant.id)}>Set-up</Link>}
         <span className="header__person">{me.name}</span>
         <ThemeChoice />
