@@ -2,7 +2,6 @@ import { type AuditEntryView, nameInWords } from '@app/contracts';
 import { Fragment, useState } from 'react';
 import { Link } from 'react-router-dom';
 import { useSession } from '../../../shared/session/session';
-import { Action } from '../../../shared/ui/action';
 import { When } from '../../../shared/ui/when';
 import { thingPage } from '../thing-page';
 import { Changes } from './changes';
@@ -68,9 +67,14 @@ function Entry({ entry, plantId, onThing }: { entry: AuditEntryView } & Omit<Aud
         </td>
         <td className="audit__thing">
           {page === null ? name : <Link to={page}>{name}</Link>}
-          <Action kind="plain" label={`Everything about ${name}`} onPress={() => onThing(thing.kind, thing.id)}>
-            all of it
-          </Action>
+          <button
+            type="button"
+            className="audit__toggle"
+            aria-label={`All entries about ${name}`}
+            onClick={() => onThing(thing.kind, thing.id)}
+          >
+            all its entries
+          </button>
         </td>
         <td className={entry.address === null ? 'audit__where is-nothing' : 'audit__where'}>
           {entry.address ?? <span className="soft">–</span>}

@@ -2,24 +2,29 @@ import type { AuditChange } from '@app/contracts';
 
 /** Field by field what was there before and after. */
 export function Changes({ changes }: { changes: AuditChange[] }) {
-  const hasBefore = changes.some((change) => change.before !== null);
   return (
     <dl className="changes">
-      {changes.map(({ field, before, after }) => (
-        <div key={field} className="changes__field">
-          <dt>{field}</dt>
+      {changes.map((change) => (
+        <div key={change.field} className="changes__field">
+          <dt>{change.field}</dt>
           <dd>
-            {hasBefore && (
-              <>
-                <span className="changes__before">{before ?? 'nothing'}</span>
-                <span aria-hidden="true"> → </span>
-                <span className="visually-hidden"> became </span>
-              </>
-            )}
-            <span className="changes__after">{after ?? 'nothing'}</span>
+            <Change {...change} />
           </dd>
         </div>
       ))}
     </dl>
+  );
+}
+
+function Change({ before, after }: AuditChange) {
+  if (before === null) return after;
+  if (after === null) return <span className="soft">was {before}</span>;
+  return (
+    <>
+      <span className="soft">{before}</span>
+      <span aria-hidden="true"> → </span>
+      <span className="visually-hidden"> became </span>
+      {after}
+    </>
   );
 }
