@@ -2,7 +2,7 @@ import {
   insertMails,
   leaseMail,
   listDueMailIds,
-  listMailAttachments,
+  listOutboxAttachments,
   type OutboxMail,
   updateMailFailed,
   updateMailLease,
@@ -54,9 +54,9 @@ describe('mails that wait', () => {
       place.db.transaction((tx) => insertMails(tx, place.plant.id, mails, AT, [chart, book]));
     const ids = await write(mail(), mail({ recipient: 'engineer@marrowby.example' }));
     expect(await write(mail())).toEqual([]);
-    for (const id of ids) expect(await listMailAttachments(place.db, id)).toEqual([chart, book]);
+    for (const id of ids) expect(await listOutboxAttachments(place.db, id)).toEqual([chart, book]);
     const [bare] = await insert(mail({ kind: 'decision' }));
-    expect(await listMailAttachments(place.db, bare)).toEqual([]);
+    expect(await listOutboxAttachments(place.db, bare)).toEqual([]);
   });
 
   it('are one also when two transactions write them at once', async () => {

@@ -24,7 +24,7 @@ export interface WaitingMail extends OutboxMail {
 }
 
 /** What goes with a mail, in the order in which it was written. */
-export function listMailAttachments(db: Queryable, outboxId: number): Promise<OutboxAttachment[]> {
+export function listOutboxAttachments(db: Queryable, outboxId: number): Promise<OutboxAttachment[]> {
   return rows<OutboxAttachment>(
     db,
     `select file_name as "fileName", media_type as "mediaType", content_id as "contentId", bytes from outbox_attachments

@@ -2,7 +2,7 @@ import { Inject, Injectable, Logger, type OnApplicationShutdown } from '@nestjs/
 import {
   type Database,
   leaseMail,
-  listMailAttachments,
+  listOutboxAttachments,
   updateMailFailed,
   updateMailLease,
   updateMailSent,
@@ -55,7 +55,7 @@ export class MailSendingService implements OnApplicationShutdown {
     }, KEEP_UP_MS);
     try {
       const { messageId, recipient, subject, html, text } = mail;
-      const attachments = (await listMailAttachments(this.database, mail.id)).map((attachment) => ({
+      const attachments = (await listOutboxAttachments(this.database, mail.id)).map((attachment) => ({
         filename: attachment.fileName,
         content: attachment.bytes,
         contentType: attachment.mediaType,
