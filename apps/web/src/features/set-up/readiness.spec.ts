@@ -95,13 +95,16 @@ test('of a new plant everything but its zone is missing, in the order of setting
   ]);
   expect(items[0].sentence).toBe('Times of the plant are those of America/Chicago.');
   expect(items[8].sentence).toBe('No quality engineer, no quality manager, no line lead yet.');
-  expect(readinessWords(items, 'Overdale')).toBe('8 things are missing before Overdale can take its first workbook.');
+  expect(readinessWords(items, 'Overdale', true)).toBe(
+    '8 things are missing before Overdale can take its first workbook.',
+  );
 });
 
 test('a plant with all of it is ready', () => {
   const items = readinessOf(READY);
   expect(items.every(({ isThere }) => isThere)).toBe(true);
-  expect(readinessWords(items, 'Overdale')).toBe('Nothing is missing: Overdale is ready for its first workbook.');
+  expect(readinessWords(items, 'Overdale', true)).toBe('Nothing is missing: Overdale is ready for its first workbook.');
+  expect(readinessWords(items, 'Overdale', false)).toBe('Nothing is missing: Overdale can take workbooks.');
   expect(items.map(({ sentence }) => sentence)).toContain('1 line: Capper 4.');
 });
 

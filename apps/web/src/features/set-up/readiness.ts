@@ -73,12 +73,15 @@ export function readinessOf(facts: SetUpFacts): Readiness[] {
   ];
 }
 
-/** The lead of the list: "3 things are missing before …". */
-export function readinessWords(items: readonly Readiness[], plantName: string): string {
+/** The lead of the list: "3 things are missing before …"; a plant that has readings is past its first workbook. */
+export function readinessWords(items: readonly Readiness[], plantName: string, isNew: boolean): string {
+  const [one, ready] = isNew
+    ? ['its first workbook', 'is ready for its first workbook']
+    : ['any workbook', 'can take workbooks'];
   const missing = items.filter(({ isThere }) => !isThere).length;
-  if (missing === 0) return `Nothing is missing: ${plantName} is ready for its first workbook.`;
+  if (missing === 0) return `Nothing is missing: ${plantName} ${ready}.`;
   const things = missing === 1 ? 'One thing is' : `${missing} things are`;
-  return `${things} missing before ${plantName} can take its first workbook.`;
+  return `${things} missing before ${plantName} can take ${one}.`;
 }
 
 const there = (section: SectionKey, sentence: string): Readiness => ({ section, isThere: true, sentence });

@@ -6,6 +6,7 @@ import { LineSection } from './components/line-section';
 import { PlantSection } from './components/plant-section';
 import { ProductSection } from './components/product-section';
 import { SpecificationSection } from './components/specification-section';
+import { WorkbookSection } from './workbook/workbook-section';
 
 export interface Section {
   /** As in the address. */
@@ -22,4 +23,5 @@ export const SECTIONS: readonly Section[] = [
   { key: 'specifications', name: 'Specifications', Component: SpecificationSection },
   { key: 'gauges', name: 'Gauges', Component: GaugeSection },
   { key: 'channels', name: 'Channels', Component: ChannelSection },
+  { key: 'workbook', name: 'Workbook', Component: WorkbookSection },
 ];

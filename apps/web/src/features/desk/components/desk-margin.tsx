@@ -4,7 +4,8 @@ const EXPLANATIONS: Record<DeskGroup, string> = {
   decide:
     'A held lot may not move on until somebody with the authority decides it. Nobody decides a hold from an intake which they confirmed.',
   fix: 'A workbook was read, and something in it wants your eye before it is confirmed.',
-  approve: 'A plan says how a channel is judged. Nobody approves a plan which they proposed.',
+  approve:
+    'A plan says how a channel is judged, a specification what a product must keep to. Nobody approves what they proposed.',
   check: 'A gauge whose check is due: measure its check standard and record what it shows.',
   set_aside: 'Put the lot apart, then say so here. The hold itself is only a notice.',
 };

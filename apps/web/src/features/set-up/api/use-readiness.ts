@@ -19,6 +19,8 @@ import {
 export interface ReadinessState {
   /** Null until all of it is known. */
   items: Readiness[] | null;
+  /** No workbook was read yet. */
+  isNew: boolean;
   error: unknown;
   readAgain: () => void;
 }
@@ -62,5 +64,6 @@ export function useReadiness(plantId: number): ReadinessState {
         })
       : null;
   const readAgain = () => queries.forEach((query) => query.isError && void query.refetch());
-  return { items, error: failed?.error ?? null, readAgain };
+  const isNew = plant.data?.mayChangeTimeZone ?? true;
+  return { items, isNew, error: failed?.error ?? null, readAgain };
 }

@@ -12,7 +12,7 @@ import { RowTable, type RowAction } from './row-table';
 
 const COLUMNS: FoldingColumn<ChannelSetUpView>[] = [
   { name: 'Channel', isLead: true, cell: ({ name, isRetired }) => (isRetired ? `${name}, retired` : name) },
-  { name: 'Line', cell: ({ line }) => line.name },
+  { name: 'Line', cell: ({ line }) => <span className="number">{line.name}</span> },
   { name: 'Measures', cell: ({ characteristic }) => characteristic.name },
   { name: 'Position', cell: ({ position }) => position },
   { name: 'Gauge', cell: ({ gauges }) => <Gauges gauges={gauges} /> },
@@ -21,7 +21,7 @@ const COLUMNS: FoldingColumn<ChannelSetUpView>[] = [
 function Gauges({ gauges }: { gauges: readonly GaugeServiceView[] }) {
   if (gauges.length === 0) return 'none';
   return gauges.map(({ gaugeId, assetNumber, since, until }) => (
-    <div key={`${gaugeId} ${since}`} className={until === null ? undefined : 'soft'}>
+    <div key={`${gaugeId} ${since}`} className={until === null ? 'channels__gauge' : 'channels__gauge soft'}>
       {assetNumber}, since <When at={since} form="date" />
       {until !== null && (
         <>

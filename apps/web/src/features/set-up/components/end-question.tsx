@@ -43,3 +43,17 @@ export function EndQuestion({ sentence, words, onConfirm, onDone }: EndQuestionP
     </div>
   );
 }
+
+/** In place of the question, where something else must end first. */
+export function Hindrance({ sentence, onDone }: Pick<EndQuestionProps, 'sentence' | 'onDone'>) {
+  return (
+    <div className="inline-form">
+      <p className="inline-form__note">{sentence}</p>
+      <div className="form__actions">
+        <Action kind="quiet" onPress={onDone}>
+          Leave it
+        </Action>
+      </div>
+    </div>
+  );
+}

@@ -7,6 +7,7 @@ import { When } from '../../../shared/ui/when';
 import { useGauges } from '../api/set-up';
 import { useSend, type Send } from '../api/use-send';
 import { changedFields } from '../changed';
+import { listed } from '../readiness';
 import { InlineForm, type FieldSpec } from './inline-form';
 import { retiring } from './retiring';
 import { RowTable, type RowAction } from './row-table';
@@ -84,7 +85,7 @@ export function GaugeSection({ plantId }: { plantId: number }) {
   );
 }
 
-function actionsOf({ id, assetNumber, kind, isRetired }: GaugeSetUpView, send: Send): RowAction[] {
+function actionsOf({ id, assetNumber, kind, isRetired, serves }: GaugeSetUpView, send: Send): RowAction[] {
   const path = `/gauges/${id}`;
   const before: Typed = { assetNumber, kind };
   const change: RowAction = {
@@ -105,5 +106,8 @@ function actionsOf({ id, assetNumber, kind, isRetired }: GaugeSetUpView, send: S
     ),
   };
   const consequence = `${assetNumber} serves no channel any more. What it measured stays.`;
-  return [change, retiring(send, { name: assetNumber, isRetired, path, consequence })];
+  const places = serves.map(({ channelName, lineName }) => `${channelName} on ${lineName}`);
+  const hindrance =
+    places.length > 0 ? `${assetNumber} serves ${listed(places)}: put another gauge there first.` : undefined;
+  return [change, retiring(send, { name: assetNumber, isRetired, path, consequence, hindrance })];
 }

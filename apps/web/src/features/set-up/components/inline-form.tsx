@@ -1,3 +1,4 @@
+import { Fragment } from 'react';
 import { useForm, type DefaultValues, type FieldPath, type UseFormReturn } from 'react-hook-form';
 import { ApiProblem } from '../../../shared/api/client';
 import { Field } from '../../../shared/forms/field';
@@ -20,6 +21,8 @@ export interface FieldSpec<F extends Values> {
   /** Known values that the field offers, and takes others. */
   offers?: readonly string[];
   size?: 'short' | 'long';
+  /** Begins a new line of fields. */
+  isFirst?: boolean;
   /** Shown, and not to be changed. */
   isFixed?: boolean;
   placeholder?: string;
@@ -58,7 +61,10 @@ export function InlineForm<F extends Values>(props: InlineFormProps<F>) {
       {note !== undefined && <p className="inline-form__note">{note}</p>}
       <div className="inline-form__fields">
         {fields.map((field) => (
-          <InlineField key={field.name} form={form} field={field} />
+          <Fragment key={field.name}>
+            {field.isFirst === true && <span className="inline-form__break" />}
+            <InlineField form={form} field={field} />
+          </Fragment>
         ))}
       </div>
       {errors.root?.message !== undefined && (

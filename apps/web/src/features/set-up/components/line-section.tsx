@@ -78,5 +78,10 @@ function actionsOf(line: LineSetUpView, send: Send): RowAction[] {
     ),
   };
   const consequence = `No more workbooks go to ${line.name}. Its lots and their records stay.`;
-  return [rename, retiring(send, { name: line.name, isRetired: line.isRetired, path, consequence })];
+  const channels = line.channelCount === 1 ? 'a channel' : `${line.channelCount} channels`;
+  const hindrance =
+    line.channelCount > 0
+      ? `${line.name} has ${channels} in use: retire ${line.channelCount === 1 ? 'it' : 'those'} first.`
+      : undefined;
+  return [rename, retiring(send, { name: line.name, isRetired: line.isRetired, path, consequence, hindrance })];
 }

@@ -68,6 +68,7 @@ const fieldsOf = (plant: PlantSetUpView): FieldSpec<Typed>[] => [
   { name: 'currency', label: 'Currency', hint: 'Such as EUR; may be empty.', size: 'short' },
   {
     name: 'reminderManagerHours',
+    isFirst: true,
     label: 'Remind managers after, h',
     hint: 'Age of an open hold.',
     kind: 'number',
@@ -82,6 +83,7 @@ const fieldsOf = (plant: PlantSetUpView): FieldSpec<Typed>[] => [
   },
   {
     name: 'allowanceNoticeShare',
+    isFirst: true,
     label: 'Allowance, notice, % of tolerance',
     hint: 'Movement that is told.',
     kind: 'number',

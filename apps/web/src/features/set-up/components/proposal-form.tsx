@@ -32,7 +32,7 @@ type Typed = {
   appliesToIndividuals: boolean;
 };
 
-const LIMIT_HINT = 'May be empty if the other is not.';
+const LIMIT_HINT = 'One of the two may be empty.';
 
 function fieldsOf({ characteristics }: ProposalFormProps, timeZone: string): FieldSpec<Typed>[] {
   const [{ unit }] = characteristics;
@@ -54,6 +54,7 @@ function fieldsOf({ characteristics }: ProposalFormProps, timeZone: string): Fie
     { name: 'upper', label: `Upper specification limit${inUnit}`, hint: LIMIT_HINT, kind: 'number' },
     {
       name: 'day',
+      isFirst: true,
       label: 'In force from, year-month-day',
       kind: 'day',
       pointer: '/validFrom',

@@ -1,5 +1,5 @@
 import type { Send } from '../api/use-send';
-import { EndQuestion } from './end-question';
+import { EndQuestion, Hindrance } from './end-question';
 import type { RowAction } from './row-table';
 
 interface Retirable {
@@ -9,21 +9,26 @@ interface Retirable {
   path: string;
   /** What follows when it is retired. */
   consequence: string;
+  /** Why it cannot be retired now. */
+  hindrance?: string;
 }
 
 /** Retiring a thing, or bringing it back: nothing is ever deleted. */
-export function retiring(send: Send, { name, isRetired, path, consequence }: Retirable): RowAction {
+export function retiring(send: Send, { name, isRetired, path, consequence, hindrance }: Retirable): RowAction {
   const words = isRetired ? 'Bring back' : 'Retire';
   return {
     words,
     label: `${words} ${name}`,
-    panel: (onDone) => (
-      <EndQuestion
-        sentence={isRetired ? `${name} can be used again from then on.` : consequence}
-        words={`${words} ${name}`}
-        onConfirm={() => send('PATCH', path, { isRetired: !isRetired })}
-        onDone={onDone}
-      />
-    ),
+    panel: (onDone) =>
+      hindrance !== undefined && !isRetired ? (
+        <Hindrance sentence={hindrance} onDone={onDone} />
+      ) : (
+        <EndQuestion
+          sentence={isRetired ? `${name} can be used again from then on.` : consequence}
+          words={`${words} ${name}`}
+          onConfirm={() => send('PATCH', path, { isRetired: !isRetired })}
+          onDone={onDone}
+        />
+      ),
   };
 }

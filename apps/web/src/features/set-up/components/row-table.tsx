@@ -23,7 +23,7 @@ interface RowTableProps<T> {
   /** Always shown below a row, such as what waits there for a word. */
   below?: (item: T) => ReactNode;
   /** The form of a new row. */
-  add?: { words: string; form: (onDone: () => void) => ReactNode };
+  add?: { words: string; kind?: 'plain'; form: (onDone: () => void) => ReactNode };
 }
 
 const ADDING = 'add';
@@ -120,7 +120,7 @@ export function RowTable<T>(props: RowTableProps<T>) {
           {opened === ADDING ? (
             add.form(close)
           ) : (
-            <Action kind="quiet" onPress={() => open(ADDING)}>
+            <Action kind={add.kind ?? 'quiet'} onPress={() => open(ADDING)}>
               {add.words}
             </Action>
           )}

@@ -1,3 +1,4 @@
+import { useId } from 'react';
 import type { ProductSetUpView, SpecificationSetUpView } from '@app/contracts';
 import { useSession } from '../../../shared/session/session';
 import { useNow } from '../../../shared/time/use-now';
@@ -33,21 +34,22 @@ export function SpecificationSection({ plantId }: { plantId: number }) {
       }
     >
       {(found) => (
-        <Loaded query={specifications} failure="The specifications could not be loaded.">
-          {(all) =>
-            found
-              .filter(({ isRetired }) => !isRetired)
-              .map((product, index) => (
-                <ProductSpecifications
-                  key={product.id}
-                  plantId={plantId}
-                  product={product}
-                  isFirst={index === 0}
-                  specifications={all.filter((one) => one.product.id === product.id)}
-                />
-              ))
-          }
-        </Loaded>
+        <Sheet title="Specifications" isFlush margin={<SpecificationMargin />}>
+          <Loaded query={specifications} failure="The specifications could not be loaded.">
+            {(all) =>
+              found
+                .filter(({ isRetired }) => !isRetired)
+                .map((product) => (
+                  <ProductSpecifications
+                    key={product.id}
+                    plantId={plantId}
+                    product={product}
+                    specifications={all.filter((one) => one.product.id === product.id)}
+                  />
+                ))
+            }
+          </Loaded>
+        </Sheet>
       )}
     </Loaded>
   );
@@ -56,14 +58,14 @@ export function SpecificationSection({ plantId }: { plantId: number }) {
 interface ProductSpecificationsProps {
   plantId: number;
   product: ProductSetUpView;
-  isFirst: boolean;
   specifications: SpecificationSetUpView[];
 }
 
-function ProductSpecifications({ plantId, product, isFirst, specifications }: ProductSpecificationsProps) {
+function ProductSpecifications({ plantId, product, specifications }: ProductSpecificationsProps) {
   const { can } = useSession();
   const send = useSend(plantId);
   const now = useNow();
+  const titleId = useId();
   const characteristics = (useCharacteristics(plantId).data ?? []).filter(
     ({ id, isRetired }) => !isRetired && !specifications.some(({ characteristic }) => characteristic.id === id),
   );
@@ -88,7 +90,10 @@ function ProductSpecifications({ plantId, product, isFirst, specifications }: Pr
     ];
   };
   return (
-    <Sheet title={`${product.code}, ${product.name}`} isFlush margin={isFirst ? <SpecificationMargin /> : undefined}>
+    <section className="specifications" aria-labelledby={titleId}>
+      <h3 id={titleId}>
+        {product.code}, {product.name}
+      </h3>
       <RowTable
         caption={`Specifications of ${product.code}`}
         columns={columnsAt(now)}
@@ -101,6 +106,7 @@ function ProductSpecifications({ plantId, product, isFirst, specifications }: Pr
           mayPropose && characteristics.length > 0
             ? {
                 words: `Propose a specification of ${product.code}`,
+                kind: 'plain',
                 form: (onDone) => (
                   <ProposalForm
                     plantId={plantId}
@@ -114,7 +120,7 @@ function ProductSpecifications({ plantId, product, isFirst, specifications }: Pr
             : undefined
         }
       />
-    </Sheet>
+    </section>
   );
 }
 

@@ -63,14 +63,15 @@ interface PartProps {
   readiness: ReadinessState;
 }
 
-function Lead({ plantId, readiness: { items }, isIndex }: PartProps & { isIndex: boolean }) {
+function Lead({ plantId, readiness: { items, isNew }, isIndex }: PartProps & { isIndex: boolean }) {
   const { plant } = useSession();
   // The line keeps its place while the lists are on their way.
   if (items === null) return <>&nbsp;</>;
   const isReady = items.every(({ isThere }) => isThere);
   return (
     <>
-      {readinessWords(items, plant.name)} {!isIndex && !isReady && <Link to={urls.setUp(plantId)}>See which</Link>}
+      {readinessWords(items, plant.name, isNew)}{' '}
+      {!isIndex && !isReady && <Link to={urls.setUp(plantId)}>See which</Link>}
     </>
   );
 }
