@@ -10,6 +10,7 @@ const HELP = `npm start   installs what is missing, makes a database in the data
   EBBLINE_DATA_DIR       database, secrets, mails and logs (.data)
   EBBLINE_SEED           demo (a plant with six weeks of readings) or empty (demo)
   EBBLINE_DEMO_PASSWORD  of the demo sign-ins, at the first start (else one is generated)
+  EBBLINE_ADMIN_EMAIL    of who begins an empty installation, by the link that each start prints until it is used (administrator@localhost)
 
 Ctrl-C ends everything that it started. To begin afresh, end it and delete the data folder.`;
 

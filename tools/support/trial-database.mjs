@@ -43,6 +43,16 @@ async function seedDemo(trial) {
   writeNotes(dataDir, NOTES, { state: 'demo' });
 }
 
+/** Of an installation without a plant: the link with which its administrator begins, until it has been used. */
+export const printFirstLink = (trial) =>
+  runBuilt(trial, {
+    script: 'tools/first-link.js',
+    args: ['--unless-used'],
+    log: 'inherit',
+    timeoutSeconds: 60,
+    onFailure: 'The link for the administrator could not be made: look at the lines above.',
+  });
+
 /**
  * Brings the database to the newest schema and, when it has no plant, seeds it as asked. A seeding that was interrupted
  * is begun afresh: nobody can have worked in it, since the app starts only afterwards.

@@ -12,7 +12,7 @@ import { openProjectCluster } from './project-cluster.mjs';
 import { duration, say, step } from './say.mjs';
 import { readSettings, refuseProduction } from './settings.mjs';
 import { stopAsked } from './stop-asked.mjs';
-import { prepareDatabase } from './trial-database.mjs';
+import { prepareDatabase, printFirstLink } from './trial-database.mjs';
 import { launchApp, launchCatcher } from './trial-programs.mjs';
 import { sayWelcome } from './welcome.mjs';
 
@@ -84,6 +84,7 @@ export async function start(root, env) {
       return 130;
     }
     sayWelcome(early, duration(startedAt));
+    if (!early.isDemo) await Promise.race([printFirstLink(early), stop]);
     const end = await Promise.race([firstToEnd(early.watched), stop]);
     if (end.program) throw describeEnd(end);
     say('\nEnding Ebbline …');

@@ -18,6 +18,8 @@ import { PlansModule } from './plans/plans.module';
 import { PlantsModule } from './plants/plants.module';
 import { SetUpModule } from './set-up/set-up.module';
 import { SetUpWorkbookModule } from './set-up-workbook/set-up-workbook.module';
+import { ProfileModule } from './profile/profile.module';
+import { SummariesModule } from './summaries/summaries.module';
 import { loggingModule } from './platform/logging.module';
 import { ProblemFilter } from './platform/problem.filter';
 import { createValidationPipe } from './platform/validation';
@@ -39,6 +41,7 @@ export class AppModule {
         AccessModule,
         AuthModule,
         PeopleModule,
+        ProfileModule,
         AuditModule,
         HealthModule,
         PlantsModule,
@@ -53,6 +56,7 @@ export class AppModule {
         MailsModule,
         SetUpModule,
         SetUpWorkbookModule,
+        SummariesModule,
         ...extraImports,
       ],
       providers: [

@@ -7,6 +7,7 @@ export * from './people';
 export * from './people-list';
 export * from './people-changes';
 export * from './person-tokens';
+export * from './first-administrator';
 export * from './account-audit';
 export * from './sessions';
 export * from './sign-in-failures';

@@ -18,7 +18,7 @@ export interface MembershipView {
 export const THEMES = ['system', 'light', 'dark'] as const;
 export type Theme = (typeof THEMES)[number];
 
-/** GET me, PATCH me. */
+/** GET me. */
 export interface Me {
   id: number;
   name: string;
