@@ -11,3 +11,6 @@ export { invitationMail, type InvitationFacts } from './messages/invitation';
 export { passwordResetMail, type PasswordResetFacts } from './messages/password-reset';
 export type { Mail } from './messages/layout';
 export { zonedText } from './messages/zoned-text';
+export { renderPng } from './chart/render-png';
+export { summaryChart } from './chart/summary-chart';
+export { CHART_CONTENT_ID, weeklySummaryMail, type WeeklySummaryFacts } from './messages/weekly-summary';

@@ -15,7 +15,7 @@ export type {
   Severity,
   WorkbookReport,
 } from './types';
-export { changeSentence, sheetSummary, titleOf } from './set-up/change-words';
+export { sheetSentences, sheetSummary, titleOf } from './set-up/change-words';
 export { compareSetUps, identityOf, type RowComparison, type SheetComparison } from './set-up/compare-set-up';
 export type * from './set-up/document';
 export { cellOf } from './set-up/loose';
@@ -25,3 +25,4 @@ export { sheetOf } from './set-up/sheets';
 export { sentencesOf } from './set-up/texts';
 export { writeSetUp } from './set-up/write-set-up';
 export { escapeFormula, writeTable, type TableColumn, type TableOptions } from './write-table';
+export { writeSummary } from './write-summary';

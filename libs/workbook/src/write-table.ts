@@ -32,12 +32,26 @@ const DEFAULT_FORMAT = { text: '@', number: 'General', datetime: 'yyyy-mm-dd hh:
  * @returns the file's bytes
  * @throws RangeError when `timeZone` is no IANA zone
  */
-export async function writeTable(options: TableOptions): Promise<Buffer> {
-  const zone = IANAZone.create(options.timeZone);
-  if (!zone.isValid) throw new RangeError(`"${options.timeZone}" is no IANA time zone.`);
+export function writeTable(options: TableOptions): Promise<Buffer> {
+  return writeTables([options]);
+}
+
+/** The same with a sheet a table, in their order. */
+export async function writeTables(tables: TableOptions[]): Promise<Buffer> {
+  const zones = tables.map(({ timeZone }) => {
+    const zone = IANAZone.create(timeZone);
+    if (!zone.isValid) throw new RangeError(`"${timeZone}" is no IANA time zone.`);
+    return zone;
+  });
   const out = new PassThrough();
   const whole = buffer(out);
   const book = new stream.xlsx.WorkbookWriter({ stream: out, useStyles: true, useSharedStrings: false });
+  for (const [index, table] of tables.entries()) await writeSheet(book, table, zones[index]);
+  await book.commit();
+  return whole;
+}
+
+async function writeSheet(book: stream.xlsx.WorkbookWriter, options: TableOptions, zone: IANAZone): Promise<void> {
   const sheet = book.addWorksheet(toSheetName(options.sheetName), { views: [{ state: 'frozen', ySplit: 1 }] });
   sheet.columns = options.columns.map((column) => {
     const header = column.unit ? `${column.header} [${column.unit}]` : column.header;
@@ -55,8 +69,6 @@ export async function writeTable(options: TableOptions): Promise<Buffer> {
   }
   sheet.autoFilter = { from: { row: 1, column: 1 }, to: { row: count, column: options.columns.length } };
   sheet.commit();
-  await book.commit();
-  return whole;
 }
 
 /** Makes a text harmless in any spreadsheet program by an apostrophe in front where it could start a formula. */

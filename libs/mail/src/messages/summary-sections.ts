@@ -1,0 +1,172 @@
+import {
+  ageInWords,
+  ageSpanInWords,
+  type ChangedLots,
+  formatQuantity,
+  formatValue,
+  lotsInWords,
+  type Measure,
+  measureInWords,
+  percentInWords,
+  SIGNATURE_MEANINGS,
+  type SummaryContent,
+  type WeekFigures,
+} from '@app/contracts';
+
+/** A part of the summary, said the same in HTML and in plain text. */
+export interface SummarySection {
+  title: string;
+  sentences: { text: string; path?: string | null }[];
+  table?: { head: string[]; rows: string[][] };
+}
+
+const MOST_NAMED = 6;
+
+/** What the mail says after its first sentence, in the order of what matters. */
+export function summarySections(content: SummaryContent): SummarySection[] {
+  return [
+    questionsSection(content),
+    linesSection(content),
+    openSection(content),
+    worseSection(content),
+    changedSection(content),
+    notScoredSection(content),
+    intakesSection(content),
+  ].filter((section) => section.sentences.length > 0 || section.table !== undefined);
+}
+
+function questionsSection({ whatToAsk }: SummaryContent): SummarySection {
+  return {
+    title: 'What to ask whom',
+    sentences: whatToAsk.slice(0, MOST_NAMED).map(({ whom, question, path }) => ({
+      text: `Ask ${whom}: ${question}`,
+      path,
+    })),
+  };
+}
+
+/** "12, 11 the week before". */
+const beside = (now: Measure, last: Measure | undefined): string =>
+  `${measureInWords(now)}${last === undefined ? '' : `; week before ${lotsInWords(last.lots)}`}`;
+
+function linesSection({ lines, total }: SummaryContent): SummarySection {
+  const row = (name: string, week: WeekFigures, last: WeekFigures | null): string[] => [
+    name,
+    beside(week.scored, last?.scored),
+    beside(week.held, last?.held),
+    decidedInWords(week),
+    beside(week.stillOpen, last?.stillOpen),
+  ];
+  const rows = lines.map(({ line, week, lastWeek }) => row(line.name, week, lastWeek));
+  if (lines.length > 1) rows.push(row('All lines', total.week, total.lastWeek));
+  return {
+    title: 'Each line',
+    sentences: [],
+    table: { head: ['Line', 'Scored', 'Held in the week', 'Decided in the week', 'Open at its end'], rows },
+  };
+}
+
+const decidedInWords = ({ decided }: WeekFigures): string =>
+  decided.length === 0
+    ? 'none'
+    : decided.map((measure) => `${SIGNATURE_MEANINGS[measure.disposition]}: ${measureInWords(measure)}`).join('; ');
+
+function openSection({ openHolds, total }: SummaryContent): SummarySection {
+  if (openHolds.count === 0) return { title: 'Held and undecided', sentences: [] };
+  const ages = total.week.stillOpenByAge
+    .filter(({ lots }) => lots > 0)
+    .map((age) => `${ageSpanInWords(age)}: ${measureInWords(age)}`);
+  const sentences = openHolds.holds.slice(0, MOST_NAMED).map((hold) => {
+    const quantity =
+      hold.quantity === null || hold.quantityUnit === null
+        ? ''
+        : `, ${formatQuantity(hold.quantity, hold.quantityUnit)}`;
+    const aside = hold.isSetAside ? 'set aside' : 'not confirmed to be set aside';
+    const since = hold.decidedSince === null ? '' : ` ${SIGNATURE_MEANINGS[hold.decidedSince]} since.`;
+    return {
+      text: `${hold.line.name}, ${ageInWords(hold.ageHours)}${quantity}, ${aside}: ${hold.sentence}${since}`,
+      path: `/holds/${hold.holdId}`,
+    };
+  });
+  return {
+    title: 'Held and undecided at the week’s end',
+    sentences: [{ text: `At risk by age: ${ages.join('; ')}.` }, ...sentences, ...andMore(openHolds.count)],
+  };
+}
+
+const andMore = (count: number) =>
+  count > MOST_NAMED ? [{ text: `And ${count - MOST_NAMED} more: see the page or the workbook.` }] : [];
+
+function worseSection({ gauges }: SummaryContent): SummarySection {
+  const told = gauges.filter(({ share }) => share !== null);
+  if (told.length === 0) return { title: 'What is getting worse', sentences: [] };
+  const worse = told.filter(({ isGettingWorse }) => isGettingWorse);
+  const opening =
+    worse.length === 0
+      ? 'No slow movement took up a tenth more of its allowance than in the week before.'
+      : `${worse.map(({ channel, line }) => `${channel.name} on ${line.name}`).join(', ')}: a tenth or more of the allowance was taken up since the week before.`;
+  return {
+    title: 'What is getting worse',
+    sentences: [{ text: opening }],
+    table: {
+      head: ['Channel', 'Gauge', 'Moved', 'Of its allowance', 'Week before'],
+      rows: told.map((gauge) => [
+        `${gauge.channel.name}, ${gauge.line.name}`,
+        gauge.gaugeAssetNumber ?? 'not recorded',
+        formatValue(gauge.movement, gauge),
+        percentInWords(gauge.share ?? 0),
+        gauge.lastWeekShare === null ? 'no baseline' : percentInWords(gauge.lastWeekShare),
+      ]),
+    },
+  };
+}
+
+function changedSection({ changedByBaseline }: SummaryContent): SummarySection {
+  const { onlyUnadjusted, onlyPlan } = changedByBaseline;
+  return {
+    title: 'What removing the slow movement changed',
+    sentences: [
+      {
+        text: `${lotsInWords(onlyUnadjusted.count)} that limits on unadjusted lot means would have held, and the plans did not${fatesInWords(onlyUnadjusted)}`,
+      },
+      {
+        text: `${lotsInWords(onlyPlan.count)} outside their control limits only once the slow movement was removed${fatesInWords(onlyPlan)}`,
+      },
+    ],
+  };
+}
+
+function fatesInWords({ count, lots, fates, lastWeekCount }: ChangedLots): string {
+  const last = lastWeekCount === null ? '' : ` Week before: ${lastWeekCount}.`;
+  if (count === 0) return `.${last}`;
+  const named = lots.slice(0, MOST_NAMED).map(({ lot }) => lot.number);
+  const more = count > named.length ? ' …' : '';
+  const became = fates.map(({ fate, lots: of }) => `${of} ${fateInWords(fate)}`).join(', ');
+  return ` (${named.join(', ')}${more}). What became of them: ${became}.${last}`;
+}
+
+const fateInWords = (fate: ChangedLots['fates'][number]['fate']): string =>
+  fate === 'moved_on' ? 'never held' : fate === 'held' ? 'still held' : SIGNATURE_MEANINGS[fate];
+
+function notScoredSection({ notScored }: SummaryContent): SummarySection {
+  return {
+    title: 'Lots without a score',
+    sentences: notScored.slice(0, MOST_NAMED).map(({ line, channel, lots, lastWeekLots, sentence }) => ({
+      text: `${line.name}, ${channel.name}: ${lotsInWords(lots)}, since ${sentence}. Week before: ${lastWeekLots}.`,
+      path: `/channels/${channel.id}`,
+    })),
+  };
+}
+
+function intakesSection({ intakes }: SummaryContent): SummarySection {
+  return {
+    title: 'Workbooks that need somebody',
+    sentences: [
+      ...intakes.intakes.slice(0, MOST_NAMED).map(({ id, fileName, line, receivedBy, state, sentence }) => ({
+        text: `${fileName} for ${line.name}, from ${receivedBy}, ${state === 'refused' ? 'refused' : 'needs attention'}: ${sentence}`,
+        path: `/intakes/${id}`,
+      })),
+      ...andMore(intakes.count),
+    ],
+  };
+}
