@@ -13,8 +13,18 @@ import { StopService } from './owed/stop.service';
 import { WorkProcessor } from './owed/work.processor';
 import { ProposePlanHandler } from './plans/propose-plan.handler';
 import { HoldRemindersService } from './reminders/hold-reminders.service';
+import { DueSummariesProcessor } from './summary/due-summaries.processor';
+import { DueSummariesService } from './summary/due-summaries.service';
+import { SummaryMailService } from './summary/summary-mail.service';
+import { WeeklySummaryHandler } from './summary/weekly-summary.handler';
 
-const HANDLERS = [ReadIntakeHandler, ScoreIntakeHandler, ScoreChannelsHandler, ProposePlanHandler];
+const HANDLERS = [
+  ReadIntakeHandler,
+  ScoreIntakeHandler,
+  ScoreChannelsHandler,
+  ProposePlanHandler,
+  WeeklySummaryHandler,
+];
 
 const MAILING = [MailSendingService, MailProcessor];
 
@@ -28,6 +38,7 @@ export class WorkerModule {
       providers: [
         JudgingService,
         HeldLotsMailService,
+        SummaryMailService,
         ...HANDLERS,
         { provide: OWED_JOB_HANDLERS, inject: HANDLERS, useFactory: (...handlers: OwedJobHandler[]) => handlers },
         RunningWork,
@@ -36,6 +47,8 @@ export class WorkerModule {
         ...(isMailing ? MAILING : []),
         OwedWorkService,
         HoldRemindersService,
+        DueSummariesService,
+        DueSummariesProcessor,
       ],
       exports: [WorkProcessor],
     };

@@ -14,6 +14,8 @@ export const JOBS = {
   scoreChannels: 'score-channels',
   /** Work out the default plan of a channel from its readings and propose it. */
   proposePlan: 'propose-plan',
+  /** Freeze a plant's week as a summary and mail it. */
+  weeklySummary: 'weekly-summary',
 } as const;
 export type JobName = (typeof JOBS)[keyof typeof JOBS];
 
@@ -29,6 +31,8 @@ export interface OwedJobSubject {
   /** `rejudgeFrom` (ISO): settled verdicts of lots that end later are looked at again too. */
   'score-channels': { channelIds: number[]; reason: string; rejudgeFrom: string | null };
   'propose-plan': { planId: number };
+  /** `askedBy`: the person who wants a new version; null when it is due and made unless the week has one. */
+  'weekly-summary': { plantId: number; weekStartsOn: string; isSent: boolean; askedBy: number | null };
 }
 
 /** Payload of the one job on MAIL_QUEUE. */
@@ -36,6 +40,10 @@ export interface MailJobPayload {
   outboxId: number;
 }
 export const SEND_MAIL_JOB = 'send-mail';
+
+/** The repeated job on WORK_QUEUE that owes the summaries that are due: a Monday 06:00 of any zone is met within minutes. */
+export const DUE_SUMMARIES_JOB = 'due-summaries';
+export const DUE_SUMMARIES_EVERY_MS = 300_000;
 
 /**
  * Attempts, with 2, 6, 14, 30, … s between them: some eight minutes in all, over all queues and restarts; then a person must look.

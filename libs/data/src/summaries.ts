@@ -52,6 +52,17 @@ export async function findNewestSummaryWeek(db: Queryable, plantId: number): Pro
   return row?.startsOn ?? null;
 }
 
+/** Mondays of the weeks whose summary was given up since: they are not owed again before a person asks, or a while has passed. */
+export async function listSummaryWeeksGivenUp(db: Queryable, plantId: number, since: Date): Promise<string[]> {
+  const found = await rows<{ startsOn: string }>(
+    db,
+    `select subject ->> 'weekStartsOn' as "startsOn" from owed_jobs
+     where plant_id = :plantId and name = 'weekly-summary' and state = 'failed' and ended_at > :since`,
+    { plantId, since },
+  );
+  return found.map((row) => row.startsOn);
+}
+
 /** The week's newest version; 0 without any. */
 export async function getSummaryVersion(db: Queryable, plantId: number, weekStartsOn: string): Promise<number> {
   const row = await findRow<{ version: number }>(

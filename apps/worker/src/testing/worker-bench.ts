@@ -17,6 +17,8 @@ import { RunningWork } from '../owed/running-work';
 import { WorkProcessor } from '../owed/work.processor';
 import { ProposePlanHandler } from '../plans/propose-plan.handler';
 import proposePlan from '../plans/propose-plan.thread';
+import { SummaryMailService } from '../summary/summary-mail.service';
+import { WeeklySummaryHandler } from '../summary/weekly-summary.handler';
 
 type Threads = Record<string, (task: never) => Promise<unknown>>;
 
@@ -47,6 +49,7 @@ export class WorkerBench {
       new ScoreIntakeHandler(this.db, this.clock, judging, mails, dispatcher),
       new ScoreChannelsHandler(this.clock, judging, mails, dispatcher),
       new ProposePlanHandler(this.db, config, this.clock, pools),
+      new WeeklySummaryHandler(this.db, this.clock, new SummaryMailService(config), dispatcher),
     ];
     this.processor = new WorkProcessor(this.handlers, this.db, this.clock, this.running);
   }
@@ -108,7 +111,7 @@ export class WorkerBench {
     const tables =
       'intakes intake_problems staged_readings lots lot_channels readings plan_revisions verdicts verdict_signals';
     const all: Record<string, unknown[]> = {};
-    for (const table of `${tables} holds hold_causes outbox audit_entries`.split(' '))
+    for (const table of `${tables} holds hold_causes outbox outbox_attachments summaries audit_entries`.split(' '))
       all[table] = await this.db(table).orderByRaw('1, 2, 3, 4');
     return all;
   }

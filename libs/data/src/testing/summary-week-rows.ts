@@ -63,7 +63,13 @@ export async function insertParts(
  * Some three weeks of two lines from `from` on, in no order that a query could be made for: lots of metres and kilograms or neither, of two
  * products of which one has a value, scored, not scored and not judged, held early and late, decided whole and in parts or not at all.
  */
-export async function insertManyWeeks(db: Database, plant: TestPlant, from: Date, seed: number): Promise<void> {
+export async function insertManyWeeks(
+  db: Database,
+  plant: TestPlant,
+  from: Date,
+  seed: number,
+  lotCount = 120,
+): Promise<void> {
   const random = seeded(seed);
   const other = await insertRow(db, 'products', {
     plant_id: plant.id,
@@ -89,7 +95,7 @@ export async function insertManyWeeks(db: Database, plant: TestPlant, from: Date
   const fits = new Map<number, number>();
   for (const channel of channels)
     fits.set(channel.id, await insertFit(db, plant, channel.id, await insertPlan(db, plant, channel)));
-  for (let index = 0; index < 120; index++) {
+  for (let index = 0; index < lotCount; index++) {
     const line = plant.lines[index % 2];
     const startsAt = new Date(from.getTime() + Math.floor(random() * 21 * 86_400_000));
     const lot = await insertLot(db, plant, { number: String(30_000 + index), startsAt, lineId: line.id });
