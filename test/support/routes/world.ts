@@ -1,5 +1,6 @@
 import { ROLES } from '@app/contracts';
 import { hashOfSecret, newSecret } from '../../../apps/api/src/auth/secret-tokens';
+import { madeSummary } from '../../../libs/contracts/src/testing/made-summary';
 import { startTestApp, type TestApp } from '../app';
 import { insertRow } from '../factories/insert';
 import { insertHold } from '../factories/holds';
@@ -21,6 +22,7 @@ export interface World {
   /** Open, for control limits alone, from an intake that the second engineer confirmed. */
   holdId: number;
   proposedPlanId: number;
+  summaryId: number;
   /** Of coat weight's next specification, by the engineer. */
   proposalId: number;
   /** Serves nowhere. */
@@ -59,6 +61,13 @@ export async function openWorld(): Promise<World> {
     plant,
     holdId: await openHold(app, shift),
     proposedPlanId,
+    summaryId: await insertRow(db, 'summaries', {
+      plant_id: plant.id,
+      week_starts_on: '2026-02-23',
+      version: 1,
+      content: JSON.stringify(madeSummary()),
+      made_at: app.clock.now(),
+    }),
     proposalId: await insertProposal(app, plant, plant.productId),
     spareGaugeId: await insertRow(db, 'gauges', { plant_id: plant.id, asset_number: 'LT-120', kind: 'laser gauge' }),
     colleague,
