@@ -19,6 +19,12 @@ const bareErrorPage = (
 
 export const router = createBrowserRouter([
   { path: routes.signIn, element: <SignInPage />, errorElement: bareErrorPage },
+  ...[routes.invitation, routes.newPassword].map((path) =>
+    page(path, async () => ({ Component: (await import('../features/links/pages/link-page')).LinkPage })),
+  ),
+  page(routes.forgottenPassword, async () => ({
+    Component: (await import('../features/links/pages/forgotten-password-page')).ForgottenPasswordPage,
+  })),
   {
     element: <SignedIn />,
     errorElement: bareErrorPage,
@@ -57,6 +63,12 @@ export const router = createBrowserRouter([
       ...[routes.setUp, routes.setUpSection].map((path) =>
         page(path, async () => ({ Component: (await import('../features/set-up/pages/set-up-page')).SetUpPage })),
       ),
+      page(routes.people, async () => ({
+        Component: (await import('../features/people/pages/people-page')).PeoplePage,
+      })),
+      page(routes.profile, async () => ({
+        Component: (await import('../features/profile/pages/profile-page')).ProfilePage,
+      })),
       { path: '*', element: <NotFoundPage /> },
     ],
   },

@@ -1,6 +1,11 @@
 /** The one source of the pages' addresses. `routes` are the router's patterns, `urls` fill them in. */
 export const routes = {
   signIn: '/sign-in',
+  forgottenPassword: '/forgotten-password',
+  invitation: '/invitation/:token',
+  newPassword: '/password/:token',
+  profile: '/profile',
+  people: '/plants/:plantId/people',
   desk: '/',
   lots: '/lots',
   lot: '/lots/:lotId',
@@ -34,6 +39,8 @@ export interface LotFilters {
 
 export const urls = {
   signIn: (next?: string) => withQuery(routes.signIn, { next: next === routes.desk ? undefined : next }),
+  forgottenPassword: () => routes.forgottenPassword,
+  profile: () => routes.profile,
   desk: (lineId?: number | null) => withQuery(routes.desk, { line: lineId }),
   lots: (filters: LotFilters = {}) => withQuery(routes.lots, { ...filters }),
   lot: (lotId: number) => `/lots/${lotId}`,

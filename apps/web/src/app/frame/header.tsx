@@ -22,7 +22,10 @@ export function Header() {
         {can('read_audit') && <Link to={urls.audit(plant.id)}>Audit</Link>}
         {can('set_up_plant') && <Link to={urls.mails(plant.id)}>Mail</Link>}
         {can('propose_specification') && <Link to={urls.setUp(plant.id)}>Set-up</Link>}
-        <span className="header__person">{me.name}</span>
+        {can('set_up_plant') && <Link to={urls.people(plant.id)}>People</Link>}
+        <Link className="header__person" to={urls.profile()} aria-label={`${me.name}, your profile`}>
+          {me.name}
+        </Link>
         <ThemeChoice />
         <Action kind="plain" onPress={() => void signOut()}>
           Sign out

@@ -3,6 +3,7 @@ import { createContext, useCallback, useContext, useEffect, useMemo, useState, t
 import { apiGet, apiSend } from '../api/client';
 import { queryClient } from '../api/query-client';
 import { endSession, keepToken, onSessionEnd, refreshToken } from '../api/token';
+import { useTheme } from '../theme/theme';
 
 export type AuthState =
   | { kind: 'checking' }
@@ -30,6 +31,13 @@ export function useAuth(): Auth {
 export function AuthProvider({ children }: { children: ReactNode }) {
   const [state, setState] = useState<AuthState>({ kind: 'checking' });
   const [round, setRound] = useState(0);
+  const { choose: showTheme } = useTheme();
+  const theme = state.kind === 'signed_in' ? state.me.theme : null;
+
+  // The theme that is kept with the person goes before what this browser showed last.
+  useEffect(() => {
+    if (theme !== null) showTheme(theme);
+  }, [theme, showTheme]);
 
   useEffect(() => {
     let isCurrent = true;

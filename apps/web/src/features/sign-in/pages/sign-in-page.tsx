@@ -1,5 +1,6 @@
 import '../sign-in.css';
-import { Navigate, useSearchParams } from 'react-router-dom';
+import { Link, Navigate, useSearchParams } from 'react-router-dom';
+import { urls } from '../../../app/urls';
 import { useAuth } from '../../../shared/session/auth';
 import { useDocumentTitle } from '../../../shared/ui/page-heading';
 import { ProblemNotice } from '../../../shared/ui/problem-notice';
@@ -28,6 +29,9 @@ export function SignInPage() {
           </p>
         )}
         <SignInForm />
+        <p>
+          <Link to={urls.forgottenPassword()}>Forgotten your password?</Link>
+        </p>
       </div>
     </main>
   );
