@@ -6,7 +6,6 @@ import { READING_ROWS } from './rows/reading';
 import { SET_UP_PLANT_ROWS } from './rows/set-up-plant';
 import { SET_UP_THING_ROWS } from './rows/set-up-things';
 import { SET_UP_WORKBOOK_ROWS } from './rows/set-up-workbook';
-import { SET_UP_WORKBOOK_ROWS } from './rows/set-up-workbook';
 import { SIGN_IN_ROWS } from './rows/sign-in';
 import { SUMMARY_ROWS } from './rows/summaries';
 import { WORK_ROWS } from './rows/work';

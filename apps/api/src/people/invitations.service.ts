@@ -41,19 +41,26 @@ export class InvitationsService {
   /** Somebody who is known already from another plant gets the roles here and a mail that says so, under their own name. */
   async invite(administrator: Person, plantId: number, request: InvitationRequest): Promise<PersonView> {
     const plant = await this.administration.require(administrator, plantId);
+    return this.dispatched((tx, at) => this.inviteWithin(tx, { administrator, plant, at }, request));
+  }
+
+  /** The same in a transaction of the caller, who has seen to the right to it and dispatches the mails once it stands. */
+  async inviteWithin(
+    tx: Transaction,
+    { administrator, plant, at }: { administrator: Person; plant: PlantRow; at: Date },
+    request: InvitationRequest,
+  ): Promise<{ person: PlantPerson; mailIds: number[] }> {
     const taken = {
       code: 'invited-meanwhile',
       detail: 'Somebody invited this address just now. Look at the list again.',
     };
-    return this.dispatched((tx, at) =>
-      withConflicts({ people_email_key: taken }, async () => {
-        await lockPlants(tx, [plantId]);
-        await requireLines(tx, plantId, request.lineIds);
-        const personId = await this.personOf(tx, plantId, request, at);
-        await replaceRoles(tx, plantId, personId, request);
-        return this.write(tx, { administrator, plant, personId, at, action: 'invite-person', verb: 'invited' });
-      }),
-    );
+    return withConflicts({ people_email_key: taken }, async () => {
+      await lockPlants(tx, [plant.id]);
+      await requireLines(tx, plant.id, request.lineIds);
+      const personId = await this.personOf(tx, plant.id, request, at);
+      await replaceRoles(tx, plant.id, personId, request);
+      return this.write(tx, { administrator, plant, personId, at, action: 'invite-person', verb: 'invited' });
+    });
   }
 
   /** Sends a new link; the earlier one ends. */

@@ -4,5 +4,9 @@ import { PeopleController } from './people.controller';
 import { PeopleService } from './people.service';
 import { PlantAdministration } from './plant-administration.service';
 
-@Module({ controllers: [PeopleController], providers: [InvitationsService, PeopleService, PlantAdministration] })
+@Module({
+  controllers: [PeopleController],
+  providers: [InvitationsService, PeopleService, PlantAdministration],
+  exports: [InvitationsService, PeopleService],
+})
 export class PeopleModule {}

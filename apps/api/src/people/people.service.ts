@@ -38,40 +38,45 @@ export class PeopleService {
   }
 
   /** Roles and lines take effect with the next request: they are read at each. Without any role the person leaves the plant. */
-  async change(
-    administrator: Person,
-    plantId: number,
+  async change(administrator: Person, plantId: number, personId: number, request: RolesRequest): Promise<PersonView> {
+    await this.administration.require(administrator, plantId);
+    const person = await this.database.transaction((tx) =>
+      this.changeWithin(tx, { administrator, plantId, at: this.clock.now() }, personId, request),
+    );
+    return personView(person);
+  }
+
+  /** The same in a transaction of the caller, who has seen to the right to it. */
+  async changeWithin(
+    tx: Transaction,
+    { administrator, plantId, at }: { administrator: Person; plantId: number; at: Date },
     personId: number,
     { roles, lineIds }: RolesRequest,
-  ): Promise<PersonView> {
-    await this.administration.require(administrator, plantId);
-    return this.database.transaction(async (tx) => {
-      await lockPlants(tx, [plantId]);
-      const before = await this.requireHere(tx, plantId, personId);
-      const lines = roles.length === 0 ? [] : await requireLines(tx, plantId, lineIds);
-      if (before.roles.includes('administrator') && !roles.includes('administrator'))
-        await requireAnotherAdministrator(tx, plantId, before);
-      const after = { roles, lineIds: lines.map((line) => line.id) };
-      await replaceRoles(tx, plantId, personId, after);
-      const at = this.clock.now();
-      if (roles.length === 0 && !before.hasPassword) await updatePersonTokensRevoked(tx, personId, ['invitation'], at);
-      const what =
-        roles.length === 0
-          ? `took ${before.name} out of the plant`
-          : `made ${before.name} ${rolesText(roles)}${lines.length === 0 ? '' : ` on ${lines.map((line) => line.name).join(', ')}`}`;
-      await insertAuditEntry(tx, {
-        plantId,
-        at,
-        actor: administrator,
-        action: 'change-roles',
-        thingKind: 'person',
-        thingId: personId,
-        sentence: `${administrator.name} ${what}.`,
-        before: { roles: before.roles, lineIds: before.lineIds },
-        after,
-      });
-      return personView((await findPlantPerson(tx, plantId, personId)) ?? { ...before, ...after });
+  ): Promise<PlantPerson> {
+    await lockPlants(tx, [plantId]);
+    const before = await this.requireHere(tx, plantId, personId);
+    const lines = roles.length === 0 ? [] : await requireLines(tx, plantId, lineIds);
+    if (before.roles.includes('administrator') && !roles.includes('administrator'))
+      await requireAnotherAdministrator(tx, plantId, before);
+    const after = { roles, lineIds: lines.map((line) => line.id) };
+    await replaceRoles(tx, plantId, personId, after);
+    if (roles.length === 0 && !before.hasPassword) await updatePersonTokensRevoked(tx, personId, ['invitation'], at);
+    const what =
+      roles.length === 0
+        ? `took ${before.name} out of the plant`
+        : `made ${before.name} ${rolesText(roles)}${lines.length === 0 ? '' : ` on ${lines.map((line) => line.name).join(', ')}`}`;
+    await insertAuditEntry(tx, {
+      plantId,
+      at,
+      actor: administrator,
+      action: 'change-roles',
+      thingKind: 'person',
+      thingId: personId,
+      sentence: `${administrator.name} ${what}.`,
+      before: { roles: before.roles, lineIds: before.lineIds },
+      after,
     });
+    return (await findPlantPerson(tx, plantId, personId)) ?? { ...before, ...after };
   }
 
   /** Ends every session and every link; the person's entries stay. */

@@ -11,8 +11,20 @@ export function titleOf(sheet: SheetKey, row: object): string {
   return [thing[0].toUpperCase() + thing.slice(1), names.join(', ')].filter(Boolean).join(' ');
 }
 
+/** What happens to the rows of a sheet, a sentence each; a shift calendar is replaced whole, so that shifts without a row are told too. */
+export function sheetSentences(
+  { sheet, rows, left }: SheetComparison,
+  documents: { present: SetUpDocument; wanted: SetUpDocument },
+): string[] {
+  const ending = sheet === 'shifts' && rows.length > 0 ? left : [];
+  return [
+    ...rows.flatMap((row) => changeSentence(sheet, row, documents) ?? []),
+    ...ending.map((index) => `${titleOf(sheet, documents.present[sheet][index])} is not in the new calendar.`),
+  ];
+}
+
 /** What happens to one row, in a sentence; null when nothing does. */
-export function changeSentence(
+function changeSentence(
   sheet: SheetKey,
   { kind, index, presentIndex, fields }: RowComparison,
   documents: { present: SetUpDocument; wanted: SetUpDocument },
@@ -52,7 +64,7 @@ function valueText(value: unknown, { style, key }: ColumnDefinition, timeZone: s
     case 'list':
       return (value as string[]).join(', ') || 'none';
     case 'number':
-      return String(value);
+      return `${value as number}`;
     default:
       return `"${value as string}"`;
   }
@@ -73,12 +85,15 @@ export function sheetSummary({ sheet, rows, left }: SheetComparison): string | n
   const said = parts.map(([number, word], at) =>
     at === 0 ? `${number} ${number === 1 ? thing : pluralOf(thing)} ${word}` : `${number} ${word}`,
   );
+  const isReplaced = sheet === 'shifts' && rows.length > 0;
   const stays =
     left.length === 0
       ? null
-      : left.length === 1
-        ? `1 ${said.length === 0 ? `${thing} ` : ''}has no row and stays as it is`
-        : `${left.length} ${said.length === 0 ? `${pluralOf(thing)} ` : ''}have no row and stay as they are`;
+      : isReplaced
+        ? `${left.length} not in the new calendar`
+        : left.length === 1
+          ? `1 ${said.length === 0 ? `${thing} ` : ''}has no row and stays as it is`
+          : `${left.length} ${said.length === 0 ? `${pluralOf(thing)} ` : ''}have no row and stay as they are`;
   const sentence = [said.join(', '), stays].filter(Boolean).join('; ');
   return sentence === '' ? null : `${sentence[0].toUpperCase()}${sentence.slice(1)}.`;
 }

@@ -1,5 +1,5 @@
 import { SET_UP } from '../testing/set-up';
-import { changeSentence, sheetSummary } from './change-words';
+import { sheetSentences, sheetSummary } from './change-words';
 import { compareSetUps } from './compare-set-up';
 import type { SetUpDocument } from './document';
 
@@ -11,9 +11,7 @@ const changed = (change: (document: SetUpDocument) => void): SetUpDocument => {
 
 /** Every sentence that is said of what `wanted` changes. */
 function sentences(wanted: SetUpDocument): string[] {
-  return compareSetUps(SET_UP, wanted).flatMap(({ sheet, rows }) =>
-    rows.flatMap((row) => changeSentence(sheet, row, { present: SET_UP, wanted }) ?? []),
-  );
+  return compareSetUps(SET_UP, wanted).flatMap((sheet) => sheetSentences(sheet, { present: SET_UP, wanted }));
 }
 const summaries = (wanted: SetUpDocument) => compareSetUps(SET_UP, wanted).map((sheet) => sheetSummary(sheet));
 
@@ -75,6 +73,17 @@ describe('what a workbook would change', () => {
     expect(said[3]).toBe('2 products have no row and stay as they are.');
     expect(said[5]).toBe('1 specification proposed anew, 1 unchanged.');
     expect(said[6]).toBe('1 gauge unchanged; 1 has no row and stays as it is.');
+  });
+
+  it('replaces a shift calendar whole', () => {
+    const wanted = changed((document) => {
+      document.shifts = [{ name: 'day', startsAt: '07:00', endsAt: '07:00', validFrom: '2026-02-02' }];
+    });
+    expect(sentences(wanted)).toEqual([
+      'Shift "day" changes: Ends from "19:00" to "07:00", Valid from from "2026-01-05" to "2026-02-02".',
+      'Shift "night" is not in the new calendar.',
+    ]);
+    expect(summaries(wanted)[1]).toBe('1 shift changed; 1 not in the new calendar.');
   });
 
   it('tells 0.1 from 0.100001', () => {

@@ -127,7 +127,8 @@ export const SHEETS: readonly SheetDefinition[] = [
     key: 'shifts',
     name: 'Shifts',
     thing: 'shift',
-    about: 'The newest shift calendar: a row a shift. Shifts do not overlap.',
+    about:
+      'The newest shift calendar: a row a shift. Shifts do not overlap. Where anything differs, the calendar is replaced as a whole.',
     identity: ['name'],
     columns: [
       shift('name', 'Name', 'text', { wants: 'The shift’s name.', example: 'early' }),
