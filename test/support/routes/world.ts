@@ -19,6 +19,8 @@ export interface World {
   app: TestApp;
   shift: TestShift;
   plant: TestPlant;
+  /** Where the stranger may do everything. */
+  other: TestPlant;
   /** Open, for control limits alone, from an intake that the second engineer confirmed. */
   holdId: number;
   proposedPlanId: number;
@@ -59,6 +61,7 @@ export async function openWorld(): Promise<World> {
     app,
     shift,
     plant,
+    other,
     holdId: await openHold(app, shift),
     proposedPlanId,
     summaryId: await insertRow(db, 'summaries', {
