@@ -51,6 +51,8 @@ module.exports = {
     ),
   },
   module: {
+    // What a program looks for in node_modules by createRequire is looked for when it runs.
+    parser: { javascript: { createRequire: false } },
     rules: [
       {
         test: /\.ts$/,
