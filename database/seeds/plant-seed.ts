@@ -5,13 +5,15 @@ import type { Role } from '@app/contracts';
 export interface PlantSeed {
   name: string;
   timeZone: string;
+  /** Of the products' values; none stated without. */
+  currency?: string;
   isDemo: boolean;
   at: Date;
   shifts: { name: string; startsAt: string; endsAt: string }[];
   people: { email: string; name: string; role: Role; lines: string[]; passwordHash: string }[];
   lines: {
     name: string;
-    products: { code: string; name: string }[];
+    products: { code: string; name: string; valuePerUnit?: number }[];
     channels: {
       name: string;
       characteristic: { name: string; unit: string; resolution: number };
@@ -37,7 +39,13 @@ export async function seedPlant(db: Knex, plant: PlantSeed): Promise<SeededPlant
   return db.transaction(async (tx) => {
     const plantId = idOf(
       await tx('plants')
-        .insert({ name: plant.name, time_zone: plant.timeZone, is_demo: plant.isDemo, created_at: plant.at })
+        .insert({
+          name: plant.name,
+          time_zone: plant.timeZone,
+          currency: plant.currency ?? null,
+          is_demo: plant.isDemo,
+          created_at: plant.at,
+        })
         .returning('id'),
     );
     await seedShifts(tx, plantId, plant);
@@ -123,8 +131,9 @@ async function seedLine(
   const since = `[${at.toISOString()},)`;
   const productIds = new Map<string, number>();
   for (const product of line.products) {
-    const { code, name } = product;
-    productIds.set(code, idOf(await tx('products').insert({ plant_id: plantId, code, name }).returning('id')));
+    const { code, name, valuePerUnit } = product;
+    const row = { plant_id: plantId, code, name, value_per_unit: valuePerUnit ?? null };
+    productIds.set(code, idOf(await tx('products').insert(row).returning('id')));
   }
   for (const channel of line.channels) {
     const characteristicId = await characteristicOf(tx, plantId, line.name, channel.characteristic);

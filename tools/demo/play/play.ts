@@ -93,11 +93,16 @@ async function decideHolds(stage: Stage, world: DemoWorld): Promise<void> {
   }
 }
 
-/** Takes in the last shift of the six weeks as it would come today: its holds stay open and its mails wait to be sent. */
+/**
+ * Takes in the last shift of the six weeks as it would come today: its holds stay open and its mails wait to be sent, with the summary of
+ * the week that ended last.
+ */
 export async function playLastShift(stage: Stage, world: DemoWorld): Promise<void> {
   const last = world.truth.schedule.shifts.at(-1) as DemoShift;
   stage.clock.release();
   const engineer = stage.person('engineer@marrowby.example');
   for (const { name } of describePlant().lines)
     await stage.takeIn(engineer, name, fileName(name, last), await workbookOf(world, name, [last]));
+  await stage.dueSummaries.oweDue();
+  await stage.settle();
 }

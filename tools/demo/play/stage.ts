@@ -6,6 +6,7 @@ import { BreaksService } from '../../../apps/api/src/breaks/breaks.service';
 import { DecisionsService } from '../../../apps/api/src/decisions/decisions.service';
 import { IntakesService } from '../../../apps/api/src/intakes/intakes.service';
 import { PlansService } from '../../../apps/api/src/plans/plans.service';
+import { DueSummariesService } from '../../../apps/worker/src/summary/due-summaries.service';
 import type { PlayClock } from './play-clock';
 
 const POLL_MS = 8;
@@ -17,6 +18,7 @@ export class Stage {
   readonly plans: PlansService;
   readonly breaks: BreaksService;
   readonly decisions: DecisionsService;
+  readonly dueSummaries: DueSummariesService;
   readonly database: Database;
 
   constructor(
@@ -30,6 +32,7 @@ export class Stage {
     this.plans = app.get(PlansService, { strict: false });
     this.breaks = app.get(BreaksService, { strict: false });
     this.decisions = app.get(DecisionsService, { strict: false });
+    this.dueSummaries = app.get(DueSummariesService, { strict: false });
     this.database = createDatabase(databaseUrl, { min: 0, max: 3 });
   }
 

@@ -8,6 +8,7 @@ import type { DemoChannel, DemoLine, DemoPlant } from './types';
 const PLANT: DemoPlant = {
   name: 'Marrowby Works',
   timeZone: 'Europe/London',
+  currency: 'GBP',
   shifts: [
     { name: 'early', startsAt: '06:00', endsAt: '14:00' },
     { name: 'late', startsAt: '14:00', endsAt: '22:00' },

@@ -13,6 +13,8 @@ export interface DemoProduct {
   name: string;
   /** Unit of a lot's quantity. */
   quantityUnit: string;
+  /** What one such unit is worth, in the plant's currency. */
+  valuePerUnit: number;
 }
 
 export interface DemoSpecification {
@@ -57,6 +59,8 @@ export interface DemoShiftHours {
 export interface DemoPlant {
   name: string;
   timeZone: string;
+  /** Of the products' values. */
+  currency: string;
   shifts: DemoShiftHours[];
   lines: DemoLine[];
   people: DemoPerson[];

@@ -10,7 +10,7 @@ import {
 import { escapeHtml, PAPER } from '../messages/layout';
 
 export const CHART_WIDTH = 568;
-const LABEL_WIDTH = 190;
+const LABEL_WIDTH = 214;
 const END_WIDTH = 118;
 const BAR_WIDTH = CHART_WIDTH - LABEL_WIDTH - END_WIDTH;
 const ROW_HEIGHT = 26;
@@ -124,4 +124,4 @@ function gaugeRow({ channel, line, share, lastWeekShare }: SummaryGauge, y: numb
 const ground = (y: number) => rectangle(LABEL_WIDTH, y + 6, BAR_WIDTH, BAR_HEIGHT, `fill="${PAPER.ground}"`);
 
 /** What fits beside the bars. */
-const shorten = (label: string) => (label.length > 29 ? `${label.slice(0, 28)}…` : label);
+const shorten = (label: string) => (label.length > 35 ? `${label.slice(0, 34)}…` : label);

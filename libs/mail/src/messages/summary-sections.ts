@@ -82,7 +82,7 @@ function openSection({ openHolds, total }: SummaryContent): SummarySection {
         ? ''
         : `, ${formatQuantity(hold.quantity, hold.quantityUnit)}`;
     const aside = hold.isSetAside ? 'set aside' : 'not confirmed to be set aside';
-    const since = hold.decidedSince === null ? '' : ` ${SIGNATURE_MEANINGS[hold.decidedSince]} since.`;
+    const since = hold.decidedSince === null ? '' : ` Since then it was ${SIGNATURE_MEANINGS[hold.decidedSince]}.`;
     return {
       text: `${hold.line.name}, ${ageInWords(hold.ageHours)}${quantity}, ${aside}: ${hold.sentence}${since}`,
       path: `/holds/${hold.holdId}`,
@@ -140,9 +140,9 @@ function fatesInWords({ count, lots, fates, lastWeekCount }: ChangedLots): strin
   const last = lastWeekCount === null ? '' : ` Week before: ${lastWeekCount}.`;
   if (count === 0) return `.${last}`;
   const named = lots.slice(0, MOST_NAMED).map(({ lot }) => lot.number);
-  const more = count > named.length ? ' …' : '';
+  if (count > named.length) named.push('…');
   const became = fates.map(({ fate, lots: of }) => `${of} ${fateInWords(fate)}`).join(', ');
-  return ` (${named.join(', ')}${more}). What became of them: ${became}.${last}`;
+  return ` (${named.join(', ')}). What became of them: ${became}.${last}`;
 }
 
 const fateInWords = (fate: ChangedLots['fates'][number]['fate']): string =>

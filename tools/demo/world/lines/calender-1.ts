@@ -7,8 +7,8 @@ export const CALENDER_1: LineModel = {
     lotsPerShift: 4,
     firstLotNumber: 51001,
     products: [
-      { code: 'BF-12', name: 'Calendered base film, 12 µm', quantityUnit: 'm²' },
-      { code: 'BF-14', name: 'Calendered base film, 14 µm', quantityUnit: 'm²' },
+      { code: 'BF-12', name: 'Calendered base film, 12 µm', quantityUnit: 'm²', valuePerUnit: 0.21 },
+      { code: 'BF-14', name: 'Calendered base film, 14 µm', quantityUnit: 'm²', valuePerUnit: 0.23 },
     ],
     channels: [
       {

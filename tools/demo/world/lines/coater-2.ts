@@ -7,8 +7,8 @@ export const COATER_2: LineModel = {
     lotsPerShift: 4,
     firstLotNumber: 24001,
     products: [
-      { code: 'CS-16', name: 'Coated separator, 16 µm', quantityUnit: 'm²' },
-      { code: 'CS-20', name: 'Coated separator, 20 µm', quantityUnit: 'm²' },
+      { code: 'CS-16', name: 'Coated separator, 16 µm', quantityUnit: 'm²', valuePerUnit: 0.62 },
+      { code: 'CS-20', name: 'Coated separator, 20 µm', quantityUnit: 'm²', valuePerUnit: 0.7 },
     ],
     channels: [
       {

@@ -7,8 +7,8 @@ export const SLURRY_3: LineModel = {
     lotsPerShift: 4,
     firstLotNumber: 73001,
     products: [
-      { code: 'SL-A', name: 'Alumina slurry, thin', quantityUnit: 'kg' },
-      { code: 'SL-B', name: 'Alumina slurry, thick', quantityUnit: 'kg' },
+      { code: 'SL-A', name: 'Alumina slurry, thin', quantityUnit: 'kg', valuePerUnit: 1.9 },
+      { code: 'SL-B', name: 'Alumina slurry, thick', quantityUnit: 'kg', valuePerUnit: 2.3 },
     ],
     channels: [
       {
