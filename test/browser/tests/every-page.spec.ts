@@ -1,6 +1,7 @@
 import type { Page } from 'playwright-core';
 import { Trial } from '../../support/browser';
 import { NEXT_SHIFT, shiftWorkbook } from '../../support/browser-plant';
+import { AuditPage } from '../pages/audit.page';
 import { FramePage } from '../pages/frame.page';
 import { HoldPage } from '../pages/hold.page';
 import { IntakePage } from '../pages/intake.page';
@@ -44,6 +45,8 @@ async function takeTheShiftIn(page: Page): Promise<Record<string, string>> {
   await page.getByRole('link', { name: 'Coat weight', exact: true }).click();
   await frame.heading(/^Coat weight/).waitFor();
   const record = here();
+  await new AuditPage(page).open();
+  const audit = here();
   return {
     desk: '/',
     'drop zone': drop,
@@ -54,6 +57,7 @@ async function takeTheShiftIn(page: Page): Promise<Record<string, string>> {
     record,
     hold,
     plan: `${record}/plans`,
+    audit,
     'no page': '/nowhere',
   };
 }
@@ -90,6 +94,18 @@ describe('no page scrolls sideways', () => {
     }
     expect(wide).toEqual([]);
   });
+});
+
+test('the audit tells who took the shift in, what changed, and leaves as a workbook', async () => {
+  const audit = new AuditPage(desk);
+  await show(desk, paths.audit);
+  await audit.find('early.xlsx');
+  const confirmed = audit.entry(/confirmed the intake of early\.xlsx/);
+  await confirmed.waitFor();
+  expect(await audit.changesOf(confirmed)).toMatch(/^state\s+needs attention[^]*queued/);
+  expect((await audit.export()).suggestedFilename()).toBe('audit.xlsx');
+  await confirmed.getByRole('link', { name: 'early.xlsx' }).click();
+  await new FramePage(desk).heading('early.xlsx: scored').waitFor();
 });
 
 const ground = (page: Page): Promise<string> =>
