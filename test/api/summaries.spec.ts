@@ -1,5 +1,13 @@
+import { getQueueToken } from '@nestjs/bull';
+import type { Queue } from 'bull';
 import { Workbook } from 'exceljs';
-import type { SummaryListView, SummaryView } from '@app/contracts';
+import {
+  DUE_SUMMARIES_EVERY_MS,
+  DUE_SUMMARIES_JOB,
+  type SummaryListView,
+  type SummaryView,
+  WORK_QUEUE,
+} from '@app/contracts';
 import { insertManyWeeks } from '../../libs/data/src/testing/summary-week-rows';
 import { WorkerModule } from '../../apps/worker/src/worker.module';
 import { startTestApp, type TestApp } from '../support/app';
@@ -30,10 +38,10 @@ describe('weekly summaries', () => {
   const ask = (headers: Headers, body: object) => app.http.post(path()).set(headers).send(body);
   const list = async (headers: Headers = as.director) =>
     (await app.http.get(path()).set(headers).expect(200)).body as SummaryListView;
-  async function made(version: number): Promise<number> {
+  async function made(version: number, week = WEEK): Promise<number> {
     const end = Date.now() + 60_000;
     for (;;) {
-      const item = (await list()).items.find(({ weekStartsOn }) => weekStartsOn === WEEK);
+      const item = (await list()).items.find(({ weekStartsOn }) => weekStartsOn === week);
       if (item?.version === version) return item.id;
       if (Date.now() > end) throw new Error('no summary came');
       await new Promise((resolve) => setTimeout(resolve, 50));
@@ -116,5 +124,16 @@ describe('weekly summaries', () => {
     expectProblem(await ask(as.engineer, { weekStartsOn: WEEK }), 403, 'forbidden');
     expectProblem(await ask(as.stranger, { weekStartsOn: WEEK }), 404, 'not-found');
     expect((await app.http.post(path()).send({ weekStartsOn: WEEK })).status).toBe(401);
+  });
+
+  it('are made by the beat of a repeated job once a Monday has come', async () => {
+    const queue = app.nest.get<Queue>(getQueueToken(WORK_QUEUE), { strict: false });
+    expect((await queue.getRepeatableJobs()).map(({ name, every }) => [name, every])).toEqual([
+      [DUE_SUMMARIES_JOB, DUE_SUMMARIES_EVERY_MS],
+    ]);
+    app.clock.set('2026-03-16T06:00:00Z');
+    as.director = await signIn(app, 'director@marrowby.example');
+    await queue.add(DUE_SUMMARIES_JOB, {}, { removeOnComplete: true });
+    await made(1, '2026-03-09');
   });
 });
