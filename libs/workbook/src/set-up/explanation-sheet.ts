@@ -15,7 +15,7 @@ export function addExplanation(book: Workbook, plantName: string, timeZone: stri
   const intro = [
     `The set-up of ${plantName}. Times are plant time, ${timeZone}.`,
     'Change or add rows on the sheets that follow, then drop the workbook on the page from which it came: it shows every problem with its cell, and what would change, before anything is applied.',
-    'The workbook is applied as a whole or not at all. Nothing is removed by it: what has no row stays as it is, and is retired on its own page.',
+    'The workbook is applied as a whole or not at all. Nothing is removed by it: what has no row stays as it is, and is retired on its own page. Only a shift calendar is replaced as a whole.',
     'Things name each other by name or code, written as on their own sheet. A column or sheet that is none of these is passed over.',
     'A text that begins with = + - or @ stands with an apostrophe in front, so that no program takes it for a formula.',
   ];

@@ -40,13 +40,15 @@ function Download({ plantId }: { plantId: number }) {
       title="The set-up as it is"
       margin={<p>For a plant that is still empty it holds the empty sheets, ready to be filled in.</p>}
     >
-      <p>
-        One Excel workbook with a sheet each for the plant, shifts, lines, products, characteristics, specifications,
-        gauges, channels and people. Its first sheet says what every column wants.
-      </p>
-      <Action kind="quiet" isBusy={taking.isPending} onPress={() => taking.mutate()}>
-        {taking.isPending ? 'Writing the workbook…' : 'Download the workbook'}
-      </Action>
+      <div className="set-up-download">
+        <p>
+          One Excel workbook with a sheet each for the plant, shifts, lines, products, characteristics, specifications,
+          gauges, channels and people. Its first sheet says what every column wants.
+        </p>
+        <Action kind="quiet" isBusy={taking.isPending} onPress={() => taking.mutate()}>
+          {taking.isPending ? 'Writing the workbook…' : 'Download the workbook'}
+        </Action>
+      </div>
     </Sheet>
   );
 }
@@ -60,7 +62,7 @@ function Upload({ plantId }: { plantId: number }) {
       margin={
         <>
           <p>A workbook is applied as a whole or not at all, and every change has its entry in the audit.</p>
-          <p>Nothing is removed by it: what has no row stays as it is.</p>
+          <p>Nothing is removed by it: what has no row stays as it is. Only a shift calendar is replaced as a whole.</p>
         </>
       }
     >
