@@ -155,13 +155,13 @@ function columnsAt(now: number): FoldingColumn<SpecificationSetUpView>[] {
       },
     },
     {
-      name: 'In force',
+      name: 'Version in force',
       cell: (one) => {
         const version = inForce(one);
-        if (version === null) return 'not yet';
+        if (version === null) return 'none yet';
         return (
           <span title={`Proposed by ${version.proposedBy}, approved by ${version.approvedBy}`}>
-            version {version.version} since <When at={version.validFrom} form="date" />
+            {version.version}, since <When at={version.validFrom} form="date" />
           </span>
         );
       },
