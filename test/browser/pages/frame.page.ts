@@ -17,7 +17,7 @@ export class FramePage {
     return this.page.getByRole('heading', { level: 1, name: text });
   }
 
-  to(page: 'Desk' | 'Intake' | 'Lots' | 'Channels'): Promise<void> {
+  to(page: 'Desk' | 'Intake' | 'Lots' | 'Channels' | 'Summary'): Promise<void> {
     return this.page
       .getByRole('navigation', { name: /^Pages of/ })
       .getByRole('link', { name: page })

@@ -6,6 +6,8 @@ import { madeId } from '../week';
 
 /** While a summary is being made. */
 const POLL_MS = 1_500;
+/** The week's summary comes by itself. */
+const REFRESH_MS = 15_000;
 
 export const summariesKey = (plantId: number) => ['summaries', 'of', plantId] as const;
 
@@ -15,7 +17,7 @@ export function useSummaries(plantId: number, awaited: SummaryRequested | null =
     queryKey: summariesKey(plantId),
     queryFn: ({ signal }) => apiGet<SummaryListView>(`/plants/${plantId}/summaries`, signal),
     refetchInterval: ({ state }) =>
-      awaited === null || madeId(state.data?.items, awaited) !== undefined ? false : POLL_MS,
+      awaited === null || madeId(state.data?.items, awaited) !== undefined ? REFRESH_MS : POLL_MS,
   });
 }
 
