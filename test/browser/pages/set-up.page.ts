@@ -72,6 +72,14 @@ export class SetUpPage {
     await this.press(`Approve version ${version}`);
   }
 
+  /** On the page of people: gives somebody one role at the plant, and waits until they stand in its table. */
+  async invite(email: string, name: string, role: string): Promise<void> {
+    await this.type({ Name: name, 'E-mail address': email });
+    await this.page.getByRole('checkbox', { name: role }).check();
+    await this.press('Send the invitation');
+    await this.row('People of this plant', email).waitFor();
+  }
+
   async choosePlant(name: string): Promise<void> {
     await this.page.getByLabel('Plant').selectOption({ label: name });
   }
