@@ -204,5 +204,7 @@ async function gaugeOf(
 
 /** Drops the mails of a played past: nobody is sent last month's news. */
 export async function discardWaitingMails(db: Knex, plantId: number): Promise<number> {
-  return db('outbox').where({ plant_id: plantId, state: 'waiting' }).delete();
+  const waiting = () => db('outbox').where({ plant_id: plantId, state: 'waiting' });
+  await db('outbox_attachments').whereIn('outbox_id', waiting().select('id')).delete();
+  return waiting().delete();
 }

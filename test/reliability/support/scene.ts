@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { Client } from 'pg';
-import { createDatabase } from '@app/data';
+import { createDatabase, type Database, lastCompleteWeek } from '@app/data';
 import { createTestDatabase } from '../../support/database';
 import { insertPlant, type TestPlant } from '../../support/factories/plant';
 import { insertHistory, insertPlans, workbookOf } from './history';
@@ -23,6 +23,14 @@ async function asAdmin(sql: string): Promise<void> {
   }
 }
 
+/** The week that ended last is told already: no program of a run makes its summary beside what is watched. */
+async function insertToldWeek(db: Database, plant: TestPlant): Promise<void> {
+  const madeAt = new Date();
+  const { startsOn } = lastCompleteWeek(madeAt, 'Europe/London');
+  const summary = { plant_id: plant.id, week_starts_on: startsOn, version: 1, content: '{}', made_at: madeAt };
+  await db('summaries').insert(summary);
+}
+
 /** A plant with thirty lots on two channels whose plans are in force. */
 export async function makeScene(): Promise<Scene> {
   const original = await createTestDatabase();
@@ -30,6 +38,7 @@ export async function makeScene(): Promise<Scene> {
   const plant = await insertPlant(db);
   await insertHistory(db, plant);
   await insertPlans(db, plant);
+  await insertToldWeek(db, plant);
   await db.destroy();
   const source = new URL(original.url).pathname.slice(1);
   return {
