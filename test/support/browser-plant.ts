@@ -56,7 +56,9 @@ async function play(databaseUrl: string): Promise<void> {
     EBBLINE_JWT_SECRET: 'a secret of the played past, forty characters',
   });
   const app = await NestFactory.createApplicationContext(
-    AppModule.register(config, clock, { extraImports: [WorkerModule.register({ isMailing: false })] }),
+    AppModule.register(config, clock, {
+      extraImports: [WorkerModule.register({ isMailing: false, isTellingWeeks: false })],
+    }),
     { logger: ['error', 'warn'] },
   );
   const stage = new Stage(app, databaseUrl, clock, plant, people);

@@ -52,7 +52,7 @@ async function main(): Promise<void> {
   const clock = new PlayClock();
   const app = await NestFactory.createApplicationContext(
     AppModule.register({ ...config, redisUrl: null }, clock, {
-      extraImports: [WorkerModule.register({ isMailing: false })],
+      extraImports: [WorkerModule.register({ isMailing: false, isTellingWeeks: false })],
     }),
     { logger: ['error', 'warn'] },
   );

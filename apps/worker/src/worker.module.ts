@@ -31,8 +31,8 @@ const MAILING = [MailSendingService, MailProcessor];
 /** Works off the queues. Needs PlatformModule and QueueModule, both global, in the same program. */
 @Module({})
 export class WorkerModule {
-  /** Without `isMailing` mails stay in the outbox, for another worker to send. */
-  static register({ isMailing } = { isMailing: true }): DynamicModule {
+  /** Without `isMailing` mails stay in the outbox, for another worker to send; without `isTellingWeeks` no summary is due by itself. */
+  static register({ isMailing = true, isTellingWeeks = true } = {}): DynamicModule {
     return {
       module: WorkerModule,
       providers: [
@@ -48,7 +48,7 @@ export class WorkerModule {
         OwedWorkService,
         HoldRemindersService,
         DueSummariesService,
-        DueSummariesProcessor,
+        ...(isTellingWeeks ? [DueSummariesProcessor] : []),
       ],
       exports: [WorkProcessor],
     };

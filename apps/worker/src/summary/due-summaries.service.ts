@@ -1,5 +1,5 @@
 import { InjectQueue } from '@nestjs/bull';
-import { Inject, Injectable, Logger, type OnApplicationBootstrap } from '@nestjs/common';
+import { Inject, Injectable, Logger } from '@nestjs/common';
 import type { Queue } from 'bull';
 import { DUE_SUMMARIES_EVERY_MS, DUE_SUMMARIES_JOB, JOBS, WORK_QUEUE } from '@app/contracts';
 import {
@@ -22,7 +22,7 @@ const GIVEN_UP_MS = 6 * 3_600_000;
 
 /** Owes each plant the summaries that are due: at start, which catches up what a stop missed, and with every beat of a repeated job. */
 @Injectable()
-export class DueSummariesService implements OnApplicationBootstrap {
+export class DueSummariesService {
   private readonly logger = new Logger(DueSummariesService.name);
 
   constructor(
@@ -32,7 +32,8 @@ export class DueSummariesService implements OnApplicationBootstrap {
     private readonly dispatcher: Dispatcher,
   ) {}
 
-  async onApplicationBootstrap(): Promise<void> {
+  /** Begins the beat, and catches up. */
+  async start(): Promise<void> {
     await within(PATIENCE_MS, this.begin());
   }
 

@@ -86,7 +86,7 @@ describe('the weekly summary', () => {
   });
 
   it('looks for due weeks at start and with every beat of a repeated job', async () => {
-    await due().onApplicationBootstrap();
+    await due().start();
     expect(queued).toEqual([
       { name: DUE_SUMMARIES_JOB, options: { repeat: { every: 300_000 }, removeOnComplete: true, removeOnFail: true } },
     ]);
@@ -98,7 +98,7 @@ describe('the weekly summary', () => {
     await runAll();
     bench.clock.advance(3 * 7 * DAY);
     for (let start = 0; start < 3; start++) {
-      await due().onApplicationBootstrap();
+      await due().start();
       await runAll();
     }
     expect(await told()).toEqual(['2026-03-02 v1', '2026-03-09 v1', '2026-03-16 v1', '2026-03-23 v1']);
