@@ -1,6 +1,14 @@
 /** What went wrong, told so that a person can act on it. The HTTP layer maps `kind` to a status. */
 export type ErrorKind =
-  'invalid' | 'unauthenticated' | 'forbidden' | 'not_found' | 'gone' | 'conflict' | 'too_large' | 'unprocessable' | 'too_many';
+  | 'invalid'
+  | 'unauthenticated'
+  | 'forbidden'
+  | 'not_found'
+  | 'gone'
+  | 'conflict'
+  | 'too_large'
+  | 'unprocessable'
+  | 'too_many';
 
 /** One field's error: `pointer` is a JSON pointer into the request body, such as `/reason`. */
 export interface FieldError {
