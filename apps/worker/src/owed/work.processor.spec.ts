@@ -125,7 +125,7 @@ describe('working off owed jobs', () => {
   });
 
   it('knows every job by name', () => {
-    const names: JobName[] = ['read-intake', 'score-intake', 'score-channels', 'propose-plan'];
+    const names: JobName[] = ['read-intake', 'score-intake', 'score-channels', 'propose-plan', 'weekly-summary'];
     expect(bench.handlers.map(({ jobName }) => jobName)).toEqual(names);
   });
 });
