@@ -23,7 +23,8 @@ const QUERIES: Record<string, string> = {
   holds: `select l.number, h.state, h.is_late, h.evidence_version,
     array(select k.signal || ': ' || k.sentence from hold_causes k where k.hold_id = h.id order by k.id) as causes
     from holds h join lots l on l.id = h.lot_id order by h.id`,
-  audit: 'select actor_name, action, thing_kind, sentence from audit_entries order by id',
+  /** Without the sign-ins of the client, which fall where the programs are started again. */
+  audit: `select actor_name, action, thing_kind, sentence from audit_entries where action <> 'sign-in' order by id`,
   outbox: 'select kind, recipient, subject, state, last_error from outbox order by recipient, kind',
   owed: 'select name, state from owed_jobs order by id',
 };
