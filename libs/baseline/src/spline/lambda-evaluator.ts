@@ -4,11 +4,8 @@ import { outOfRange, scaledInverse, type FilteredSeries } from './filtered-serie
 import { filterBackward, filterForward, filterRange } from './filter-passes';
 import { combine, STATE_SIZE, type Posterior } from './information-state';
 import { LotDeleter, nothingLeft } from './lot-deletion';
+import { pointsHeld } from './smooth-series';
 import { determinantConstant, logDeterminant, restrictedDeviance } from './restricted-likelihood';
-
-/** Points whose forward states are held at once; those of longer series are worked out again block by block, which is cheaper than fresh memory for all. */
-const WHOLE_POINTS = 65536;
-const BLOCK = 2048;
 
 /**
  * What the rules for choosing lambda look at, for one series and many lambda, in buffers that are made once: exact, O(n) a call. The fields speak of the last call of
@@ -47,7 +44,7 @@ export class LambdaEvaluator implements FilteredSeries {
 
   constructor(readonly series: PreparedSeries) {
     const { n } = series;
-    this.block = n <= WHOLE_POINTS ? n : BLOCK;
+    this.block = pointsHeld(n);
     this.states = new Float64Array(STATE_SIZE * this.block);
     this.starts = new Float64Array(STATE_SIZE * Math.ceil(n / this.block));
     this.deleter = new LotDeleter(this);

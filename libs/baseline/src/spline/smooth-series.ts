@@ -7,6 +7,14 @@ import { smoothBackward, type SmoothedPoints } from './smoothing-pass';
 const WHOLE_POINTS = 65536;
 /** Points whose forward states are worked out together in a longer series: 100 kB, which stay in the processor's cache. */
 const BLOCK = 2048;
+/**
+ * Points whose forward states are held at once: all of them, or in longer series a block, whose states are worked out again when they are needed, which is cheaper
+ * than fresh memory for all.
+ */
+export function pointsHeld(n: number): number {
+  return n <= WHOLE_POINTS ? n : BLOCK;
+}
+
 /** Fresh memory for the states would cost more than working them out. */
 let scratch = new Float64Array(0);
 
@@ -28,7 +36,7 @@ export interface SmoothedSeries {
  */
 export function smoothSeries(series: PreparedSeries, q: number): SmoothedSeries | undefined {
   const { n, gap, pull, r } = series;
-  const size = n <= WHOLE_POINTS ? n : BLOCK;
+  const size = pointsHeld(n);
   const blocks = Math.ceil(n / size);
   if (scratch.length < STATE_SIZE * size) scratch = new Float64Array(STATE_SIZE * size);
   const states = scratch;
