@@ -10,7 +10,9 @@ import { chooseRegression } from './choose-regression';
 import type { ChooseBaselineOptions, ChosenBaseline, SmoothnessRule } from './chosen-baseline';
 import { GCV_INFLATION } from './criteria';
 import type { PenaltyRule } from './exact-criterion';
+import { KeptFit } from './kept-fit';
 import { pullingTimes } from './regression-range';
+import type { Evaluate } from './search-lambda';
 
 /**
  * Chooses how smooth a baseline is: the penalty of a smoothing spline, the number of interior knots of a regression spline, the degree of a polynomial.
@@ -58,8 +60,8 @@ export function chooseBaseline(obs: Observations, options: ChooseBaselineOptions
 }
 
 /**
- * Chooses as {@link chooseBaseline} and fits what was chosen. For a long series this is faster than one after the other, since its points are checked and
- * scaled once.
+ * Chooses as {@link chooseBaseline} and fits what was chosen. For a long series this is faster than one after the other: its points are checked and scaled
+ * once, and the exact evaluation at the best penalty is the fit.
  * @param obs points; see Observations @param options see ChooseBaselineOptions
  * @returns the choice, and the fit of its spec
  * @throws BaselineError as chooseBaseline and fitBaseline
@@ -75,11 +77,21 @@ export function chooseAndFit(
   }
   checkOptions(options);
   const series = prepareSeries(obs);
-  const chosen = chooseSmoothingSpline(series, options);
-  return { chosen, fit: fitPreparedSpline(series, chosen.smoothness) };
+  const rule = options.rule === 'edf' ? undefined : penaltyRule(options);
+  if (rule === undefined || rule.rule === 'lot-cv') {
+    const chosen = chooseSmoothingSpline(series, options);
+    return { chosen, fit: fitPreparedSpline(series, chosen.smoothness) };
+  }
+  const kept = new KeptFit(series, rule);
+  const chosen = chooseSmoothingSpline(series, options, (lambda) => kept.evaluate(lambda));
+  return { chosen, fit: kept.at(chosen.smoothness) };
 }
 
-function chooseSmoothingSpline(series: PreparedSeries, options: ChooseBaselineOptions): ChosenBaseline {
+function chooseSmoothingSpline(
+  series: PreparedSeries,
+  options: ChooseBaselineOptions,
+  atBest?: Evaluate,
+): ChosenBaseline {
   const { rule, edf, floorLambda = 0, shortestPeriodSeconds, hasOneStandardError } = options;
   const { obs } = series;
   const isLine = shortestPeriodSeconds !== undefined && shortestPeriodSeconds > pullingTimes(obs).window;
@@ -97,7 +109,7 @@ function chooseSmoothingSpline(series: PreparedSeries, options: ChooseBaselineOp
       isAtBound: found.lambda === Infinity ? 'line' : null,
     };
   }
-  const found = choosePenalty(series, penaltyRule(options), floor, hasOneStandardError);
+  const found = choosePenalty(series, penaltyRule(options), floor, hasOneStandardError, atBest);
   const { chosen, curve, minima, isAtFloor, isAtBound, oneStandardError } = found;
   return {
     spec: { method: 'smoothing-spline', lambda: chosen.smoothness },

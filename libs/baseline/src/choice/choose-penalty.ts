@@ -5,7 +5,7 @@ import { ExactCriterion, type PenaltyRule } from './exact-criterion';
 import { checkEdf, penaltyForEdf } from './fixed-edf';
 import { smoothestWithinOneStandardError, type WithinOneStandardError } from './one-standard-error';
 import { reducedStart, searchReduced } from './search-reduced';
-import { bestOf, isNear, searchLambda, type LambdaSearch } from './search-lambda';
+import { bestOf, isNear, searchLambda, type Evaluate, type LambdaSearch } from './search-lambda';
 
 /** What decides when the criterion has no minimum inside the range of lambda. */
 export type PenaltyBound = 'interpolation' | 'line';
@@ -37,6 +37,7 @@ export function penaltyRange(series: PreparedSeries, floorLambda: number): { low
 /**
  * Chooses the smoothing spline's penalty by a criterion, between the floor and the straight line.
  * @param floorLambda weight * s^3, >= 0; 0: none
+ * @param atBest the criterion, for where a search on a reduced basis evaluates it once (default: ExactCriterion; see KeptFit)
  * @throws BaselineError as ExactCriterion; 'bad-argument', 'non-finite' for the floor
  */
 export function choosePenalty(
@@ -44,10 +45,12 @@ export function choosePenalty(
   rule: PenaltyRule,
   floorLambda: number,
   hasOneStandardError = false,
+  atBest?: Evaluate,
 ): ChosenPenalty {
   checkFloor(floorLambda);
-  const exact = new ExactCriterion(series);
-  const evaluate = (lambda: number) => exact.evaluate(lambda, rule);
+  let made: ExactCriterion | undefined;
+  const exact = () => (made ??= new ExactCriterion(series));
+  const evaluate = (lambda: number) => exact().evaluate(lambda, rule);
   const { low, high } = penaltyRange(series, floorLambda);
   if (low >= high) {
     const chosen = admissible(evaluate(low));
@@ -56,7 +59,7 @@ export function choosePenalty(
   const isLine = series.lineRss <= EXACT_LINE_SHARE * series.sumSquares;
   const isLong = rule.rule !== 'lot-cv' && series.n > LONG_SERIES;
   const search =
-    (isLong && !isLine ? searchReduced(series, rule, low, high, evaluate) : undefined) ??
+    (isLong && !isLine ? searchReduced(series, rule, low, high, evaluate, atBest) : undefined) ??
     searchLambda(low, high, () => evaluate);
   if (isLine) {
     const line = admissible(evaluate(high));
@@ -64,7 +67,7 @@ export function choosePenalty(
   }
   const best = admissible(bestOf(search.minima));
   if (!hasOneStandardError) return { ...search, chosen: best, ...where(best.smoothness, low, high, floorLambda) };
-  const { standardError } = exact.lotCriterion(best.smoothness);
+  const { standardError } = exact().lotCriterion(best.smoothness);
   const smoother = search.curve.filter((c) => c.smoothness > best.smoothness);
   const smoothest = smoothestWithinOneStandardError(best, standardError, smoother, evaluate);
   return {

@@ -33,7 +33,7 @@ export class ReducedCriterion {
   private readonly range: number;
   private readonly weight: number;
   private readonly sumSquares: number;
-  private readonly logConstant: number;
+  private logConstant: number | undefined;
 
   /** @param low the smallest penalty of interest, > 0 @param ratio intervals a degree of freedom where points suffice */
   constructor(
@@ -47,7 +47,6 @@ export class ReducedCriterion {
     this.range = (obs.t[to] - obs.t[from]) / timeScale;
     this.weight = pullCount;
     this.sumSquares = lineRss / weightScale;
-    this.logConstant = determinantConstant(series) + 2 * Math.log(this.range);
     const most = Math.max(
       FEWEST_INTERVALS,
       Math.min(MOST_INTERVALS, 2 ** Math.floor(Math.log2(pullCount / LEAST_POINTS))),
@@ -88,6 +87,7 @@ export class ReducedCriterion {
       return { smoothness: lambda, edf, value };
     }
     if (rule.rule === 'lot-cv') return { smoothness: lambda, edf, value: NaN };
+    this.logConstant ??= determinantConstant(series) + 2 * Math.log(this.range);
     const logDet = solver.logDet - (system.intervals + 1) * Math.log(scaled) + system.logConstant + this.logConstant;
     const prss = (sumSquares - solver.explained) * series.weightScale;
     const value = restrictedDeviance(series.pullCount, prss, logDet)[rule.variance];

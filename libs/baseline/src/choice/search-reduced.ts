@@ -18,6 +18,7 @@ const MOST_EXACT_POINTS = 20000;
  * The search of searchLambda by the reduced criterion, with one exact evaluation at the best minimum, which replaces it in the answer. Penalties for which no basis
  * is fine enough (more than 1,600 degrees of freedom, or a tenth of the points) are evaluated exactly in series of up to 20,000 points. In longer ones the
  * curve begins above them: a second minimum there, beyond a rise, is not found.
+ * @param exact the criterion itself @param atBest the same, for the one evaluation at the best minimum
  * @returns undefined where the basis does not serve: the criterion still falls at the end of what it can resolve, the exact degrees of freedom differ by more
  *   than 0.1 %, or digits were lost
  */
@@ -27,6 +28,7 @@ export function searchReduced(
   low: number,
   high: number,
   exact: Evaluate,
+  atBest: Evaluate = exact,
 ): LambdaSearch | undefined {
   for (const ratio of RATIOS) {
     const reduced = new ReducedCriterion(series, low, ratio);
@@ -46,7 +48,7 @@ export function searchReduced(
     const best = bestOf(search.minima);
     if (hasFailed || best === undefined) return undefined;
     if (from > low && search.minima.some((c) => isNear(c.smoothness, from))) return undefined;
-    const there = exact(best.smoothness);
+    const there = atBest(best.smoothness);
     if (Math.abs(there.edf - best.edf) <= EDF_AGREEMENT * there.edf)
       return { curve: search.curve, minima: replaced(search.minima, best, there) };
   }
