@@ -327,4 +327,21 @@ describe('choosing and fitting at once', () => {
     expect(fit.fitted).toEqual(fitBaseline(obs, chosen.spec).fitted);
     expect(fit.edf).toBeCloseTo(chosen.edf, 9);
   });
+  it.each<ChooseBaselineOptions>([
+    { method: 'smoothing-spline', rule: 'gcv' },
+    { method: 'smoothing-spline', rule: 'gcv14' },
+    { method: 'smoothing-spline', rule: 'reml' },
+    { method: 'smoothing-spline', rule: 'reml', remlVariance: 'estimated' },
+    { method: 'smoothing-spline', rule: 'lot-cv' },
+  ])('agrees with the exact criterion on a long series, where the fit is the evaluation: %j', (options) => {
+    const obs = wavySeries(3600, 52, (i) => i);
+    const { chosen, fit } = chooseAndFit(obs, options);
+    const apart = chooseBaseline(obs, options);
+    expect(fit.spec).toEqual(chosen.spec);
+    expect(fit.fitted).toEqual(fitBaseline(obs, chosen.spec).fitted);
+    expect(chosen.smoothness).toBe(apart.smoothness);
+    expect(chosen.edf / apart.edf).toBeCloseTo(1, 10);
+    expect(chosen.criterion.value / apart.criterion.value).toBeCloseTo(1, 10);
+    expect(chosen.isAtFloor).toBe(apart.isAtFloor);
+  });
 });
