@@ -1,3 +1,4 @@
+export type * from './answers';
 export { DEFAULT_LIMITS, type ReadLimits } from './limits';
 export { markWorkbook } from './mark-workbook';
 export { readWorkbook, type ReadOptions } from './read-workbook';

@@ -1,3 +1,4 @@
+import type { WorkbookAnswers } from './answers';
 import { readSheetRows, type SheetFacts } from './container/sheet-rows';
 import { openWorkbook } from './container/workbook-parts';
 import { DEFAULT_LIMITS, type ReadLimits } from './limits';
@@ -13,6 +14,8 @@ const BATCH = 2_000;
 const FIRST_ROWS = 12;
 
 export interface ReadOptions {
+  /** What a person said about this workbook. */
+  answers?: WorkbookAnswers;
   limits?: Partial<ReadLimits>;
   /** Called with the data rows read so far, some times a second. */
   onProgress?: (rowsRead: number) => void;
@@ -104,6 +107,9 @@ const emptyReport = (dateSystem: 1900 | 1904): WorkbookReport => ({
   problems: [],
   problemCounts: [],
   isBlocked: false,
+  questions: [],
+  grids: [],
+  text: null,
 });
 
 function finishReport(report: WorkbookReport, { findings, lots }: ReadingParts): WorkbookReport {

@@ -1,3 +1,5 @@
+import type { Question, RememberedLayout, SheetGrid } from './answers';
+
 /** What the reader knows about the line whose workbook it reads. */
 export interface LineContext {
   /** IANA name of the plant's zone, e.g. "Europe/Berlin". */
@@ -6,6 +8,10 @@ export interface LineContext {
   now: number;
   channels: ChannelContext[];
   products: { code: string; name: string }[];
+  /** Absent: nothing is remembered. */
+  remembered?: RememberedLayout[];
+  /** Numbers of the line's lots of late, against which spellings are compared; absent: none. */
+  lots?: string[];
 }
 
 export interface ChannelContext {
@@ -15,6 +21,8 @@ export interface ChannelContext {
   /** Gauge asset number, code, position: whatever else a workbook may call it. */
   aliases: string[];
   unit: string;
+  /** Nominal value and specification limits in force, by product code; absent where there are none. */
+  specifications?: { product: string; nominal: number | null; lower: number | null; upper: number | null }[];
 }
 
 /** One value of one channel at one instant; a value or a censoring, never both. */
@@ -109,6 +117,10 @@ export interface WorkbookReport {
   problems: Problem[];
   problemCounts: ProblemCount[];
   isBlocked: boolean;
+  questions: Question[];
+  grids: SheetGrid[];
+  /** Of a text file: how it was read. */
+  text: { encoding: string; separator: string; decimalSign: string | null } | null;
 }
 
 export type OnReadings = (batch: ParsedReading[]) => Promise<void> | void;
