@@ -55,3 +55,5 @@ export * from './set-up-channels';
 export * from './summaries';
 export * from './summary-facts';
 export * from './summary-week';
+export * from './layouts';
+export * from './api-tokens';

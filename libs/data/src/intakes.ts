@@ -1,4 +1,4 @@
-import type { IntakeState } from '@app/contracts';
+import type { IntakeState, WorkbookAnswers } from '@app/contracts';
 import { findRow, type Queryable, rows, type Transaction } from './database';
 
 export interface IntakeRow {
@@ -27,6 +27,10 @@ export interface IntakeRow {
   readingsStoredAt: Date | null;
   channelIds: number[] | null;
   scoredAt: Date | null;
+  /** What a person answered about how it is to be read. */
+  answers: WorkbookAnswers;
+  /** It is confirmed for its receiver as soon as it is read, if nothing is left to say. */
+  confirmsItself: boolean;
 }
 
 export interface IntakeProblemRow {
@@ -44,7 +48,8 @@ const COLUMNS = `
   i.rows_already_there as "rowsAlreadyThere", i.rows_not_used as "rowsNotUsed", i.readings_stored as "readingsStored",
   i.readings_already_there as "readingsAlreadyThere", i.received_by as "receivedBy", r.name as "receivedByName",
   i.received_at as "receivedAt", i.confirmed_by as "confirmedBy", c.name as "confirmedByName", i.confirmed_at as "confirmedAt",
-  i.readings_stored_at as "readingsStoredAt", i.channel_ids::text[]::float8[] as "channelIds", i.scored_at as "scoredAt"`;
+  i.readings_stored_at as "readingsStoredAt", i.channel_ids::text[]::float8[] as "channelIds", i.scored_at as "scoredAt",
+  i.answers, i.confirms_itself as "confirmsItself"`;
 const SOURCE = `from intakes i join lines l on l.id = i.line_id join people r on r.id = i.received_by
   left join people c on c.id = i.confirmed_by`;
 
@@ -59,12 +64,13 @@ export async function insertIntake(
     sha256: Buffer;
     receivedBy: number;
     receivedAt: Date;
+    confirmsItself?: boolean;
   },
 ): Promise<number> {
   const [row] = await rows<{ id: number }>(
     tx,
-    `insert into intakes (plant_id, line_id, state, file_name, byte_count, sha256, received_by, received_at)
-     values (:plantId, :lineId, 'received', :fileName, :byteCount, :sha256, :receivedBy, :receivedAt) returning id`,
+    `insert into intakes (plant_id, line_id, state, file_name, byte_count, sha256, received_by, received_at, confirms_itself)
+     values (:plantId, :lineId, 'received', :fileName, :byteCount, :sha256, :receivedBy, :receivedAt, :confirmsItself) returning id`,
     {
       plantId: intake.plantId,
       lineId: intake.lineId,
@@ -73,6 +79,7 @@ export async function insertIntake(
       sha256: intake.sha256,
       receivedBy: intake.receivedBy,
       receivedAt: intake.receivedAt,
+      confirmsItself: intake.confirmsItself ?? false,
     },
   );
   await tx('intake_bytes').insert({ intake_id: row.id, plant_id: intake.plantId, bytes: intake.bytes });
@@ -135,6 +142,15 @@ export async function updateIntakeRead(
       rows_not_used: read.rowsNotUsed,
       read_at: read.at,
     });
+}
+
+/** Puts a workbook that was read back to its reading, with what was answered; what was staged and found goes. */
+export async function updateIntakeReadAgain(tx: Transaction, id: number, answers: WorkbookAnswers): Promise<void> {
+  await tx('staged_readings').where({ intake_id: id }).delete();
+  await tx('intake_problems').where({ intake_id: id }).delete();
+  await tx('intakes')
+    .where({ id, state: 'needs_attention' })
+    .update({ state: 'received', answers: JSON.stringify(answers), report: null, rows_read: 0, rows_not_used: 0 });
 }
 
 export async function updateIntakeRefused(tx: Transaction, id: number, failure: string): Promise<void> {

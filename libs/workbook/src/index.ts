@@ -5,7 +5,6 @@ export { readWorkbook, type ReadOptions } from './read-workbook';
 export { WorkbookRefusedError, type RefusalCode } from './refused';
 export type {
   ChannelContext,
-  ColumnRole,
   LineContext,
   LotSummary,
   OnReadings,

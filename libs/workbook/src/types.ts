@@ -1,4 +1,6 @@
-import type { Question, RememberedLayout, SheetGrid } from './answers';
+import type { ColumnRole, Question, RememberedLayout, SheetGrid } from './answers';
+
+export type { ColumnRole } from './answers';
 
 /** What the reader knows about the line whose workbook it reads. */
 export interface LineContext {
@@ -65,22 +67,6 @@ export interface ProblemCount {
   firstSheet: string;
   firstRow: number | null;
 }
-
-export type ColumnRole =
-  | 'time'
-  | 'date'
-  | 'time_of_day'
-  | 'lot'
-  | 'product'
-  | 'channel'
-  | 'value'
-  | 'unit'
-  | 'serial'
-  | 'position'
-  | 'quantity'
-  | 'remark'
-  | 'channel_values'
-  | 'ignored';
 
 export interface RecognisedColumn {
   sheet: string;

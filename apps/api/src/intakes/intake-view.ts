@@ -16,7 +16,12 @@ interface Parts {
 /** Whether a person may confirm it now: it was read, nothing blocks, and there is something to store. */
 export function isConfirmable(intake: IntakeRow): boolean {
   const report = intake.report as StoredReport | null;
-  return intake.state === 'needs_attention' && report !== null && !report.isBlocked && report.readingsParsed > 0;
+  return intake.state === 'needs_attention' && report !== null && isReady(report);
+}
+
+/** Nothing blocks, nothing is left to answer, and there is something to store. */
+function isReady({ isBlocked, questions = [], readingsParsed }: StoredReport): boolean {
+  return !isBlocked && questions.length === 0 && readingsParsed > 0;
 }
 
 export function intakeView({ intake, sameFile, problems, channels, outcome }: Parts): IntakeView {
@@ -73,6 +78,14 @@ export function intakeView({ intake, sameFile, problems, channels, outcome }: Pa
     readingsAlreadyThere: intake.readingsAlreadyThere,
     problems,
     problemCounts: (report?.problemCounts ?? []).map(({ code, severity, count }) => ({ code, severity, count })),
+    questions: report?.questions ?? [],
+    grids: report?.grids ?? [],
+    text: report?.text ?? null,
+    answers: intake.answers,
+    comparison: null,
+    rowsSuperseding: 0,
+    withdrawal: null,
+    isWithdrawable: false,
     isConfirmable: isConfirmable(intake),
     outcome: outcome && {
       lotsScored: outcome.lotsScored,
