@@ -6,6 +6,7 @@ import { ChannelNames } from './reading/channel-names';
 import { Findings } from './reading/findings';
 import { LotBook } from './reading/lot-book';
 import { ProductNames } from './reading/product-names';
+import { Questions } from './reading/questions';
 import { SheetReader, type ReadingParts } from './reading/sheet-reader';
 import { ZoneClock } from './reading/zone-clock';
 import type { LineContext, OnReadings, ParsedReading, WorkbookReport } from './types';
@@ -46,11 +47,14 @@ export async function readWorkbook(
   const limits = { ...DEFAULT_LIMITS, ...options.limits };
   const zone = new ZoneClock(context.timeZone);
   const book = await openWorkbook(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength), limits);
+  const findings = new Findings();
   const parts: ReadingParts = {
     channels: new ChannelNames(context.channels),
     products: new ProductNames(context.products),
     lots: new LotBook(),
-    findings: new Findings(),
+    findings,
+    questions: new Questions(findings),
+    answers: options.answers ?? {},
     zone,
     dateSystem: book.dateSystem,
     now: context.now,
@@ -112,7 +116,7 @@ const emptyReport = (dateSystem: 1900 | 1904): WorkbookReport => ({
   text: null,
 });
 
-function finishReport(report: WorkbookReport, { findings, lots }: ReadingParts): WorkbookReport {
+function finishReport(report: WorkbookReport, { findings, questions, lots }: ReadingParts): WorkbookReport {
   const hasHeader = report.sheets.some((sheet) => sheet.headerRow !== null);
   for (const { name, headerRow, rows } of report.sheets) {
     if (headerRow !== null || rows === 0) continue;
@@ -135,6 +139,7 @@ function finishReport(report: WorkbookReport, { findings, lots }: ReadingParts):
     channels: lots.listChannels(),
     problems: findings.problems,
     problemCounts: findings.list(),
+    questions: questions.asked,
     isBlocked: findings.countOf('blocking') > 0,
   };
 }

@@ -4,15 +4,15 @@ import type { ChannelNames } from './channel-names';
 import type { Findings } from './findings';
 import type { HeaderColumn } from './header';
 import type { LotBook } from './lot-book';
-import { isSameUnit } from './names';
 import type { ProductNames } from './product-names';
 import { channelOfRow } from './row-channel';
 import { RowNotUsed } from './row-not-used';
 import type { RowStamps } from './row-stamps';
-import type { SheetLayout, ValueColumn } from './sheet-layout';
+import type { SheetLayout } from './sheet-layout';
+import type { SheetValues } from './sheet-values';
 import { isCheckStandardLabel, isSummaryLabel } from './synonyms';
 import { cellText, lotText } from './texts';
-import { isBlank, isMissing, parseNumberText, parseValue } from './values';
+import { isBlank, isMissing, parseNumberText } from './values';
 
 export interface RowReaderParts {
   layout: SheetLayout;
@@ -20,6 +20,7 @@ export interface RowReaderParts {
   products: ProductNames;
   lots: LotBook;
   stamps: RowStamps;
+  cells: SheetValues;
   findings: Findings;
 }
 
@@ -144,7 +145,7 @@ export class RowReader {
     let only: RowNotUsed | undefined;
     let used = 0;
     for (const source of values) {
-      const result = this.readValue(row, source, (source.channel ?? channel)!);
+      const result = this.parts.cells.read(row, source, (source.channel ?? channel)!, product);
       if (result instanceof RowNotUsed) {
         if (values.length === 1) only = result;
         else this.sayOfCell(row, result);
@@ -178,49 +179,9 @@ export class RowReader {
     this.parts.findings.add(severity, code, { ...this.place(row), column }, () => why);
   }
 
-  private readValue(
-    row: SheetRow,
-    source: ValueColumn,
-    channel: ChannelContext,
-  ): Pick<ParsedReading, 'channelId' | 'value' | 'censoring'> | RowNotUsed {
-    const { layout, findings } = this.parts;
-    const { column } = source;
-    const unit = source.unit ?? cellText(layout.unit && row.cells[layout.unit.column]);
-    const read = parseValue(row.cells[column], channel.unit, source.habits);
-    if (read.kind === 'missing')
-      return new RowNotUsed('value-missing', 'has no value, which is not taken as zero', column);
-    if (read.kind === 'bad') return new RowNotUsed(read.code, read.why, column);
-    if (unit !== null && layout.kind === 'long' && !isSameUnit(unit, channel.unit)) {
-      const why = `is in ${unit.slice(0, 20)}, but the channel "${channel.name}" is in ${channel.unit || 'no unit'}; values are not converted`;
-      return new RowNotUsed('unit-differs', why, column);
-    }
-    if (read.kind === 'censored') {
-      findings.add(
-        'notice',
-        'censored-reading',
-        { ...this.place(row), column },
-        () =>
-          `says "${cellText(row.cells[column])}": off scale, so the lot counts a reading ${read.censoring} what the gauge can show, without a value`,
-      );
-      return { channelId: channel.id, value: null, censoring: read.censoring };
-    }
-    if (read.note) {
-      const { note, value } = read;
-      findings.add('notice', note, { ...this.place(row), column }, () => NOTES[note](value, channel.unit));
-    }
-    return { channelId: channel.id, value: read.value, censoring: null };
-  }
-
   private place(row: SheetRow): { sheet: string; row: number } {
     return { sheet: this.parts.layout.sheet, row: row.number };
   }
 }
 
 const NO_QUANTITY = { quantity: null, quantityUnit: null };
-
-const NOTES = {
-  'number-stored-as-text': (value: number, unit: string) => `holds a number as text; it is read as ${value} ${unit}`,
-  'percent-cell': (value: number) => `is formatted as a percentage; it is read as ${value} %`,
-  'looks-like-a-code': (value: number, unit: string) =>
-    `holds ${value} ${unit}, which some instruments write instead of a reading; delete it if it is none`,
-};

@@ -1,9 +1,11 @@
+import type { LayoutAnswers, WorkbookAnswers } from '../answers';
 import type { SheetRow } from '../container/sheet-rows';
 import type { Findings } from './findings';
+import type { Questions } from './questions';
 import { RowOrder } from './row-order';
 import type { SheetLayout } from './sheet-layout';
 import { parseStamp, type ParsedStamp } from './stamps';
-import type { ZoneClock } from './zone-clock';
+import { ZoneClock } from './zone-clock';
 
 const DAY = 86_400_000;
 const HALF_DAY = DAY / 2;
@@ -12,27 +14,38 @@ const AHEAD_TOLERANCE = 10 * 60_000;
 
 export type RowStamp = { at: number } | { code: string; why: string; column?: number };
 
+export interface RowStampsParts {
+  dateSystem: 1900 | 1904;
+  zone: ZoneClock;
+  now: number;
+  findings: Findings;
+  questions: Questions;
+  /** What a person said about the workbook beyond its layouts. */
+  answers: WorkbookAnswers;
+}
+
 /** Reads the instants of one sheet's rows, and remembers what of the rows before it needs. */
 export class RowStamps {
   private readonly orders = new Map<number, RowOrder>();
   private readonly clocks = new Map<number, { dayMs: number; clockMs: number }>();
+  private readonly zone: ZoneClock;
   private rows = 0;
   private rowsAtMidnight = 0;
 
   constructor(
     private readonly layout: SheetLayout,
-    private readonly dateSystem: 1900 | 1904,
-    private readonly zone: ZoneClock,
-    private readonly now: number,
-    private readonly findings: Findings,
-  ) {}
+    answers: LayoutAnswers,
+    private readonly parts: RowStampsParts,
+  ) {
+    this.zone = answers.timeZone === undefined ? parts.zone : new ZoneClock(answers.timeZone);
+  }
 
   /** @param series the rows' order is followed per series: the channel in the long layout, 0 in the wide */
   read(row: SheetRow, series: number): RowStamp {
     const { time, date, clock } = this.layout;
     const column = (time ?? date)?.column;
     if (column === undefined) return { code: 'time-missing', why: 'has no time, since the sheet has no column for it' };
-    const stamp = parseStamp(row.cells[column], this.dateSystem);
+    const stamp = parseStamp(row.cells[column], this.parts.dateSystem);
     if (stamp.kind === 'missing') return { code: 'time-missing', why: 'has no time; fill it in', column };
     if (stamp.kind === 'bad') return { code: stamp.code, why: stamp.why, column };
     if (stamp.kind === 'clock') {
@@ -45,7 +58,7 @@ export class RowStamps {
   /** Says what only the whole sheet shows. */
   finish(): void {
     if (this.rows < 2 || this.rowsAtMidnight < this.rows) return;
-    this.findings.add(
+    this.parts.findings.add(
       'notice',
       'no-time-of-day',
       { sheet: this.layout.sheet },
@@ -60,7 +73,7 @@ export class RowStamps {
     dayColumn: number,
     column: number,
   ): RowStamp {
-    const clock = parseStamp(row.cells[column], this.dateSystem);
+    const clock = parseStamp(row.cells[column], this.parts.dateSystem);
     if (clock.kind === 'missing') return { code: 'time-missing', why: 'has a date but no time; fill it in', column };
     if (day.kind !== 'local') return this.toInstant(day, row, series, dayColumn);
     const dayMs = Math.floor(day.ms / DAY) * DAY;
@@ -86,7 +99,7 @@ export class RowStamps {
   private watchMidnight(series: number, dayMs: number, clockMs: number, row: SheetRow): void {
     const before = this.clocks.get(series);
     if (before?.dayMs === dayMs && before.clockMs - clockMs > HALF_DAY) {
-      this.findings.add(
+      this.parts.findings.add(
         'notice',
         'time-steps-back',
         { sheet: this.layout.sheet, row: row.number },
@@ -114,7 +127,7 @@ export class RowStamps {
       }
       at = choice;
       const pass = at === candidates[0] ? 'first' : 'second';
-      this.findings.add(
+      this.parts.findings.add(
         'notice',
         'repeated-hour-by-order',
         { sheet: this.layout.sheet, row: row.number, column },
@@ -122,7 +135,7 @@ export class RowStamps {
           `says ${wallClock(stamp.ms)}, which the clocks showed twice as they were put back; by the order of the rows it is the ${pass}`,
       );
     }
-    if (at > this.now + AHEAD_TOLERANCE) {
+    if (at > this.parts.now + AHEAD_TOLERANCE) {
       return {
         code: 'stamp-ahead',
         why: `says ${wallClock(stamp.ms)}, which has not come yet; correct the time`,

@@ -1,3 +1,4 @@
+import type { LayoutAnswers, WorkbookAnswers } from '../answers';
 import type { SheetFacts, SheetRow } from '../container/sheet-rows';
 import type { ParsedReading, RecognisedColumn } from '../types';
 import type { ChannelNames } from './channel-names';
@@ -5,9 +6,11 @@ import type { Findings } from './findings';
 import { findHeader, takeUnitsRow, toRecognised } from './header';
 import type { LotBook } from './lot-book';
 import type { ProductNames } from './product-names';
+import type { Questions } from './questions';
 import { RowReader } from './row-reader';
 import { RowStamps } from './row-stamps';
 import { resolveLayout, type SheetLayout } from './sheet-layout';
+import { SheetValues } from './sheet-values';
 import { isBlank } from './values';
 import type { ZoneClock } from './zone-clock';
 
@@ -19,6 +22,9 @@ export interface ReadingParts {
   products: ProductNames;
   lots: LotBook;
   findings: Findings;
+  questions: Questions;
+  /** What a person said about this workbook. */
+  answers: WorkbookAnswers;
   zone: ZoneClock;
   dateSystem: 1900 | 1904;
   now: number;
@@ -31,6 +37,7 @@ export class SheetReader {
   private waiting: SheetRow[] | null = [];
   private reader: RowReader | null = null;
   private stamps: RowStamps | null = null;
+  private cells: SheetValues | null = null;
   private hiddenRows = 0;
 
   constructor(
@@ -60,6 +67,7 @@ export class SheetReader {
   finish({ mergedUntil }: SheetFacts, into: ParsedReading[]): RecognisedColumn[] {
     if (this.waiting !== null) this.startReading(into);
     this.stamps?.finish();
+    this.cells?.finish();
     const { findings } = this.parts;
     const place = { sheet: this.name };
     const headerRow = this.layout?.header.row ?? Infinity;
@@ -83,7 +91,8 @@ export class SheetReader {
   private startReading(into: ParsedReading[]): void {
     const rows = this.waiting ?? [];
     this.waiting = null;
-    const { channels, findings, dateSystem, zone, now } = this.parts;
+    const { channels, findings, questions } = this.parts;
+    const answers: LayoutAnswers = this.parts.answers.sheets?.[this.name] ?? {};
     const header = findHeader(rows, channels);
     const below = header ? rows.filter((row) => row.number > header.row) : rows;
     if (header) {
@@ -91,8 +100,9 @@ export class SheetReader {
       if (units && units.number === header.row + 1 && takeUnitsRow(header, units)) below.shift();
       const layout = resolveLayout(this.name, header, channels, findings);
       this.layout = layout;
-      this.stamps = new RowStamps(layout, dateSystem, zone, now, findings);
-      this.reader = new RowReader({ ...this.parts, layout, stamps: this.stamps });
+      this.stamps = new RowStamps(layout, answers, this.parts);
+      this.cells = new SheetValues({ layout, answers, findings, questions });
+      this.reader = new RowReader({ ...this.parts, layout, stamps: this.stamps, cells: this.cells });
     }
     for (const row of below) this.readRow(row, into);
   }
