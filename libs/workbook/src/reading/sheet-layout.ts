@@ -15,6 +15,16 @@ export interface ValueColumn {
   habits: ColumnHabits;
 }
 
+/** A day that a sheet gives for all its rows, in a title or in its name. */
+export interface SheetDay {
+  /** Its midnight on the sheet's clocks, in milliseconds as if it were UTC. */
+  localMs: number;
+  /** Where it stands: 'cell B2', 'the sheet\'s name'. */
+  from: string;
+  /** It is the day on which a night shift began: times after midnight belong to the next. */
+  isShiftDate: boolean;
+}
+
 /** Where a sheet's rows have what. Columns are numbered from 1. */
 export interface SheetLayout {
   sheet: string;
@@ -31,6 +41,8 @@ export interface SheetLayout {
   quantity?: HeaderColumn;
   channelColumns: HeaderColumn[];
   values: ValueColumn[];
+  /** For times without a date; null where neither a title nor the sheet's name gives a day. */
+  day: SheetDay | null;
   /** The header says UTC or GMT, so the plant's zone does not apply. */
   isUtc: boolean;
 }
@@ -61,6 +73,7 @@ export function resolveLayout(sheet: string, header: Header, channels: ChannelNa
     quantity: first('quantity'),
     channelColumns: isLong ? all('channel') : [],
     values: [],
+    day: null,
     isUtc: /^(utc|gmt|z)$/i.test(time?.unit ?? ''),
   };
   layout.values = isLong
