@@ -75,6 +75,11 @@ describe('lots', () => {
     ['held=decided', ['24121', '24119']],
     ['held=never', ['24120', '24117']],
     ['from=2026-03-10T23:00:00Z&to=2026-03-11T06:30:00Z', ['24119', '24118']],
+    ['by=ended&from=2026-03-11T01:00:00Z&to=2026-03-11T02:00:00Z', ['24118']],
+    ['by=held&to=2026-03-11T08:49:00Z', ['24118']],
+    ['by=open', ['24118']],
+    ['disposition=release', ['24119']],
+    ['by=decided&disposition=scrap', ['24121']],
     ['text=4117', ['24117']],
     ['text=sep-1&state=held', ['24118']],
     ['text=%25', []],
@@ -146,6 +151,10 @@ describe('lots', () => {
     ['to=2026-02-30', '/to'],
     ['lineId=x', '/lineId'],
     ['lineId=99999999999999999999', '/lineId'],
+    ['by=colour', '/by'],
+    ['disposition=gone', '/disposition'],
+    ['notScoredOn=x', '/notScoredOn'],
+    ['notScoredFor=%3Cb%3E', '/notScoredFor'],
     ['anything=else', '/anything'],
   ])('refuse %s with a pointer to it', async (query, pointer) => {
     const response = await get(`/lots?${query}`);

@@ -11,7 +11,12 @@ export const LOT_STATE_FILTERS = [
   'outside_control_limits',
   'within_control_limits',
   'outside_specification',
+  'measured',
+  'scored',
+  'not_fully_scored',
 ] as const;
+/** What must lie in the time that is asked for; `open`: held and undecided at its end. */
+export const LOT_TIMES = ['started', 'ended', 'held', 'decided', 'open'] as const;
 export const HELD_FILTERS = ['open', 'decided', 'ever', 'never'] as const;
 export const LOT_SORTS = ['startsAt', '-startsAt', 'number', '-number', 'score', '-score'] as const;
 
@@ -20,9 +25,16 @@ export interface LotFilter {
   lineId?: number;
   state?: (typeof LOT_STATE_FILTERS)[number];
   held?: (typeof HELD_FILTERS)[number];
-  /** Lots that start at or after, and before. */
+  /** [from, to): what of a lot must lie in it is said by `by`, its start without. */
   from?: Date;
   to?: Date;
+  by?: (typeof LOT_TIMES)[number];
+  /** Decided so, in whole or in part; in the time that is asked for when that goes by decisions. */
+  disposition?: Disposition;
+  /** Measured on this channel without a score there. */
+  notScoredOn?: number;
+  /** …for this reason; `not_judged` without any verdict. */
+  notScoredFor?: string;
   /** Part of the lot's number or of its product's code or name. */
   text?: string;
 }
@@ -55,6 +67,11 @@ const lastDisposition = (disposition: Disposition) =>
 const HOLD_OPEN = `exists (select 1 from holds h where h.lot_id = l.id and h.state = 'open')`;
 const EVER_HELD = `exists (select 1 from holds h where h.lot_id = l.id)`;
 
+/** On one of the channels on which the lot was measured. */
+const onChannel = (condition: string) =>
+  `exists (select 1 from lot_channels lc left join verdicts v on v.channel_id = lc.channel_id and v.lot_id = lc.lot_id and v.is_current
+    where lc.lot_id = l.id and lc.first_at is not null and ${condition})`;
+
 const STATE_CONDITIONS: Record<(typeof LOT_STATE_FILTERS)[number], string> = {
   all: 'true',
   held: HOLD_OPEN,
@@ -65,6 +82,9 @@ const STATE_CONDITIONS: Record<(typeof LOT_STATE_FILTERS)[number], string> = {
   outside_control_limits: OUTSIDE,
   within_control_limits: `not ${OUTSIDE} and not ${NOT_SCORED} and ${current(`v.control_state = 'within_control_limits'`)}`,
   outside_specification: current(`v.specification_state = 'outside_specification'`),
+  measured: onChannel('true'),
+  scored: onChannel('v.score is not null'),
+  not_fully_scored: onChannel('v.score is null'),
 };
 const HELD_CONDITIONS: Record<(typeof HELD_FILTERS)[number], string> = {
   open: HOLD_OPEN,
@@ -72,6 +92,22 @@ const HELD_CONDITIONS: Record<(typeof HELD_FILTERS)[number], string> = {
   ever: EVER_HELD,
   never: `not ${EVER_HELD}`,
 };
+
+const NOT_SCORED_ON = `v.score is null and lc.channel_id = :notScoredOn
+  and (coalesce(v.not_scored_reason, 'not_judged') = :notScoredFor or cast(:notScoredFor as text) is null)`;
+
+/** What of the lot lies in the time, given bounds on an instant. */
+const TIME_CONDITIONS: Record<(typeof LOT_TIMES)[number], (within: (instant: string) => string) => string> = {
+  started: (within) => within('l.starts_at'),
+  ended: (within) => within('l.ends_at'),
+  held: (within) => `exists (select 1 from holds h where h.lot_id = l.id and ${within('h.opened_at')})`,
+  decided: (within) => decidedWhere(within('d.decided_at')),
+  open: () => `exists (select 1 from holds h left join decision_holds dh on dh.hold_id = h.id left join decisions d on d.id = dh.decision_id
+    where h.lot_id = l.id and (h.opened_at < :to or cast(:to as timestamptz) is null) and (d.id is null or d.decided_at >= :to))`,
+};
+const decidedWhere = (condition: string) =>
+  `exists (select 1 from holds h join decision_parts t on t.hold_id = h.id join decisions d on d.id = t.decision_id
+    where h.lot_id = l.id and (t.disposition = :disposition or cast(:disposition as text) is null) and ${condition})`;
 
 /** Joined only when it is sorted by; one pass over the current verdicts instead of a look-up a lot. */
 const SCORES = `left join (select v.lot_id, max(abs(v.score)) as score from verdicts v where v.is_current group by v.lot_id) z
@@ -86,26 +122,32 @@ const ORDERS: Record<(typeof LOT_SORTS)[number], string> = {
 };
 
 function where(filter: LotFilter): { sql: string; bindings: Record<string, unknown> } {
-  const conditions = ['l.plant_id = any(:plantIds)'];
-  const bindings: Record<string, unknown> = { plantIds: filter.plantIds };
-  const add = (name: string, value: unknown, condition: string) => {
-    if (value === undefined) return;
-    conditions.push(condition);
-    bindings[name] = value;
-  };
-  add('lineId', filter.lineId, 'l.line_id = :lineId');
-  add('from', filter.from, 'l.starts_at >= :from');
-  add('to', filter.to, 'l.starts_at < :to');
+  const { by = 'started', from, to, disposition } = filter;
   const text = filter.text?.trim();
-  if (text)
-    add(
-      'text',
-      `%${text.replaceAll(/[\\%_]/g, '\\$&')}%`,
-      '(l.number ilike :text or p.code ilike :text or p.name ilike :text)',
-    );
-  if (filter.state) conditions.push(STATE_CONDITIONS[filter.state]);
-  if (filter.held) conditions.push(HELD_CONDITIONS[filter.held]);
-  return { sql: conditions.join(' and '), bindings };
+  const bounds = (instant: string) =>
+    [from && `${instant} >= :from`, to && `${instant} < :to`].filter(Boolean).join(' and ') || 'true';
+  const isTimed = from !== undefined || to !== undefined || by !== 'started';
+  const conditions = [
+    'l.plant_id = any(:plantIds)',
+    filter.lineId !== undefined && 'l.line_id = :lineId',
+    isTimed && TIME_CONDITIONS[by](bounds),
+    disposition !== undefined && by !== 'decided' && decidedWhere('true'),
+    filter.notScoredOn !== undefined && onChannel(NOT_SCORED_ON),
+    text && '(l.number ilike :text or p.code ilike :text or p.name ilike :text)',
+    filter.state && STATE_CONDITIONS[filter.state],
+    filter.held && HELD_CONDITIONS[filter.held],
+  ];
+  const bindings = {
+    plantIds: filter.plantIds,
+    lineId: filter.lineId,
+    from,
+    to: to ?? null,
+    disposition: disposition ?? null,
+    notScoredOn: filter.notScoredOn,
+    notScoredFor: filter.notScoredFor ?? null,
+    text: text && `%${text.replaceAll(/[\\%_]/g, '\\$&')}%`,
+  };
+  return { sql: conditions.filter(Boolean).join(' and '), bindings };
 }
 
 export async function getLotCount(db: Queryable, filter: LotFilter): Promise<number> {

@@ -63,12 +63,16 @@ export class LotsService {
 }
 
 export function filterOf(query: LotsQuery, plantIds: number[]): LotFilter {
-  const { lineId, state, held, text, from, to } = query;
+  const { lineId, state, held, by, disposition, notScoredOn, notScoredFor, text, from, to } = query;
   return {
     plantIds,
     lineId,
     state,
     held,
+    by,
+    disposition,
+    notScoredOn,
+    notScoredFor,
     text,
     from: from ? new Date(from) : undefined,
     to: to ? new Date(to) : undefined,

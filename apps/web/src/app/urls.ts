@@ -30,6 +30,12 @@ export interface LotFilters {
   line?: number | null;
   state?: string | null;
   held?: string | null;
+  /** What from and to speak of; the lot's start without. */
+  by?: string | null;
+  disposition?: string | null;
+  /** A channel on which the lots have no score, and why. */
+  notScoredOn?: number | null;
+  notScoredFor?: string | null;
   from?: string | null;
   to?: string | null;
   text?: string | null;

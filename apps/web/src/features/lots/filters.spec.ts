@@ -1,4 +1,4 @@
-import { dayAfter, filtersIn, isNarrowed, lotsPath } from './filters';
+import { dayAfter, filtersIn, isNarrowed, lotsPath, UNNARROWED } from './filters';
 
 const PLANT = { id: 3, timeZone: 'Europe/Berlin' };
 const read = (search: string) => filtersIn(new URLSearchParams(search));
@@ -22,6 +22,17 @@ test('days are the plant’s own, and the last one is taken in whole', () => {
   expect(query.get('to')).toBe('2026-12-01T23:00:00.000Z');
   expect(query.get('text')).toBe('241');
   expect(query.get('lineId')).toBe('2');
+});
+
+test('what from and to speak of, and why a lot has no score, go to the API as they stand in the address', () => {
+  const filters = read('by=decided&disposition=scrap&notScoredOn=7&notScoredFor=learning&state=scored');
+  const query = new URLSearchParams(lotsPath(filters, PLANT).split('?')[1]);
+  const asked = ['by', 'disposition', 'notScoredOn', 'notScoredFor', 'state'].map((name) => query.get(name));
+  expect(asked).toEqual(['decided', 'scrap', '7', 'learning', 'scored']);
+  const malformed = read('by=yesterday&disposition=lost&notScoredOn=x&notScoredFor=<b>');
+  expect(malformed).toMatchObject({ by: null, disposition: null, notScoredOn: null, notScoredFor: null });
+  expect([isNarrowed(filters), isNarrowed(malformed)]).toEqual([true, false]);
+  expect(isNarrowed({ ...filters, ...UNNARROWED })).toBe(false);
 });
 
 test('an export asks for all pages', () => {

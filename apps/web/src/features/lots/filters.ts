@@ -1,5 +1,7 @@
+import { DISPOSITIONS } from '@app/contracts';
 import { withQuery, type LotFilters } from '../../app/urls';
 import { plantInstant } from '../../shared/time/plant-time';
+import { FATE_WORDS } from '../../shared/ui/mark-words';
 
 export const PAGE_SIZE = 50;
 export const NEWEST_FIRST = '-startsAt';
@@ -13,6 +15,23 @@ export const STATE_CHOICES = [
   { value: 'within_control_limits', label: 'within control limits' },
   { value: 'released', label: 'released' },
   { value: 'scrapped', label: 'scrapped' },
+  { value: 'measured', label: 'measured' },
+  { value: 'scored', label: 'scored on a channel' },
+  { value: 'not_fully_scored', label: 'without a score on a channel' },
+];
+
+/** What has to lie between the two days. */
+export const TIME_CHOICES = [
+  { value: '', label: 'started' },
+  { value: 'ended', label: 'ended' },
+  { value: 'held', label: 'put on hold' },
+  { value: 'decided', label: 'decided' },
+  { value: 'open', label: 'undecided at the end' },
+];
+
+export const DISPOSITION_CHOICES = [
+  { value: '', label: 'anyhow' },
+  ...DISPOSITIONS.map((value) => ({ value, label: FATE_WORDS[value] })),
 ];
 
 export const HELD_CHOICES = [
@@ -23,16 +42,33 @@ export const HELD_CHOICES = [
   { value: 'never', label: 'never held' },
 ];
 
+/** Filters that narrow the list, taken away. */
+export const UNNARROWED: LotFilters = {
+  state: null,
+  held: null,
+  by: null,
+  disposition: null,
+  notScoredOn: null,
+  notScoredFor: null,
+  from: null,
+  to: null,
+  text: null,
+};
+
 const DAY = /^\d{4}-\d{2}-\d{2}$/;
+const REASON = /^[a-z_]{1,60}$/;
 
 /** The filters that an address holds; what is malformed is not set. */
 export function filtersIn(search: URLSearchParams): LotFilters {
-  const line = search.get('line');
   const page = Number(search.get('page'));
   return {
-    line: line !== null && /^\d+$/.test(line) ? Number(line) : null,
+    line: id(search.get('line')),
     state: known(search.get('state'), STATE_CHOICES),
     held: known(search.get('held'), HELD_CHOICES),
+    by: known(search.get('by'), TIME_CHOICES),
+    disposition: known(search.get('disposition'), DISPOSITION_CHOICES),
+    notScoredOn: id(search.get('notScoredOn')),
+    notScoredFor: REASON.exec(search.get('notScoredFor') ?? '')?.[0] ?? null,
     from: day(search.get('from')),
     to: day(search.get('to')),
     text: search.get('text'),
@@ -43,13 +79,15 @@ export function filtersIn(search: URLSearchParams): LotFilters {
 
 const known = (value: string | null, choices: { value: string }[]) =>
   choices.some((choice) => choice.value === value) ? value : null;
+const id = (value: string | null) => (value !== null && /^\d{1,15}$/.test(value) ? Number(value) : null);
 const day = (value: string | null) => (value !== null && DAY.test(value) ? value : null);
 
 /** Filters that narrow the list at all, the line and order aside. */
 export function isNarrowed(filters: LotFilters): boolean {
-  return [filters.state, filters.held, filters.from, filters.to, filters.text].some(
-    (value) => value !== null && value !== undefined && value !== '',
-  );
+  return Object.keys(UNNARROWED).some((name) => {
+    const value = filters[name as keyof LotFilters];
+    return value !== null && value !== undefined && value !== '';
+  });
 }
 
 /** The API's query for these filters. Days are the plant's own; `to` takes in its whole day. */
@@ -59,6 +97,10 @@ export function lotsPath(filters: LotFilters, plant: { id: number; timeZone: str
     lineId: filters.line,
     state: filters.state,
     held: filters.held,
+    by: filters.by,
+    disposition: filters.disposition,
+    notScoredOn: filters.notScoredOn,
+    notScoredFor: filters.notScoredFor,
     from: filters.from ? plantInstant(filters.from, '00:00', plant.timeZone) : null,
     to: filters.to ? plantInstant(dayAfter(filters.to), '00:00', plant.timeZone) : null,
     text: filters.text?.trim(),

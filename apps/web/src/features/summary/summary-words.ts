@@ -21,11 +21,15 @@ export function measureDetail(measure: Measure): string {
   return [quantitiesInWords(measure), valueInWords(measure), without].filter((part) => part !== '').join(', ');
 }
 
+/** "3 released" and "1 scrapped", each with its disposition. */
+export const decidedParts = (decided: readonly DecidedMeasure[]) =>
+  decided
+    .filter(({ lots }) => lots > 0)
+    .map(({ lots, disposition }) => ({ disposition, words: `${lots} ${FATE_WORDS[disposition]}` }));
+
 /** "3 released, 1 scrapped"; "none". */
 export function decidedWords(decided: readonly DecidedMeasure[]): string {
-  const parts = decided
-    .filter(({ lots }) => lots > 0)
-    .map(({ lots, disposition }) => `${lots} ${FATE_WORDS[disposition]}`);
+  const parts = decidedParts(decided).map(({ words }) => words);
   return parts.length === 0 ? 'none' : parts.join(', ');
 }
 

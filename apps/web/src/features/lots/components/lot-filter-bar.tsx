@@ -1,10 +1,11 @@
+import { notScoredSentence } from '@app/contracts';
 import { Dropdown } from 'primereact/dropdown';
 import { InputText } from 'primereact/inputtext';
 import { useEffect, useId, useState } from 'react';
 import type { LotFilters } from '../../../app/urls';
 import { useLine } from '../../../shared/line-context/line-context';
 import { Action } from '../../../shared/ui/action';
-import { HELD_CHOICES, isNarrowed, STATE_CHOICES } from '../filters';
+import { DISPOSITION_CHOICES, HELD_CHOICES, isNarrowed, STATE_CHOICES, TIME_CHOICES, UNNARROWED } from '../filters';
 
 interface LotFilterBarProps {
   filters: LotFilters;
@@ -33,12 +34,27 @@ export function LotFilterBar({ filters, onChange }: LotFilterBarProps) {
         onChange={(state) => onChange({ state })}
       />
       <Choice label="Hold" value={filters.held ?? ''} choices={HELD_CHOICES} onChange={(held) => onChange({ held })} />
+      <Choice label="Time" value={filters.by ?? ''} choices={TIME_CHOICES} onChange={(by) => onChange({ by })} />
+      {(filters.by === 'decided' || filters.disposition != null) && (
+        <Choice
+          label="Decided"
+          value={filters.disposition ?? ''}
+          choices={DISPOSITION_CHOICES}
+          onChange={(disposition) => onChange({ disposition })}
+        />
+      )}
       <Day label="From" value={filters.from} onChange={(from) => onChange({ from })} />
       <Day label="To" value={filters.to} onChange={(to) => onChange({ to })} />
       {isNarrowed(filters) && (
-        <Action kind="plain" onPress={() => onChange({ state: null, held: null, from: null, to: null, text: null })}>
+        <Action kind="plain" onPress={() => onChange(UNNARROWED)}>
           Take the filters away
         </Action>
+      )}
+      {filters.notScoredOn != null && (
+        <p className="filters__note">
+          Only lots without a score on one channel
+          {filters.notScoredFor != null && `, since ${notScoredSentence(filters.notScoredFor)}`}.
+        </p>
       )}
     </form>
   );

@@ -1,11 +1,10 @@
-import type { SummaryLine, SummaryView, WeekFigures } from '@app/contracts';
-import type { ReactNode } from 'react';
+import type { DecidedMeasure, SummaryLine, SummaryView, WeekFigures } from '@app/contracts';
+import { Fragment, type ReactNode } from 'react';
 import { Link } from 'react-router-dom';
-import { urls, type LotFilters } from '../../../app/urls';
 import { FoldingTable } from '../../../shared/ui/folding-table';
 import { Sheet } from '../../../shared/ui/sheet';
-import { decidedWords, lastWeekWords, measureDetail } from '../summary-words';
-import { lastDay } from '../week';
+import { type Figure as FigureName, figureLink } from '../figure-links';
+import { decidedParts, decidedWords, lastWeekWords, measureDetail } from '../summary-words';
 
 interface Row {
   name: string;
@@ -22,16 +21,15 @@ export function LinesTable({ summary }: { summary: SummaryView }) {
   const rows = summary.lines.map(rowOf);
   if (rows.length !== 1) rows.push({ name: 'All lines', lineId: null, ...summary.total });
   const { startsOn } = summary.week;
-  const lotsOf = (row: Row, filters: LotFilters = {}) =>
-    urls.lots({ line: row.lineId, from: startsOn, to: lastDay(startsOn), ...filters });
+  const lotsOf = (row: Row, figure: FigureName) => figureLink(figure, row.lineId, startsOn);
   return (
     <Sheet
       title="Lots by line"
       isFlush
       margin={
         <p>
-          The lists behind the figures go by when a lot started; one that ran over midnight on Sunday may stand in the
-          week beside.
+          A lot is of the week in which it ended. The lists behind the figures show the same lots as they are known now;
+          readings that came later may have added some.
         </p>
       }
     >
@@ -45,7 +43,7 @@ export function LinesTable({ summary }: { summary: SummaryView }) {
             name: 'Measured',
             cell: (row) => (
               <Figure
-                to={lotsOf(row)}
+                to={lotsOf(row, 'measured')}
                 count={row.week.measured.lots}
                 detail={measureDetail(row.week.measured)}
                 before={row.lastWeek?.measured.lots}
@@ -54,13 +52,15 @@ export function LinesTable({ summary }: { summary: SummaryView }) {
           },
           {
             name: 'Scored',
-            cell: (row) => <Figure count={row.week.scored.lots} before={row.lastWeek?.scored.lots} />,
+            cell: (row) => (
+              <Figure to={lotsOf(row, 'scored')} count={row.week.scored.lots} before={row.lastWeek?.scored.lots} />
+            ),
           },
           {
             name: 'Not scored on a channel',
             cell: (row) => (
               <Figure
-                to={lotsOf(row, { state: 'not_scored' })}
+                to={lotsOf(row, 'notFullyScored')}
                 count={row.week.notFullyScored}
                 before={row.lastWeek?.notFullyScored}
               />
@@ -70,7 +70,7 @@ export function LinesTable({ summary }: { summary: SummaryView }) {
             name: 'Held',
             cell: (row) => (
               <Figure
-                to={lotsOf(row, { held: 'ever' })}
+                to={lotsOf(row, 'held')}
                 count={row.week.held.lots}
                 detail={measureDetail(row.week.held)}
                 before={row.lastWeek?.held.lots}
@@ -81,10 +81,7 @@ export function LinesTable({ summary }: { summary: SummaryView }) {
             name: 'Decided',
             cell: (row) => (
               <>
-                {linked(
-                  decidedWords(row.week.decided),
-                  row.week.decided.length > 0 ? urls.lots({ line: row.lineId, held: 'decided' }) : undefined,
-                )}
+                <Decided decided={row.week.decided} to={(disposition) => lotsOf(row, { disposition })} />
                 {row.lastWeek !== null && (
                   <span className="summary__before">last week: {decidedWords(row.lastWeek.decided)}</span>
                 )}
@@ -95,7 +92,7 @@ export function LinesTable({ summary }: { summary: SummaryView }) {
             name: 'Open at the week’s end',
             cell: (row) => (
               <Figure
-                to="#open-holds"
+                to={lotsOf(row, 'stillOpen')}
                 count={row.week.stillOpen.lots}
                 detail={measureDetail(row.week.stillOpen)}
                 before={row.lastWeek?.stillOpen.lots}
@@ -126,8 +123,25 @@ function Figure({ count, detail = '', before, to }: FigureProps) {
   );
 }
 
-function linked(count: number | string, to: string | undefined): ReactNode {
+/** "3 released, 1 scrapped", each with its lots behind it. */
+function Decided({
+  decided,
+  to,
+}: {
+  decided: readonly DecidedMeasure[];
+  to: (disposition: DecidedMeasure['disposition']) => string;
+}) {
+  const parts = decidedParts(decided);
+  if (parts.length === 0) return <>none</>;
+  return parts.map(({ disposition, words }, index) => (
+    <Fragment key={disposition}>
+      {index > 0 && ', '}
+      <Link to={to(disposition)}>{words}</Link>
+    </Fragment>
+  ));
+}
+
+function linked(count: number, to: string | undefined): ReactNode {
   if (to === undefined || count === 0) return <span className="number">{count}</span>;
-  if (to.startsWith('#')) return <a href={to}>{count}</a>;
   return <Link to={to}>{count}</Link>;
 }

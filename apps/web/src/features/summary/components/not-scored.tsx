@@ -4,7 +4,7 @@ import { urls } from '../../../app/urls';
 import { EmptyNote } from '../../../shared/ui/empty-note';
 import { FoldingTable } from '../../../shared/ui/folding-table';
 import { Sheet } from '../../../shared/ui/sheet';
-import { lastDay } from '../week';
+import { figureLink } from '../figure-links';
 
 /** Lots without a score, and why. */
 export function NotScored({ summary }: { summary: SummaryView }) {
@@ -39,18 +39,7 @@ export function NotScored({ summary }: { summary: SummaryView }) {
             },
             {
               name: 'Lots',
-              cell: ({ lots, line }) => (
-                <Link
-                  to={urls.lots({
-                    line: line.id,
-                    state: 'not_scored',
-                    from: week.startsOn,
-                    to: lastDay(week.startsOn),
-                  })}
-                >
-                  {lotsInWords(lots)}
-                </Link>
-              ),
+              cell: (row) => <Link to={figureLink(row, row.line.id, week.startsOn)}>{lotsInWords(row.lots)}</Link>,
             },
             { name: 'Last week', cell: ({ lastWeekLots }) => <span className="number">{lastWeekLots}</span> },
             { name: 'Why', cell: ({ sentence }) => sentence },
