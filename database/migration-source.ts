@@ -8,7 +8,7 @@ import * as outboxAndAudit from './migrations/20261201090500_create_outbox_and_a
 import * as robustPlans from './migrations/20261201131000_add_robust_to_plan_revisions';
 import * as setUpAndPeople from './migrations/20261201140000_add_set_up_and_people';
 import * as auditIndexes from './migrations/20261201141500_index_audit_by_person_and_thing';
-import * as answersAndApiTokens from './migrations/20261201152000_add_answers_and_api_tokens';
+import * as intakeAnswers from './migrations/20261201152000_add_intake_answers';
 
 /** Every migration by name, oldest first. They are listed here, not read from a folder, so that they go into the bundle. */
 const MIGRATIONS: Record<string, Knex.Migration> = {
@@ -21,7 +21,7 @@ const MIGRATIONS: Record<string, Knex.Migration> = {
   '20261201131000_add_robust_to_plan_revisions': robustPlans,
   '20261201140000_add_set_up_and_people': setUpAndPeople,
   '20261201141500_index_audit_by_person_and_thing': auditIndexes,
-  '20261201152000_add_answers_and_api_tokens': answersAndApiTokens,
+  '20261201152000_add_intake_answers': intakeAnswers,
 };
 
 export const migrationNames = Object.keys(MIGRATIONS);
