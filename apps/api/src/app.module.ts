@@ -2,6 +2,7 @@ import { type DynamicModule, Module, type Type } from '@nestjs/common';
 import { APP_FILTER, APP_PIPE } from '@nestjs/core';
 import { type Clock, type Config, PlatformModule, QueueModule } from '@app/platform';
 import { AccessModule } from './access/access.module';
+import { ApiTokensModule } from './api-tokens/api-tokens.module';
 import { AuditModule } from './audit/audit.module';
 import { AuthModule } from './auth/auth.module';
 import { BreaksModule } from './breaks/breaks.module';
@@ -11,6 +12,7 @@ import { DeskModule } from './desk/desk.module';
 import { HealthModule } from './health/health.module';
 import { HoldsModule } from './holds/holds.module';
 import { IntakesModule } from './intakes/intakes.module';
+import { LayoutsModule } from './layouts/layouts.module';
 import { LotsModule } from './lots/lots.module';
 import { MailsModule } from './mails/mails.module';
 import { PeopleModule } from './people/people.module';
@@ -42,6 +44,8 @@ export class AppModule {
         AuthModule,
         PeopleModule,
         ProfileModule,
+        ApiTokensModule,
+        LayoutsModule,
         AuditModule,
         HealthModule,
         PlantsModule,

@@ -36,10 +36,6 @@ export function listApiTokens(db: Queryable, plantId: number, personId: number):
   );
 }
 
-export function findApiToken(db: Queryable, id: number): Promise<ApiTokenRow | undefined> {
-  return findRow<ApiTokenRow>(db, `select ${COLUMNS} from api_tokens where id = :id`, { id });
-}
-
 /** The token of this hash, if it is in force and its person is not disabled. */
 export function findApiTokenByHash(db: Queryable, tokenHash: Buffer): Promise<ApiTokenRow | undefined> {
   return findRow<ApiTokenRow>(

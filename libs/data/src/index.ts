@@ -57,3 +57,4 @@ export * from './summary-facts';
 export * from './summary-week';
 export * from './layouts';
 export * from './api-tokens';
+export * from './confirm-intake';

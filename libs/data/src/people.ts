@@ -7,6 +7,8 @@ export interface Person {
   email: string;
   /** From where the person acts in this request; unknown to work that is done later in the person's name. */
   address?: string;
+  /** A script or line computer acts by the person's API token: as a quality engineer of this plant alone. */
+  machine?: { plantId: number; name: string };
 }
 
 export interface PersonWithPassword extends Person {

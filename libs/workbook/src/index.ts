@@ -25,4 +25,5 @@ export { sheetOf } from './set-up/sheets';
 export { sentencesOf } from './set-up/texts';
 export { writeSetUp } from './set-up/write-set-up';
 export { escapeFormula, writeTable, type TableColumn, type TableOptions } from './write-table';
+export { writeTemplate, type TemplateContext } from './write-template';
 export { writeSummary } from './write-summary';

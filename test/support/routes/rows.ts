@@ -1,4 +1,5 @@
 import type { Rows } from './row';
+import { INTAKE_ROWS } from './rows/intakes';
 import { MAIL_ROWS } from './rows/mails';
 import { PEOPLE_ROWS } from './rows/people';
 import { PROFILE_ROWS } from './rows/profile';
@@ -14,6 +15,7 @@ const AREAS: Rows[] = [
   SIGN_IN_ROWS,
   READING_ROWS,
   WORK_ROWS,
+  INTAKE_ROWS,
   MAIL_ROWS,
   PEOPLE_ROWS,
   SET_UP_PLANT_ROWS,

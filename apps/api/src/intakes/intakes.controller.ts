@@ -1,4 +1,5 @@
 import {
+  Body,
   Controller,
   Get,
   HttpCode,
@@ -15,7 +16,10 @@ import type { IntakeListItem, IntakeView, Page } from '@app/contracts';
 import type { Observable } from 'rxjs';
 import { Permit } from '../access/permit';
 import { CurrentPerson, type Person } from '../auth/current-person';
+import { ForMachines } from '../auth/machine';
 import { IdPipe } from '../platform/id.pipe';
+import { checkAnswers } from './check-answers';
+import { ConfirmIntakeDto, ReadAgainDto, ReceiveQueryDto } from './dto/intake.dto';
 import { IntakeListQueryDto } from './dto/intake-list-query.dto';
 import { IntakeEventsService } from './intake-events.service';
 import { IntakesService } from './intakes.service';
@@ -33,17 +37,20 @@ export class IntakesController {
 
   @Post('lines/:id/intakes')
   @Permit('upload_intake')
+  @ForMachines()
   @WorkbookUpload()
   receive(
     @CurrentPerson() person: Person,
     @Param('id', IdPipe) lineId: number,
+    @Query() { confirm }: ReceiveQueryDto,
     @UploadedFile() file?: Express.Multer.File,
   ): Promise<IntakeView> {
-    return this.intakes.receive(person, lineId, uploadedFile(file));
+    return this.intakes.receive(person, lineId, uploadedFile(file), { confirmsItself: confirm === 'auto' });
   }
 
   @Get('lines/:id/intakes')
   @Permit('read')
+  @ForMachines()
   list(
     @CurrentPerson() person: Person,
     @Param('id', IdPipe) lineId: number,
@@ -54,6 +61,7 @@ export class IntakesController {
 
   @Get('intakes/:id')
   @Permit('read')
+  @ForMachines()
   get(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<IntakeView> {
     return this.intakes.get(person, id);
   }
@@ -61,8 +69,23 @@ export class IntakesController {
   @Post('intakes/:id/confirm')
   @Permit('upload_intake')
   @HttpCode(200)
-  confirm(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<IntakeView> {
-    return this.intakes.confirm(person, id);
+  confirm(
+    @CurrentPerson() person: Person,
+    @Param('id', IdPipe) id: number,
+    @Body() body: ConfirmIntakeDto,
+  ): Promise<IntakeView> {
+    return this.intakes.confirm(person, id, body);
+  }
+
+  @Post('intakes/:id/reading')
+  @Permit('upload_intake')
+  @HttpCode(200)
+  readAgain(
+    @CurrentPerson() person: Person,
+    @Param('id', IdPipe) id: number,
+    @Body() { answers }: ReadAgainDto,
+  ): Promise<IntakeView> {
+    return this.intakes.readAgain(person, id, checkAnswers(answers));
   }
 
   @Sse('intakes/:id/events')
@@ -73,6 +96,7 @@ export class IntakesController {
 
   @Get('intakes/:id/workbook')
   @Permit('read')
+  @ForMachines()
   async workbook(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<StreamableFile> {
     const { fileName, bytes } = await this.intakes.markedWorkbook(person, id);
     return new StreamableFile(bytes, {

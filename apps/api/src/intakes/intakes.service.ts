@@ -1,7 +1,16 @@
 import { createHash } from 'node:crypto';
 import { Inject, Injectable } from '@nestjs/common';
-import { DomainError, type IntakeListItem, type IntakeView, JOBS, type Page } from '@app/contracts';
 import {
+  type ConfirmIntakeRequest,
+  DomainError,
+  type IntakeListItem,
+  type IntakeView,
+  JOBS,
+  type Page,
+  type WorkbookAnswers,
+} from '@app/contracts';
+import {
+  confirmIntake,
   type Database,
   findIntake,
   findLine,
@@ -17,7 +26,7 @@ import {
   listIntakes,
   lockIntake,
   type Person,
-  updateIntakeConfirmed,
+  updateIntakeReadAgain,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE, Dispatcher, ThreadPools } from '@app/platform';
 import { AccessService } from '../access/access.service';
@@ -39,9 +48,14 @@ export class IntakesService {
   ) {}
 
   /** Stores the workbook whole and owes its reading, in one transaction. */
-  async receive(person: Person, lineId: number, file: { name: string; bytes: Buffer }): Promise<IntakeView> {
+  async receive(
+    person: Person,
+    lineId: number,
+    file: { name: string; bytes: Buffer },
+    { confirmsItself = false } = {},
+  ): Promise<IntakeView> {
     const { thing: line } = await this.access.requireThing(
-      person.id,
+      person,
       await findLine(this.database, lineId),
       'upload_intake',
     );
@@ -62,6 +76,7 @@ export class IntakesService {
         sha256,
         receivedBy: person.id,
         receivedAt,
+        confirmsItself,
       });
       await insertAuditEntry(tx, {
         plantId: line.plantId,
@@ -70,7 +85,7 @@ export class IntakesService {
         action: 'upload',
         thingKind: 'intake',
         thingId: intakeId,
-        sentence: `${person.name} uploaded ${file.name} for ${line.name} (${file.bytes.length} bytes).`,
+        sentence: `${senderOf(person)} uploaded ${file.name} for ${line.name} (${file.bytes.length} bytes).`,
         after: { state: 'received', sha256: sha256.toString('hex') },
       });
       const owedJobId = await insertOwedJob(tx, {
@@ -90,30 +105,42 @@ export class IntakesService {
   }
 
   async list(person: Person, lineId: number, page: number, pageSize: number): Promise<Page<IntakeListItem>> {
-    await this.access.requireThing(person.id, await findLine(this.database, lineId), 'read');
+    await this.access.requireThing(person, await findLine(this.database, lineId), 'read');
     const { items, total } = await listIntakes(this.database, lineId, page, pageSize);
     return { items: items.map(intakeListItem), total, page, pageSize };
   }
 
-  async confirm(person: Person, id: number): Promise<IntakeView> {
+  /** Reads the workbook again, by answers that take the place of those before. */
+  async readAgain(person: Person, id: number, answers: WorkbookAnswers): Promise<IntakeView> {
     await this.require(person, id, 'upload_intake');
     const owedJobId = await this.database.transaction(async (tx) => {
       const intake = (await lockIntake(tx, id)) as IntakeRow;
-      refuseUnconfirmable(intake);
+      refuseReadingAgain(intake);
       const at = this.clock.now();
-      await updateIntakeConfirmed(tx, id, person.id, at);
+      await updateIntakeReadAgain(tx, id, answers);
       await insertAuditEntry(tx, {
         plantId: intake.plantId,
         at,
         actor: person,
-        action: 'confirm',
+        action: 'answer',
         thingKind: 'intake',
         thingId: id,
-        sentence: `${person.name} confirmed the intake of ${intake.fileName} for ${intake.lineName}.`,
-        before: { state: intake.state },
-        after: { state: 'queued' },
+        sentence: `${person.name} said how ${intake.fileName} for ${intake.lineName} is to be read.`,
+        before: { answers: intake.answers },
+        after: { answers },
       });
-      return insertOwedJob(tx, { plantId: intake.plantId, name: JOBS.scoreIntake, subject: { intakeId: id }, at });
+      return insertOwedJob(tx, { plantId: intake.plantId, name: JOBS.readIntake, subject: { intakeId: id }, at });
+    });
+    await this.dispatcher.owedJobs([owedJobId]);
+    return this.view(await this.waitUntilRead(id));
+  }
+
+  async confirm(person: Person, id: number, request: ConfirmIntakeRequest = {}): Promise<IntakeView> {
+    await this.require(person, id, 'upload_intake');
+    const owedJobId = await this.database.transaction(async (tx) => {
+      const intake = (await lockIntake(tx, id)) as IntakeRow;
+      refuseUnconfirmable(intake);
+      return confirmIntake(tx, { intake, person, at: this.clock.now(), ...request });
     });
     await this.dispatcher.owedJobs([owedJobId]);
     return this.view((await findIntake(this.database, id)) as IntakeRow);
@@ -127,11 +154,11 @@ export class IntakesService {
     const bytes = await getIntakeBytes(this.database, id);
     const problems = await listIntakeProblems(this.database, id, SHOWN_PROBLEMS);
     const marked = await this.threads.run<Uint8Array>('mark-workbook.thread', { bytes, problems });
-    return { fileName: intake.fileName.replace(/(\.xlsx)?$/i, ' marked.xlsx'), bytes: Buffer.from(marked) };
+    return { fileName: intake.fileName.replace(/(\.[a-z]{3,4})?$/i, ' marked.xlsx'), bytes: Buffer.from(marked) };
   }
 
   async require(person: Person, id: number, permission: 'read' | 'upload_intake'): Promise<IntakeRow> {
-    const { thing } = await this.access.requireThing(person.id, await findIntake(this.database, id), permission);
+    const { thing } = await this.access.requireThing(person, await findIntake(this.database, id), permission);
     return thing;
   }
 
@@ -154,6 +181,22 @@ export class IntakesService {
     const channels = new Map(context.channels.map((channel) => [channel.id, channel]));
     return intakeView({ intake, sameFile, problems, channels, outcome });
   }
+}
+
+const senderOf = ({ name, machine }: Person): string =>
+  machine ? `${name}, by the API token "${machine.name}",` : name;
+
+function refuseReadingAgain({ state, failure }: IntakeRow): void {
+  if (state === 'needs_attention') return;
+  if (state === 'received')
+    throw new DomainError('conflict', 'still-being-read', 'The workbook is still being read. Answer when it is.');
+  if (state === 'refused')
+    throw new DomainError('conflict', 'refused', `This intake was refused: ${failure ?? 'it could not be read'}`);
+  throw new DomainError(
+    'conflict',
+    'confirmed-already',
+    'This intake was confirmed already, so it is not read in another way any more. Withdraw it and upload the workbook again.',
+  );
 }
 
 function refuseUnconfirmable(intake: IntakeRow): void {

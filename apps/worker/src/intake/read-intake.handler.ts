@@ -11,7 +11,7 @@ import {
   updateIntakeRefused,
   updateOwedJobEnded,
 } from '@app/data';
-import { CLOCK, type Clock, CONFIG, type Config, DATABASE, ThreadPools } from '@app/platform';
+import { CLOCK, type Clock, CONFIG, type Config, DATABASE, Dispatcher, ThreadPools } from '@app/platform';
 import { type HandlerOutcome, NoLongerOwedError, type OwedJobHandler } from '../owed/owed-job-handler';
 import type { ReadIntakeOutcome, ReadIntakeTask } from './read-intake.thread';
 
@@ -30,6 +30,7 @@ export class ReadIntakeHandler implements OwedJobHandler<'read-intake'> {
     @Inject(CONFIG) private readonly config: Config,
     @Inject(CLOCK) private readonly clock: Clock,
     private readonly threads: ThreadPools,
+    private readonly dispatcher: Dispatcher,
   ) {}
 
   async run(job: Job): Promise<HandlerOutcome> {
@@ -40,7 +41,10 @@ export class ReadIntakeHandler implements OwedJobHandler<'read-intake'> {
       now: this.clock.now().getTime(),
     };
     const outcome = await this.inTurn(() => this.read(task));
-    if (outcome.status === 'read') return { done: true };
+    if (outcome.status === 'read') {
+      await this.dispatcher.owedJobs(outcome.owedJobIds);
+      return { done: true };
+    }
     const at = this.clock.now();
     await this.database.transaction(async (tx) => {
       if (!(await lockOwedJob(tx, job.id))) throw new NoLongerOwedError(job.id);

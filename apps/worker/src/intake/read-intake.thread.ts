@@ -1,17 +1,23 @@
 import {
+  confirmIntake,
   createDatabase,
+  type Database,
   findIntake,
   getIntakeBytes,
   getLineContext,
   insertAuditEntry,
   insertIntakeProblems,
+  type IntakeRow,
+  listLayouts,
+  listLotNumbers,
   lockOwedJob,
   notifyProgress,
   stageIntake,
+  type Transaction,
   updateIntakeRead,
   updateOwedJobEnded,
 } from '@app/data';
-import { readWorkbook, WorkbookRefusedError } from '@app/workbook';
+import { type LineContext, readWorkbook, type WorkbookReport, WorkbookRefusedError } from '@app/workbook';
 
 export interface ReadIntakeTask {
   databaseUrl: string;
@@ -21,7 +27,10 @@ export interface ReadIntakeTask {
   now: number;
 }
 
-export type ReadIntakeOutcome = { status: 'read' } | { status: 'refused'; sentence: string } | { status: 'skipped' };
+export type ReadIntakeOutcome =
+  | { status: 'read'; /** What it made necessary. */ owedJobIds: number[] }
+  | { status: 'refused'; sentence: string }
+  | { status: 'skipped' };
 
 const PROGRESS_EVERY_MS = 300;
 
@@ -31,7 +40,7 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
   try {
     const intake = await findIntake(db, task.intakeId);
     if (intake?.state !== 'received') return { status: 'skipped' };
-    const context = { ...(await getLineContext(db, intake.lineId)), now: task.now };
+    const context = await readingContext(db, intake, task.now);
     const bytes = await getIntakeBytes(db, intake.id);
     let toldAt = 0;
     const tell = (rowsRead: number) => {
@@ -47,9 +56,10 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
       }).catch(() => undefined);
     };
     const at = new Date(task.now);
+    const owedJobIds: number[] = [];
     const isRead = await stageIntake(db, intake, {
       take: (tx) => lockOwedJob(tx, task.owedJobId),
-      read: (write) => readWorkbook(bytes, context, write, { onProgress: tell }),
+      read: (write) => readWorkbook(bytes, context, write, { onProgress: tell, answers: intake.answers }),
       record: async (tx, report) => {
         const { problems, ...rest } = report;
         await insertIntakeProblems(tx, intake.plantId, intake.id, problems);
@@ -70,6 +80,8 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
           before: { state: 'received' },
           after: { state: 'needs_attention' },
         });
+        if (intake.confirmsItself && leavesNothingToSay(report))
+          owedJobIds.push(await confirmForReceiver(tx, intake, at));
         await updateOwedJobEnded(tx, task.owedJobId, 'done', at);
         await notifyProgress(tx, {
           intakeId: intake.id,
@@ -81,11 +93,38 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
         });
       },
     });
-    return { status: isRead ? 'read' : 'skipped' };
+    return isRead ? { status: 'read', owedJobIds } : { status: 'skipped' };
   } catch (error) {
     if (error instanceof WorkbookRefusedError) return { status: 'refused', sentence: error.detail };
     throw error;
   } finally {
     await db.destroy();
   }
+}
+
+/** What is known of the line: its channels and products, the layouts that were confirmed on it, the numbers of its lots. */
+async function readingContext(db: Database, { lineId }: IntakeRow, now: number): Promise<LineContext> {
+  const [context, remembered, lots] = await Promise.all([
+    getLineContext(db, lineId),
+    listLayouts(db, lineId),
+    listLotNumbers(db, lineId),
+  ]);
+  return { ...context, now, remembered, lots };
+}
+
+/** Every layout is known, no row or cell is left out, nothing is asked. */
+function leavesNothingToSay({ isBlocked, questions, grids, problemCounts, readingsParsed }: WorkbookReport): boolean {
+  const isKnown = grids.every(({ isRemembered, headerRow }) => isRemembered || headerRow === null);
+  const isWhole = problemCounts.every(({ severity }) => severity === 'notice');
+  return readingsParsed > 0 && !isBlocked && questions.length === 0 && isKnown && isWhole;
+}
+
+/** As who sent it had asked. Gives the id of the scoring that is owed now. */
+async function confirmForReceiver(
+  tx: Transaction,
+  { id, receivedBy, receivedByName }: IntakeRow,
+  at: Date,
+): Promise<number> {
+  const intake = (await findIntake(tx, id)) as IntakeRow;
+  return confirmIntake(tx, { intake, person: { id: receivedBy, name: receivedByName, email: '' }, at });
 }

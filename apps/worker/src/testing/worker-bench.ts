@@ -40,12 +40,14 @@ export class WorkerBench {
     };
     const pools = { run: (name: string, task: never) => this.threads[name](task) } as unknown as ThreadPools;
     const dispatcher = {
+      // What is owed is worked off by hand here.
+      owedJobs: () => Promise.resolve(),
       mails: (ids: number[]) => Promise.resolve(void this.mailIds.push(...ids)),
     } as unknown as Dispatcher;
     const judging = new JudgingService(this.db, config, this.clock, pools);
     const mails = new HeldLotsMailService(config);
     this.handlers = [
-      new ReadIntakeHandler(this.db, config, this.clock, pools),
+      new ReadIntakeHandler(this.db, config, this.clock, pools, dispatcher),
       new ScoreIntakeHandler(this.db, this.clock, judging, mails, dispatcher),
       new ScoreChannelsHandler(this.clock, judging, mails, dispatcher),
       new ProposePlanHandler(this.db, config, this.clock, pools),

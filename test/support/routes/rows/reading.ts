@@ -6,6 +6,8 @@ export const READING_ROWS: Rows = {
   'GET /api/lines/{id}/strip': { ...reading, ...ofLine },
   'GET /api/lines/{id}/channels': { ...reading, ...ofLine },
   'GET /api/lines/{id}/intakes': { ...reading, ...ofLine },
+  'GET /api/lines/{id}/layouts': { ...reading, ...ofLine },
+  'GET /api/lines/{id}/workbook-template': { ...reading, ...ofLine },
   'GET /api/channels/{id}': { ...reading, ...ofChannel },
   'GET /api/channels/{id}/record': { ...reading, ...ofChannel },
   'GET /api/channels/{id}/plans': { ...reading, ...ofChannel },

@@ -1,0 +1,82 @@
+import { insertRow } from '../../factories/insert';
+import { insertIntake } from '../../factories/lots';
+import { ofIntake, ofPlant, type Rows, sending } from '../row';
+import type { World } from '../world';
+
+const who = { who: 'upload and confirm an intake, withdraw one', permission: 'upload_intake' } as const;
+const layoutAt = (world: World, layoutId: number) => ({ at: { id: world.plant.lines[0].id, layoutId } });
+const tokenAt = (world: World, tokenId: number) => ({ at: { id: world.plant.id, tokenId } });
+
+/** How workbooks are read, and by which machines they come. */
+export const INTAKE_ROWS: Rows = {
+  'POST /api/intakes/{id}/reading': {
+    ...who,
+    ...sending(ofIntake, { answers: {} }),
+    write: {
+      by: 'engineer',
+      prepare: async ({ app, plant }) => ({
+        at: { id: await insertIntake(app.database, plant, { state: 'needs_attention' }) },
+        body: { answers: { date: '2026-03-09' } },
+      }),
+      entry: {
+        sentence: /engineer said how coater-2-early\.xlsx for Coater 2 is to be read/,
+        kind: 'intake',
+        thing: (_, { asked }) => asked.at?.id as number,
+      },
+    },
+  },
+  'DELETE /api/lines/{id}/layouts/{layoutId}': {
+    ...who,
+    asked: (world) => layoutAt(world, 1_000_000),
+    write: {
+      by: 'engineer',
+      prepare: async (world) => {
+        const layoutId = await insertRow(world.app.database, 'layouts', {
+          plant_id: world.plant.id,
+          line_id: world.plant.lines[0].id,
+          fingerprint: Buffer.alloc(32, 7),
+          reading: JSON.stringify({ sheetName: 'Readings', answers: {} }),
+          remembered_at: world.app.clock.now(),
+          remembered_by: world.plant.people.manager.id,
+        });
+        return layoutAt(world, layoutId);
+      },
+      entry: {
+        sentence: /engineer had the layout of the sheet "Readings" of Coater 2 forgotten/,
+        kind: 'line',
+        thing: (_, { asked }) => asked.at?.id as number,
+      },
+    },
+  },
+  'GET /api/plants/{id}/api-tokens': { ...who, ...ofPlant },
+  'POST /api/plants/{id}/api-tokens': {
+    ...who,
+    ...sending(ofPlant, { name: 'Line computer' }),
+    write: {
+      by: 'engineer',
+      entry: {
+        sentence: /engineer made the API token "Line computer"/,
+        kind: 'person',
+        thing: (_, { by }) => by.id,
+      },
+    },
+  },
+  'DELETE /api/plants/{id}/api-tokens/{tokenId}': {
+    ...who,
+    asked: (world) => tokenAt(world, 1_000_000),
+    write: {
+      by: 'engineer',
+      prepare: async (world) => {
+        const tokenId = await insertRow(world.app.database, 'api_tokens', {
+          plant_id: world.plant.id,
+          person_id: world.plant.people.engineer.id,
+          name: 'Old script',
+          token_hash: Buffer.alloc(32, 9),
+          created_at: world.app.clock.now(),
+        });
+        return tokenAt(world, tokenId);
+      },
+      entry: { sentence: /engineer revoked the API token "Old script"/, kind: 'person', thing: (_, { by }) => by.id },
+    },
+  },
+};
