@@ -24,6 +24,8 @@ export interface ColumnAnswer {
   unit?: string;
   /** The values are deviations from the nominal value of the row's product. */
   isDeviation?: boolean;
+  /** In the role `value`, where rows name their channels: what holds for the values of one channel, by its id. */
+  channels?: Record<string, { unit?: string; isDeviation?: boolean }>;
 }
 
 /** How one layout is to be read: what is remembered for a header's fingerprint. What is absent is recognised. */
@@ -39,6 +41,8 @@ export interface LayoutAnswers {
   timeZone?: string;
   /** Texts and numbers that stand for a missing value, as written ("9999", "--"). */
   missing?: string[];
+  /** Numbers that look as if they stood for a missing value and are readings, as written ("0"). */
+  readings?: string[];
   /** The dates are those of the day on which the shift began: times after midnight belong to the next day. */
   isShiftDate?: boolean;
 }
