@@ -355,14 +355,14 @@ describe('what is not there', () => {
     expect(problemList(result)).toEqual(['blocking no-header']);
     expect(result.report).toMatchObject({ layout: null, rowsRead: 0, isBlocked: true });
   });
-  it('finds a header in row 20 and none in row 21', async () => {
+  it('finds a header in row 40 and none in row 41', async () => {
     const below = (blank: number) => [
       ...Array.from({ length: blank }, () => ['title']),
       HEADER,
       [at('6:00'), 'A', 'SEP-12', 'CW', 1],
     ];
-    expect((await readRows(below(19))).readings).toHaveLength(1);
-    expect(problemList(await readRows(below(20)))).toEqual(['blocking no-header']);
+    expect((await readRows(below(39))).readings).toHaveLength(1);
+    expect(problemList(await readRows(below(40)))).toEqual(['blocking no-header']);
   });
   it('stops at a workbook whose rows all fall away', async () => {
     expect(problemList(await readRows([HEADER]))).toEqual(['blocking no-readings']);

@@ -26,7 +26,7 @@ export interface ReadOptions {
  * Reads a workbook's bytes into readings, in one pass and in memory that does not grow with the rows.
  *
  * Long layout: a row a reading (time, lot, product, channel, value, and serial, position, quantity where there are any).
- * Wide layout: time, lot, product and a column a channel. The header is looked for in the first 20 rows of each sheet.
+ * Wide layout: time, lot, product and a column a channel. The header is looked for in the first 40 rows of each sheet.
  * Times without an offset are the plant's. Every non-empty row below a header counts in `rowsRead`; it either gives a
  * reading or counts in `rowsNotUsed` and has exactly one problem of the severity `row_not_used`.
  *
@@ -125,7 +125,7 @@ function finishReport(report: WorkbookReport, { findings, questions, lots }: Rea
       'no-header',
       { sheet: name },
       () =>
-        `has no header row in its first 20 rows (one that names time, lot and value, or time, lot and channels), so nothing on it was read (${rows === 1 ? 'one row' : `${rows} rows`})`,
+        `has no header row in its first 40 rows (one that names time, lot and value, or time, lot and channels), so nothing on it was read (${rows === 1 ? 'one row' : `${rows} rows`})`,
     );
   }
   if (lots.readings === 0 && findings.countOf('blocking') === 0) {

@@ -1,144 +1,113 @@
 import { columnLetters } from '../container/cell-names';
-import type { SheetRow } from '../container/sheet-rows';
+import type { Cell, SheetRow } from '../container/sheet-rows';
 import type { ColumnRole, RecognisedColumn } from '../types';
 import type { ChannelNames } from './channel-names';
-import { foldName, splitUnit } from './names';
-import { meaningOf, type HeaderMeaning } from './synonyms';
+import { fingerprintOf } from './fingerprint';
+import { headerText, recogniseText, type HeaderColumn } from './header-cell';
+import { joinTexts } from './join-rows';
+import { settleColumns } from './settle-columns';
+import { takeUnits } from './units-row';
 
-/** A column of a header row as recognised; several may have one role. */
-export interface HeaderColumn {
-  /** From 1. */
-  column: number;
-  header: string;
-  name: string;
-  unit: string | null;
-  role: ColumnRole;
-  /** In the role `channel`: whether it names the characteristic or the gauge. */
-  isGauge: boolean;
-  channelId: number | null;
-  /** Neither a role nor one of the ordinary columns that are not used. */
-  isUnknown: boolean;
+export interface HeaderLine {
+  row: number;
+  /** By column number. */
+  texts: (string | null)[];
+  cells: { column: number; cell: Cell }[];
 }
 
 export interface Header {
+  /** The row of the names that count: the lower one of two. */
   row: number;
+  /** From its first row to its last, units included, for finding it repeated. */
+  lines: HeaderLine[];
   columns: HeaderColumn[];
+  fingerprint: string;
 }
 
-const ROLE: Record<HeaderMeaning, ColumnRole> = {
-  stamp: 'time',
-  date: 'date',
-  clock: 'time_of_day',
-  lot: 'lot',
-  product: 'product',
-  characteristic: 'channel',
-  gauge: 'channel',
-  value: 'value',
-  unit: 'unit',
-  serial: 'serial',
-  position: 'position',
-  quantity: 'quantity',
-  remark: 'remark',
-  known: 'ignored',
-};
-/** Roles in which a second column would contradict the first. */
-const SINGLE: ColumnRole[] = [
-  'time',
-  'date',
-  'time_of_day',
-  'lot',
-  'product',
-  'unit',
-  'serial',
-  'position',
-  'quantity',
-];
-const FIRST: HeaderMeaning[] = ['stamp', 'date', 'clock', 'lot'];
+/** What the header's columns are for, and whether that is enough to read rows by it. */
+export interface HeaderWeight {
+  score: number;
+  hasTime: boolean;
+  hasLot: boolean;
+  hasValues: boolean;
+}
 
-/** What the texts of one row mean, if the row is a header. */
-export function recogniseRow(row: SheetRow, channels: ChannelNames): Header {
-  const columns: HeaderColumn[] = [];
-  row.cells.forEach((cell, column) => {
-    if (cell?.kind === 'text' && cell.text.trim() !== '') columns.push(recogniseCell(cell.text, column, channels));
-  });
-  settleTime(columns);
-  for (const role of SINGLE) {
-    for (const again of columns.filter((one) => one.role === role).slice(1)) {
-      again.role = 'ignored';
-      again.isUnknown = true;
+function lineOf(row: SheetRow): HeaderLine {
+  const texts = Array.from(row.cells, headerText);
+  const cells = texts.flatMap((text, column) => (text === null ? [] : [{ column, cell: row.cells[column]! }]));
+  return { row: row.number, texts, cells };
+}
+
+const recognise = ({ texts }: HeaderLine, channels: ChannelNames): HeaderColumn[] =>
+  settleColumns(texts.flatMap((text, column) => (text === null ? [] : [recogniseText(text, column, channels)])));
+
+/** How much columns look like a header's: a score of 0 for those that cannot be. */
+export function weigh(columns: readonly HeaderColumn[]): HeaderWeight {
+  const has = (...roles: ColumnRole[]): number => (columns.some((column) => roles.includes(column.role)) ? 1 : 0);
+  const [time, lot, value] = [has('time', 'date', 'time_of_day'), has('lot'), has('value', 'channel_values')];
+  const flags = { hasTime: time > 0, hasLot: lot > 0, hasValues: value > 0 };
+  if (time + lot === 0 || time + lot + value + has('channel', 'product') < 2) return { score: 0, ...flags };
+  const others = 2 * has('channel') + has('product') + has('serial', 'position', 'quantity');
+  return { score: 4 * time + 3 * lot + 4 * value + others + Math.min(countValues(columns) / 1_000, 0.9), ...flags };
+}
+
+/** Columns of values that can be told apart. */
+const countValues = (columns: readonly HeaderColumn[]): number =>
+  new Set(
+    columns.flatMap(({ role, channelId, position, column }) =>
+      role === 'channel_values' ? [`${channelId} ${position}`] : role === 'value' ? [column] : [],
+    ),
+  ).size;
+
+/**
+ * What one row means as a header, together with the row above it where that gives the names and this one their parts,
+ * and with a row of units below.
+ */
+export function headerAt(rows: readonly SheetRow[], index: number, channels: ChannelNames): Header {
+  const row = rows[index];
+  const line = lineOf(row);
+  let columns = recognise(line, channels);
+  let lines = [line];
+  const above = rows[index - 1];
+  if (above?.number === row.number - 1) {
+    const upper = lineOf(above);
+    const joined = joinTexts(upper.texts, line.texts, channels);
+    const both = joined && settleColumns(joined);
+    if (both && weigh(both).score > Math.max(weigh(columns).score, weigh(recognise(upper, channels)).score)) {
+      columns = both;
+      lines = [upper, line];
     }
   }
-  return { row: row.number, columns };
+  const below = rows[index + 1];
+  if (below?.number === row.number + 1 && takeUnits(columns, below)) lines.push(lineOf(below));
+  return { row: row.number, lines, columns, fingerprint: fingerprintOf(lines.map(({ texts }) => texts)) };
 }
 
-function recogniseCell(text: string, column: number, channels: ChannelNames): HeaderColumn {
-  const header = text.replace(/\s+/g, ' ').trim().slice(0, 200);
-  const split = splitUnit(header);
-  const base = { column, header, isGauge: false, channelId: null, isUnknown: false };
-  const whole = { name: header, unit: null };
-  for (const { name, unit } of split.unit === null ? [split] : [whole, split]) {
-    const meaning = meaningOf(foldName(name));
-    const channel = meaning && FIRST.includes(meaning) ? undefined : channels.findOne(name);
-    if (channel) return { ...base, name, unit, role: 'channel_values', channelId: channel.id };
-    if (meaning) return { ...base, name, unit, role: ROLE[meaning], isGauge: meaning === 'gauge' };
-  }
-  return { ...base, ...split, role: 'ignored', isUnknown: true };
-}
-
-/** "Time" beside "Date" is the time of day; alone, either holds both. */
-function settleTime(columns: HeaderColumn[]): void {
-  const has = (role: ColumnRole): boolean => columns.some((column) => column.role === role);
-  const [hasStamp, hasDate, hasClock] = [has('time'), has('date'), has('time_of_day')];
-  for (const column of columns) {
-    if (column.role !== 'date' && column.role !== 'time_of_day') continue;
-    if (hasStamp) column.role = 'ignored';
-    else if (!(hasDate && hasClock)) column.role = 'time';
-  }
-}
-
-/** How much a row looks like a header: 0 for one that cannot be. */
-export function headerScore({ columns }: Header): number {
-  const has = (...roles: ColumnRole[]): number => (columns.some((column) => roles.includes(column.role)) ? 1 : 0);
-  const [time, lot, value] = [has('time', 'date'), has('lot'), has('value', 'channel_values')];
-  if (time + lot === 0 || time + lot + value + has('channel', 'product') < 2) return 0;
-  return 4 * time + 3 * lot + 4 * value + 2 * has('channel') + has('product') + has('serial', 'position', 'quantity');
-}
-
-/** Finds the header among a sheet's first rows: the one that looks most like one, the first of equals. */
+/** Finds the header among a sheet's first rows: the first that is whole, else the one that looks most like one. */
 export function findHeader(rows: readonly SheetRow[], channels: ChannelNames): Header | null {
   let best: Header | null = null;
   let bestScore = 0;
-  for (const row of rows) {
-    const header = recogniseRow(row, channels);
-    const score = headerScore(header);
+  let isWhole = false;
+  for (let index = 0; index < rows.length; index += 1) {
+    const header = headerAt(rows, index, channels);
+    const { score, hasTime, hasLot, hasValues } = weigh(header.columns);
+    if (isWhole && header.lines[0].row > best!.row) break;
     if (score > bestScore) [best, bestScore] = [header, score];
+    isWhole ||= score > 0 && hasTime && hasLot && hasValues;
   }
   return best;
 }
 
-/**
- * Takes the units from a row of units under the header: texts alone, under columns of values, none where time and lot
- * are.
- *
- * @returns whether the row was such a row
- */
-export function takeUnitsRow(header: Header, row: SheetRow): boolean {
-  const units = new Map<HeaderColumn, string>();
-  for (const column of header.columns) {
-    const cell = row.cells[column.column];
-    if (!cell || cell.text.trim() === '') continue;
-    if (cell.kind !== 'text' || cell.text.length > 20 || /^[<>]|^[\d.,]+$/.test(cell.text.trim())) return false;
-    if (['channel_values', 'value', 'quantity'].includes(column.role)) units.set(column, cell.text);
-    else if (column.role !== 'ignored' && !/^[[(].*[\])]$/.test(cell.text.trim())) return false;
-  }
-  if (![...units.keys()].some((column) => column.role !== 'quantity')) return false;
-  if (![...units.values()].every((text) => isUnitText(text.trim()))) return false;
-  for (const [column, text] of units) column.unit ??= text.trim().replace(/^[[(]\s*|\s*[\])]$/g, '');
-  return true;
-}
-
-const isUnitText = (text: string): boolean =>
-  /[\p{L}%°]|^[[(]?[-1][\])]?$/u.test(text) && !/^(n\/?a|k\.?a\.?|ol|ul|over|under|err|fail|ok|nok)$/i.test(text);
+/** Whether a row says again what a line of the header says; cells beside it may say more. */
+export const isRepeatOf = ({ lines }: Header, row: SheetRow): boolean =>
+  lines.some(
+    ({ cells }) =>
+      cells.length > 0 &&
+      cells.every(({ column, cell }) => {
+        const other = row.cells[column];
+        return other?.kind === cell.kind && other.text === cell.text && Object.is(other.number, cell.number);
+      }),
+  );
 
 export const toRecognised = (sheet: string, column: HeaderColumn): RecognisedColumn => ({
   sheet,

@@ -58,7 +58,6 @@ describe('meaningOf', () => {
     ['Prüfmerkmal', 'characteristic'],
     ['Messmittel', 'gauge'],
     ['Messwert', 'value'],
-    ['Reading 3', 'value'],
     ['Stückzahl', 'quantity'],
     ['Coat weight', undefined],
   ])('knows %p as %p', (header, meaning) => {

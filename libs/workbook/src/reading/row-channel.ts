@@ -7,7 +7,7 @@ import type { SheetLayout } from './sheet-layout';
 import { cellText } from './texts';
 
 /**
- * The channel that a row of the long layout names, by its characteristic, its gauge or both; null in the wide layout.
+ * The channel that a row names, by its characteristic, its gauge or both; null where the columns of values have theirs.
  * A gauge that the line does not know is said, and the characteristic decides.
  */
 export function channelOfRow(
@@ -16,9 +16,11 @@ export function channelOfRow(
   channels: ChannelNames,
   findings: Findings,
 ): ChannelContext | null | RowNotUsed {
-  if (layout.kind === 'wide') return null;
   const [first] = layout.channelColumns;
-  if (!first) return layout.values[0]?.channel ?? new RowNotUsed('channel-missing', 'names no channel');
+  if (!first) {
+    const isOpen = layout.values.some((source) => source.channel === null);
+    return isOpen ? new RowNotUsed('channel-missing', 'names no channel') : null;
+  }
   let found: ReadonlySet<number> | null = null;
   const unknown: { text: string; column: number; isGauge: boolean }[] = [];
   for (const { column, isGauge } of layout.channelColumns) {

@@ -2,7 +2,8 @@ import type { SheetRow } from '../container/sheet-rows';
 import type { ChannelContext, ParsedReading } from '../types';
 import type { ChannelNames } from './channel-names';
 import type { Findings } from './findings';
-import type { HeaderColumn } from './header';
+import { isRepeatOf } from './header';
+import type { HeaderColumn } from './header-cell';
 import type { LotBook } from './lot-book';
 import type { ProductNames } from './product-names';
 import { channelOfRow } from './row-channel';
@@ -73,10 +74,7 @@ export class RowReader {
   private findNonData(row: SheetRow): RowNotUsed | undefined {
     const { used } = this;
     const { layout } = this.parts;
-    const isHeader = used.every(
-      ({ column, header }) => row.cells[column]?.text.replace(/\s+/g, ' ').trim().slice(0, 200) === header,
-    );
-    if (isHeader) return new RowNotUsed('repeated-header', 'repeats the header');
+    if (isRepeatOf(layout.header, row)) return new RowNotUsed('repeated-header', 'repeats the header');
     const stampCell = row.cells[(layout.time ?? layout.date)?.column ?? 0];
     const isWithoutTime = isMissing(stampCell) || (stampCell?.kind === 'text' && isSummaryLabel(stampCell.text));
     const label = isWithoutTime && row.cells.find((cell) => cell?.kind === 'text' && isSummaryLabel(cell.text));
@@ -166,7 +164,7 @@ export class RowReader {
         value: result.value,
         censoring: result.censoring,
         serial: serialText,
-        position: positionText,
+        position: source.position ?? positionText,
       };
       this.parts.lots.add(reading);
       into.push(reading);

@@ -2,7 +2,8 @@ import { columnLetters } from '../container/cell-names';
 import type { ChannelContext, ColumnRole } from '../types';
 import type { ChannelNames } from './channel-names';
 import type { Findings } from './findings';
-import type { Header, HeaderColumn } from './header';
+import type { Header } from './header';
+import type { HeaderColumn } from './header-cell';
 import { isSameUnit } from './names';
 import type { ColumnHabits } from './values';
 
@@ -11,7 +12,10 @@ export interface ValueColumn {
   letters: string;
   /** Null where each row names its channel. */
   channel: ChannelContext | null;
+  /** The reading's position where its column gives one. */
+  position: string | null;
   unit: string | null;
+  isDeviation: boolean;
   habits: ColumnHabits;
 }
 
@@ -79,6 +83,7 @@ export function resolveLayout(sheet: string, header: Header, channels: ChannelNa
   layout.values = isLong
     ? longValues(layout, all('value'), channels, findings)
     : wideValues(layout, findings, channels);
+  if (layout.channelColumns.length === 0 && layout.values.length > 1) layout.kind = 'wide';
   sayWhatIsMissing(layout, channels, findings);
   return layout;
 }
@@ -105,12 +110,13 @@ function longValues(
 }
 
 function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels: ChannelNames): ValueColumn[] {
-  const seen = new Map<number, HeaderColumn>();
+  const seen = new Map<string, HeaderColumn>();
   const values: ValueColumn[] = [];
   for (const column of header.columns) {
     if (column.role !== 'channel_values') continue;
     const channel = channels.get(column.channelId!);
-    const twin = seen.get(channel.id);
+    const key = `${channel.id} ${column.position ?? ''}`;
+    const twin = seen.get(key);
     if (twin) {
       findings.add(
         'blocking',
@@ -121,18 +127,23 @@ function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels
       );
       continue;
     }
-    seen.set(channel.id, column);
+    seen.set(key, column);
     if (!isUnitRight(sheet, header.row, column, channel, findings)) continue;
     values.push(toValueColumn(column, channel));
   }
   return values;
 }
 
-const toValueColumn = ({ column, unit }: HeaderColumn, channel: ChannelContext | null): ValueColumn => ({
+const toValueColumn = (
+  { column, unit, position, isDeviation }: HeaderColumn,
+  channel: ChannelContext | null,
+): ValueColumn => ({
   column,
   letters: columnLetters(column),
   channel,
+  position,
   unit,
+  isDeviation,
   habits: { sawDecimalComma: false },
 });
 

@@ -3,7 +3,7 @@ import type { SheetFacts, SheetRow } from '../container/sheet-rows';
 import type { ParsedReading, RecognisedColumn } from '../types';
 import type { ChannelNames } from './channel-names';
 import type { Findings } from './findings';
-import { findHeader, takeUnitsRow, toRecognised } from './header';
+import { findHeader, toRecognised } from './header';
 import type { LotBook } from './lot-book';
 import type { ProductNames } from './product-names';
 import type { Questions } from './questions';
@@ -15,7 +15,7 @@ import { isBlank } from './values';
 import type { ZoneClock } from './zone-clock';
 
 /** The header stands within this many rows. */
-const HEADER_WITHIN = 20;
+const HEADER_WITHIN = 40;
 
 export interface ReadingParts {
   channels: ChannelNames;
@@ -94,10 +94,8 @@ export class SheetReader {
     const { channels, findings, questions } = this.parts;
     const answers: LayoutAnswers = this.parts.answers.sheets?.[this.name] ?? {};
     const header = findHeader(rows, channels);
-    const below = header ? rows.filter((row) => row.number > header.row) : rows;
+    const below = header ? rows.filter((row) => row.number > header.lines.at(-1)!.row) : rows;
     if (header) {
-      const [units] = below;
-      if (units && units.number === header.row + 1 && takeUnitsRow(header, units)) below.shift();
       const layout = resolveLayout(this.name, header, channels, findings);
       this.layout = layout;
       this.stamps = new RowStamps(layout, answers, this.parts);

@@ -51,9 +51,8 @@ const MEANINGS = new Map<string, HeaderMeaning>(
   ),
 );
 
-/** The meaning of a folded header name, or undefined; "Reading 3" and "Wert 3" are values too. */
-export const meaningOf = (folded: string): HeaderMeaning | undefined =>
-  MEANINGS.get(folded) ?? (/^(value|reading|wert|messwert)\d{1,2}$/.test(folded) ? 'value' : undefined);
+/** The meaning of a folded header name, or undefined. */
+export const meaningOf = (folded: string): HeaderMeaning | undefined => MEANINGS.get(folded);
 
 const SUMMARY =
   /^(total|sum|average|avg|mean|median|min|minimum|max|maximum|range|count|std|stdev|std\.? ?dev\.?|standard deviation|sigma|s|n|cp|cpk|pp|ppk|summe|gesamt|mittelwert|mittel|durchschnitt|anzahl|spannweite|standardabweichung|streuung|ø)\s*[:=]?$/i;
