@@ -1,0 +1,93 @@
+import { CORPUS, nameOfChannel, type CorpusFile, type ExpectedReading } from './testing/corpus';
+import type { Read } from './testing/coater';
+
+/** What a conversion between units may lose in double arithmetic; everything else is the same number. */
+const RELATIVE = 1e-12;
+
+const place = ({ row, column }: { row: number; column: string }): string => `${row} ${column.padStart(3)}`;
+
+/** The readings in the words of the expectation, with what that leaves open left out. */
+function inItsWords({ readings }: Read, { context, expected }: CorpusFile): ExpectedReading[] {
+  const said = new Map(expected.readings.map((one) => [`${one.sheet} ${place(one)}`, one]));
+  const isText = expected.readings.some((one) => one.sheet === '*');
+  return readings.map((reading) => {
+    const sheet = isText ? '*' : reading.sheet;
+    const known = said.get(`${sheet} ${place(reading)}`);
+    const isClose =
+      known?.value != null &&
+      reading.value !== null &&
+      Math.abs(reading.value - known.value) <= RELATIVE * Math.abs(known.value);
+    return {
+      sheet,
+      row: reading.row,
+      column: reading.column,
+      lot: reading.lot,
+      product: reading.product,
+      channel: nameOfChannel(context, reading.channelId) ?? '',
+      at: new Date(reading.at).toISOString().replace('.000Z', 'Z'),
+      value: isClose ? known.value : reading.value,
+      censoring: reading.censoring,
+      ...(known?.serial === undefined ? {} : { serial: reading.serial ?? undefined }),
+      ...(known?.position === undefined ? {} : { position: reading.position ?? undefined }),
+    };
+  });
+}
+
+/** The first readings that only one side has, so that a failure can be read. */
+function differing(read: ExpectedReading[], wanted: ExpectedReading[]): Record<string, unknown> {
+  const lines = (readings: ExpectedReading[]): string[] =>
+    readings.map((one) => JSON.stringify(one, Object.keys(one).sort()));
+  const only = (ones: string[], others: string[]): string[] => {
+    const known = new Set(others);
+    return ones.filter((one) => !known.has(one)).slice(0, 3);
+  };
+  const [have, want] = [lines(read), lines(wanted)];
+  return { count: have.length, missing: only(want, have), unexpected: only(have, want) };
+}
+
+const codes = ({ report }: Read): string[] => [...new Set(report.questions.map((question) => question.code))].sort();
+
+function countsByCode({ report }: Read): Record<string, number> {
+  const counts: Record<string, number> = {};
+  for (const { code, count } of report.problemCounts) counts[code] = (counts[code] ?? 0) + count;
+  return counts;
+}
+
+const isRefused = ({ expected }: CorpusFile): boolean => expected.refused !== undefined;
+
+describe('workbooks as plants have them', () => {
+  it.each(CORPUS.filter(isRefused).map((file) => [file.name, file] as const))(
+    '%s is turned away with a sentence',
+    async (_, file) => {
+      await expect(file.read()).rejects.toMatchObject({ code: file.expected.refused });
+    },
+  );
+
+  it.each(CORPUS.filter((file) => !isRefused(file)).map((file) => [file.name, file] as const))(
+    '%s gives the rows that were put in',
+    async (_, file) => {
+      const { answers, expected } = file;
+      const unanswered = await file.read();
+      expect(codes(unanswered)).toEqual(expected.questions ?? []);
+      const result = answers ? await file.read(answers) : unanswered;
+      expect(codes(result)).toEqual([]);
+      expect(differing(inItsWords(result, file), expected.readings)).toEqual({
+        count: expected.readings.length,
+        missing: [],
+        unexpected: [],
+      });
+      expect({
+        layout: result.report.layout,
+        isBlocked: result.report.isBlocked,
+        rowsRead: result.report.rowsRead,
+        rowsNotUsed: result.report.rowsNotUsed,
+      }).toEqual({
+        layout: expected.layout ?? result.report.layout,
+        isBlocked: expected.isBlocked ?? false,
+        rowsRead: expected.rowsRead,
+        rowsNotUsed: expected.rowsNotUsed,
+      });
+      expect(countsByCode(result)).toMatchObject(expected.problemCodes ?? {});
+    },
+  );
+});
