@@ -54,7 +54,7 @@ export function weigh(columns: readonly HeaderColumn[]): HeaderWeight {
 /** Columns of values that can be told apart. */
 const countValues = (columns: readonly HeaderColumn[]): number =>
   new Set(
-    columns.flatMap(({ role, channelId, position, column }) =>
+    columns.flatMap(({ role, channelId, position, column }): (string | number)[] =>
       role === 'channel_values' ? [`${channelId} ${position}`] : role === 'value' ? [column] : [],
     ),
   ).size;
