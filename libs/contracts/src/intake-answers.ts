@@ -15,17 +15,25 @@ export type ColumnRole =
   | 'channel_values'
   | 'ignored';
 
-/** What a person says about one column. */
-export interface ColumnAnswer {
-  role: ColumnRole;
-  /** In the role `channel_values`: whose values they are. */
-  channelId?: number;
+/** What a person says about values. */
+export interface ValueAnswer {
   /** The unit in which the values stand; converted to the channel's when it is a unit of the same quantity. */
   unit?: string;
   /** The values are deviations from the nominal value of the row's product. */
   isDeviation?: boolean;
+  /** Numbers that stand for a missing value among them, as written ("0"). */
+  missing?: string[];
+  /** Numbers that look as if they stood for a missing value and are readings. */
+  readings?: string[];
+}
+
+/** What a person says about one column. */
+export interface ColumnAnswer extends ValueAnswer {
+  role: ColumnRole;
+  /** In the role `channel_values`: whose values they are. */
+  channelId?: number;
   /** In the role `value`, where rows name their channels: what holds for the values of one channel, by its id. */
-  channels?: Record<string, { unit?: string; isDeviation?: boolean }>;
+  channels?: Record<string, ValueAnswer>;
 }
 
 /** How one layout is to be read: what is remembered for a header's fingerprint. What is absent is recognised. */
@@ -41,8 +49,6 @@ export interface LayoutAnswers {
   timeZone?: string;
   /** Texts and numbers that stand for a missing value, as written ("9999", "--"). */
   missing?: string[];
-  /** Numbers that look as if they stood for a missing value and are readings, as written ("0"). */
-  readings?: string[];
   /** The dates are those of the day on which the shift began: times after midnight belong to the next day. */
   isShiftDate?: boolean;
 }

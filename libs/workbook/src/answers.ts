@@ -1,6 +1,7 @@
 export type {
   Choice,
   ColumnAnswer,
+  ValueAnswer,
   ColumnRole,
   LayoutAnswers,
   Question,

@@ -72,22 +72,18 @@ export function checkAnswers(given: unknown): WorkbookAnswers {
         else refuse(at, 'There is nothing of this name.');
       }
     };
-  const column = object({
-    role: oneOf(...ROLES),
-    channelId: whole,
-    unit: text(() => true, 'Give a unit.'),
-    isDeviation: flag,
-    channels: record(
-      MOST_COLUMNS,
-      (key) => /^\d{1,15}$/.test(key),
-      object({ unit: text(() => true, 'Give a unit.'), isDeviation: flag }),
-    ),
-  });
   const tokens: Check = (value, pointer) => {
     const isList = Array.isArray(value) && value.length <= MOST_TOKENS;
     if (!isList || !value.every((one) => typeof one === 'string' && one.length <= 40))
       refuse(pointer, `Give at most ${MOST_TOKENS} short texts.`);
   };
+  const values = { unit: text(() => true, 'Give a unit.'), isDeviation: flag, missing: tokens, readings: tokens };
+  const column = object({
+    ...values,
+    role: oneOf(...ROLES),
+    channelId: whole,
+    channels: record(MOST_COLUMNS, (key) => /^\d{1,15}$/.test(key), object(values)),
+  });
   const layout = object({
     headerRow: (value, pointer) => value === null || whole(value, pointer),
     columns: record(MOST_COLUMNS, (key) => /^[A-Z]{1,3}$/.test(key), column),
@@ -95,7 +91,6 @@ export function checkAnswers(given: unknown): WorkbookAnswers {
     decimalSign: oneOf('.', ','),
     timeZone: zone,
     missing: tokens,
-    readings: tokens,
     isShiftDate: flag,
   });
   object({
