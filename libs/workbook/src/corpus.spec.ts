@@ -1,3 +1,5 @@
+import fc from 'fast-check';
+import type { ColumnRole, LayoutAnswers, WorkbookAnswers } from './answers';
 import { CORPUS, nameOfChannel, type CorpusFile, type ExpectedReading } from './testing/corpus';
 import type { Read } from './testing/coater';
 
@@ -88,6 +90,70 @@ describe('workbooks as plants have them', () => {
         rowsNotUsed: expected.rowsNotUsed,
       });
       expect(countsByCode(result)).toMatchObject(expected.problemCodes ?? {});
+    },
+  );
+});
+
+/** Every row is either used or named once, and all that is counted adds up. */
+function expectAccounted({ report, readings }: Read): void {
+  const at = ({ sheet, row }: { sheet: string; row: number | null }): string => `${sheet} ${row}`;
+  const used = new Set(readings.map(at));
+  const notUsed = report.problems.filter((problem) => problem.severity === 'row_not_used').map(at);
+  expect(report.rowsRead).toBe(used.size + report.rowsNotUsed);
+  expect(notUsed).toHaveLength(report.rowsNotUsed);
+  expect(new Set(notUsed).size).toBe(notUsed.length);
+  expect(notUsed.filter((row) => used.has(row))).toEqual([]);
+  expect(report.readingsParsed).toBe(readings.length);
+  expect(report.lots.reduce((sum, lot) => sum + lot.readings, 0)).toBe(readings.length);
+  expect(report.isBlocked).toBe(report.problemCounts.some(({ severity }) => severity === 'blocking'));
+}
+
+const ROLES: ColumnRole[] = ['time', 'date', 'time_of_day', 'lot', 'product', 'channel', 'value', 'unit', 'ignored'];
+
+/** Answers as a person might give them, rightly or wrongly. */
+const layoutAnswers = ({ context }: CorpusFile): fc.Arbitrary<LayoutAnswers> => {
+  const channel = fc.constantFrom(...context.channels);
+  const column = fc.oneof(
+    fc.constantFrom(...ROLES).map((role) => ({ role })),
+    channel.map(({ id }) => ({ role: 'channel_values' as const, channelId: id })),
+    channel.map(({ id, unit }) => ({ role: 'channel_values' as const, channelId: id, unit, isDeviation: true })),
+  );
+  return fc.record(
+    {
+      headerRow: fc.constantFrom(null, 1, 2, 3, 7),
+      columns: fc.dictionary(fc.constantFrom('A', 'B', 'C', 'D', 'E', 'F'), column, { maxKeys: 3 }),
+      dateOrder: fc.constantFrom('day-month' as const, 'month-day' as const),
+      decimalSign: fc.constantFrom('.' as const, ',' as const),
+      timeZone: fc.constantFrom('America/New_York', 'Europe/Berlin', 'UTC'),
+      missing: fc.subarray(['0', '9999', 'OL', '12', '16.4']),
+      isShiftDate: fc.boolean(),
+    },
+    { requiredKeys: [] },
+  );
+};
+
+const workbookAnswers = (file: CorpusFile, sheets: string[]): fc.Arbitrary<WorkbookAnswers> =>
+  fc.record(
+    {
+      sheets: fc.dictionary(fc.constantFrom(...sheets), layoutAnswers(file)),
+      date: fc.constantFrom('2026-03-02', '2026-03-29'),
+      repeatedHour: fc.constantFrom('first' as const, 'second' as const),
+      lots: fc.constantFrom({ 'L-0124': 'L-0123' }, { '24117': 'A' }),
+    },
+    { requiredKeys: [] },
+  );
+
+describe('every row of every file is accounted for', () => {
+  it.each(CORPUS.filter((file) => !isRefused(file)).map((file) => [file.name, file] as const))(
+    '%s, whatever is answered',
+    async (_, file) => {
+      const plain = await file.read();
+      expectAccounted(plain);
+      const sheets = plain.report.sheets.map(({ name }) => name);
+      await fc.assert(
+        fc.asyncProperty(workbookAnswers(file, sheets), async (answers) => expectAccounted(await file.read(answers))),
+        { numRuns: 12 },
+      );
     },
   );
 });
