@@ -103,7 +103,7 @@ class Case:
             "problemCodes": self.problem_codes,
             "questions": sorted(set(self.questions)),
         }
-        known = {key: value for key, value in expected.items() if value not in (None, {}, [])}
+        known = {key: value for key, value in expected.items() if key == "readings" or value not in (None, {}, [])}
         return {"context": self.context, **({"answers": self.answers} if self.answers else {}), "expected": known}
 
 

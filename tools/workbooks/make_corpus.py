@@ -8,10 +8,12 @@ import os
 
 import containers  # noqa: F401  (each module registers its files)
 import layouts  # noqa: F401
+import layouts_decorated  # noqa: F401
 import layouts_sheets  # noqa: F401
 import layouts_wide  # noqa: F401
 import lots  # noqa: F401
 import texts  # noqa: F401
+import texts_machines  # noqa: F401
 import times  # noqa: F401
 import times_saving  # noqa: F401
 import units  # noqa: F401

@@ -12,8 +12,8 @@ from repack import repack
 XLSXWRITER = f"XlsxWriter {xlsxwriter.__version__}"
 
 
-def write(sheets, is_1904=False, macros=None, is_inline=False):
-    """`macros`: bytes put into the package as its VBA project, which nobody runs."""
+def write(sheets, is_1904=False, macros=None, is_inline=False, decorate=None):
+    """`macros`: bytes put into the package as its VBA project, which nobody runs; `decorate` adds what is no cell."""
     out = io.BytesIO()
     options = {"in_memory": True, "default_date_format": None}
     if is_1904:
@@ -39,6 +39,8 @@ def write(sheets, is_1904=False, macros=None, is_inline=False):
             target.autofilter(sheet.filter_ref)
         if sheet.state == "hidden":
             target.hide()
+    if decorate:
+        decorate(book, book.worksheets())
     if macros is not None:
         with tempfile.TemporaryDirectory() as folder:
             path = os.path.join(folder, "vbaProject.bin")
