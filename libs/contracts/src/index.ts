@@ -12,6 +12,7 @@ export * from './api/audit';
 export * from './api/people';
 export * from './api/lines';
 export * from './intake-answers';
+export * from './merge-answers';
 export * from './layout-wording';
 export * from './api/intakes';
 export * from './api/api-tokens';

@@ -1,22 +1,6 @@
-import { DomainError, type FieldError, type WorkbookAnswers } from '@app/contracts';
+import { DomainError, type FieldError, ROLE_WORDS, type WorkbookAnswers } from '@app/contracts';
 import { IANAZone } from 'luxon';
 
-const ROLES = [
-  'time',
-  'date',
-  'time_of_day',
-  'lot',
-  'product',
-  'channel',
-  'value',
-  'unit',
-  'serial',
-  'position',
-  'quantity',
-  'remark',
-  'channel_values',
-  'ignored',
-];
 const MOST_SHEETS = 200;
 const MOST_COLUMNS = 500;
 const MOST_LOTS = 5000;
@@ -80,7 +64,7 @@ export function checkAnswers(given: unknown): WorkbookAnswers {
   const values = { unit: text(() => true, 'Give a unit.'), isDeviation: flag, missing: tokens, readings: tokens };
   const column = object({
     ...values,
-    role: oneOf(...ROLES),
+    role: oneOf(...Object.keys(ROLE_WORDS)),
     channelId: whole,
     channels: record(MOST_COLUMNS, (key) => /^\d{1,15}$/.test(key), object(values)),
   });
