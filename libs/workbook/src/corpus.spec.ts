@@ -138,7 +138,7 @@ const workbookAnswers = (file: CorpusFile, sheets: string[]): fc.Arbitrary<Workb
       sheets: fc.dictionary(fc.constantFrom(...sheets), layoutAnswers(file)),
       date: fc.constantFrom('2026-03-02', '2026-03-29'),
       repeatedHour: fc.constantFrom('first' as const, 'second' as const),
-      lots: fc.constantFrom({ 'L-0124': 'L-0123' }, { '24117': 'A' }),
+      lots: fc.constantFrom<Record<string, string>>({ 'L-0124': 'L-0123' }, { '24117': 'A' }),
     },
     { requiredKeys: [] },
   );
