@@ -1,6 +1,6 @@
 #!/bin/sh
-# tools/workbooks/make.sh              makes the corpus of workbooks into a temporary folder and compares it with the committed one
-# tools/workbooks/make.sh --make       writes it into fixtures/workbooks/corpus instead
+# npm run corpus             makes the corpus of workbooks into a temporary folder and compares it with the committed one
+# npm run corpus -- --make   writes it into fixtures/workbooks/corpus instead
 #
 # The workbooks are written by openpyxl, XlsxWriter, LibreOffice and R (Debian: python3-openpyxl, python3-xlsxwriter,
 # libreoffice-calc-nogui, python3-uno, r-base-core), so that none is written by the reader's own makers. Other versions of

@@ -4,7 +4,7 @@ import sys
 
 HEAD = """# Where these workbooks come from
 
-Made by `tools/workbooks/make.sh --make`; all plants, lots, people and readings are invented (Marrowby Works and a sister plant).
+Made by `npm run corpus -- --make` (`tools/workbooks/`); all plants, lots, people and readings are invented (Marrowby Works and a sister plant).
 Beside each file stands what it must yield, written by the same script from the numbers that it put in; no reader was asked.
 Where a plant's person would have to answer something first, `questions` are those that must be asked and `answers` what is answered.
 Python {python}. Times and authors inside the packages are set to one moment, so that a second run gives the same bytes;
