@@ -79,6 +79,31 @@ describe('links that are mailed', () => {
     await app.database('people').where({ id: plant.people.lead.id }).update({ disabled_at: null });
   });
 
+  it('reach who has no role at any plant, once and for an hour, and stand on no plant’s page of mails', async () => {
+    const { lead } = plant.people;
+    const roles = await app.database('memberships').where({ person_id: lead.id });
+    await app.database('memberships').where({ person_id: lead.id }).delete();
+    const fresh = async () => {
+      await forget('lead@marrowby.example').expect(202).expect('');
+      const mail = (await mails()).at(-1)!;
+      return { mail, token: /\/password\/([\w-]{43})/.exec(mail.plain_text)?.[1] as string };
+    };
+    const { mail, token } = await fresh();
+    expect(mail).toMatchObject({ recipient: 'lead@marrowby.example', plant_id: null });
+    expect(mail.plain_text).toMatch(/until 11 Mar 2026, 13:00 UTC\./);
+    const admin = await signIn(app, 'admin@marrowby.example');
+    const listed = await app.http.get(`/api/plants/${plant.id}/mails?kind=password-reset`).set(admin).expect(200);
+    expect(listed.body.items.map(({ id }: { id: number }) => id)).not.toContain(mail.id);
+    expectProblem(await app.http.get(`/api/mails/${mail.id}`).set(admin), 404, 'not-found');
+    expectProblem(await app.http.post(`/api/mails/${mail.id}/send-again`).set(admin), 404, 'not-found');
+    await use(token).expect(200);
+    expectProblem(await use(token), 410, 'link-used');
+    const later = await fresh();
+    app.clock.advance(HOUR);
+    expectProblem(await look(later.token), 410, 'link-expired');
+    await app.database('memberships').insert(roles);
+  });
+
   it('are asked for three times, then only after a wait, by mailbox and whether or not it is anybody’s', async () => {
     for (const email of ['manager@marrowby.example', 'nobody@marrowby.example']) {
       for (let count = 0; count < 3; count++) await forget(email).expect(202);

@@ -62,10 +62,10 @@ export interface WholeMail extends MailRow {
   html: string;
 }
 
+/** A mail of a plant; one of no plant is nobody's to read. */
 export function findMail(db: Queryable, id: number): Promise<WholeMail | undefined> {
-  return findRow<WholeMail>(db, `select ${COLUMNS}, o.plain_text as text, o.html from outbox o where o.id = :id`, {
-    id,
-  });
+  const sql = `select ${COLUMNS}, o.plain_text as text, o.html from outbox o where o.id = :id and o.plant_id is not null`;
+  return findRow<WholeMail>(db, sql, { id });
 }
 
 export interface MailAttachmentRow {

@@ -35,12 +35,12 @@ export function listOutboxAttachments(db: Queryable, outboxId: number): Promise<
 
 /**
  * Writes mails in the transaction of the event that they tell of. The same event, recipient and kind is one mail. Returns the new ids.
- * What goes with them goes with each.
+ * What goes with them goes with each. Without a plant they stand on no plant's page of mails.
  * The Message-ID is made here, once: two installations number their events alike, but none may pass for the other's.
  */
 export async function insertMails(
   tx: Transaction,
-  plantId: number,
+  plantId: number | null,
   mails: OutboxMail[],
   at: Date,
   attachments: OutboxAttachment[] = [],

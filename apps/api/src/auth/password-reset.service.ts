@@ -26,19 +26,18 @@ export class PasswordResetService {
   }
 
   /**
-   * Nothing for nobody, for who is disabled, for who has not accepted an invitation (who invited can send it again), and for who has no role
-   * at any plant.
+   * Nothing for nobody, for who is disabled, and for who has not accepted an invitation (who invited can send it again). Who has no role
+   * at any plant, such as the first administrator before the first plant, reads the time in UTC.
    */
   private async write(email: string, address: string): Promise<number[]> {
     const person = await findPersonForSignIn(this.database, email);
     if (!person || person.passwordHash === null) return [];
-    const [plant] = await listMemberships(this.database, person.id);
-    if (plant === undefined) return [];
+    const plant = (await listMemberships(this.database, person.id)).at(0);
     const at = this.clock.now();
     return this.database.transaction(async (tx) => {
       const { publicUrl } = this.config;
       const link = await issueLink(tx, { personId: person.id, purpose: 'password_reset', at, publicUrl });
-      const until = zonedText(link.expiresAt, plant.timeZone);
+      const until = plant ? zonedText(link.expiresAt, plant.timeZone) : `${zonedText(link.expiresAt, 'UTC')} UTC`;
       const mail = passwordResetMail({ name: person.name, url: link.url, until });
       await insertAccountEntry(tx, person.id, {
         at,
@@ -48,7 +47,8 @@ export class PasswordResetService {
         address,
       });
       const event = `password-reset-${link.id}`;
-      return insertMails(tx, plant.plantId, [{ event, kind: 'password-reset', recipient: person.email, ...mail }], at);
+      const mails = [{ event, kind: 'password-reset', recipient: person.email, ...mail }];
+      return insertMails(tx, plant?.plantId ?? null, mails, at);
     });
   }
 }
