@@ -1,8 +1,5 @@
 import type { BrowserContext } from 'playwright-core';
 
-/** Before anybody is signed in, the refresh cookie is asked for and missing. */
-const NOBODY_YET = 'POST /api/auth/refresh 401';
-
 /**
  * Notes what went wrong in a browser without a page saying so: script errors, console errors and warnings, requests that failed or were
  * answered with 4xx or 5xx ("POST /api/auth/sign-in 401"). Requests that a page gives up as it is left are none.
@@ -19,8 +16,7 @@ export function watchTroubles(context: BrowserContext, troubles: string[]): void
   });
   context.on('response', (response) => {
     if (response.status() < 400) return;
-    const trouble = `${response.request().method()} ${pathOf(response.url())} ${response.status()}`;
-    if (trouble !== NOBODY_YET) troubles.push(trouble);
+    troubles.push(`${response.request().method()} ${pathOf(response.url())} ${response.status()}`);
   });
 }
 

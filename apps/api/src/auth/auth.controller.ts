@@ -36,8 +36,12 @@ export class AuthController {
     @Req() request: Request,
     @Ip() address: string,
     @Res({ passthrough: true }) response: Response,
-  ): Promise<SignInAnswer> {
-    return this.answer(response, await this.auth.refresh(tokenOf(request), address));
+  ): Promise<SignInAnswer | undefined> {
+    const token = tokenOf(request);
+    if (token !== undefined) return this.answer(response, await this.auth.refresh(token, address));
+    // Nobody has signed in here, which is no failure; a cookie that brings nothing is one.
+    response.status(204);
+    return undefined;
   }
 
   @Post('sign-out')

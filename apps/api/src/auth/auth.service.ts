@@ -46,7 +46,7 @@ export class AuthService {
     return { accessToken: await this.accessToken(person.id, family), refreshToken: token };
   }
 
-  async refresh(token: string | undefined, address: string): Promise<Tokens> {
+  async refresh(token: string, address: string): Promise<Tokens> {
     const { person, family, token: refreshToken } = await this.refreshTokens.rotate(token, address);
     return { accessToken: await this.accessToken(person.id, family), refreshToken };
   }

@@ -46,9 +46,8 @@ export class RefreshTokens {
     return { token: await this.insertToken(tx, personId, family), family };
   }
 
-  async rotate(token: string | undefined, address: string): Promise<RefreshedToken> {
-    const refreshed =
-      token === undefined ? undefined : await this.database.transaction((tx) => this.exchange(tx, token, address));
+  async rotate(token: string, address: string): Promise<RefreshedToken> {
+    const refreshed = await this.database.transaction((tx) => this.exchange(tx, token, address));
     if (!refreshed) throw new DomainError('unauthenticated', 'session-ended', 'The session has ended. Sign in again.');
     return refreshed;
   }

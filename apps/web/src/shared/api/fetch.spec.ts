@@ -1,6 +1,6 @@
 import { apiGet, apiSend, fileNameOf } from './client';
 import { ApiProblem } from './problem';
-import { keepToken, onSessionEnd } from './token';
+import { currentToken, keepToken, onSessionEnd, refreshToken } from './token';
 
 type Answer = { status: number; body?: unknown };
 
@@ -49,6 +49,13 @@ test('a renewal that is turned down ends the session and tells it', async () => 
   await expect(apiGet('/lots/1')).rejects.toMatchObject({ status: 401, code: 'not-signed-in' });
   expect(ended).toHaveBeenCalledTimes(1);
   stop();
+});
+
+test('a browser that never had a session is told so without a failure', async () => {
+  serve({ '/api/auth/refresh': [{ status: 204 }] });
+  keepToken(null);
+  await expect(refreshToken()).resolves.toBe(false);
+  expect(currentToken()).toBeNull();
 });
 
 test('a wrong password at sign-in is not answered by a renewal', async () => {

@@ -3,6 +3,8 @@ import type { SignInAnswer } from '@app/contracts';
 /** The access token lives in memory only; the refresh cookie, which no script can read, brings a new one. */
 let accessToken: string | null = null;
 let refreshing: Promise<boolean> | null = null;
+/** The answer where the browser has no refresh cookie. */
+const NOBODY_SIGNED_IN = 204;
 const listeners = new Set<() => void>();
 
 export const currentToken = () => accessToken;
@@ -39,7 +41,7 @@ async function oneTabAtATime<T>(work: () => Promise<T>): Promise<T> {
 async function requestToken(): Promise<boolean> {
   const response = await fetch('/api/auth/refresh', { method: 'POST', credentials: 'same-origin' });
   if (response.status >= 500 || response.status === 429) throw new Error(`refresh answered ${response.status}`);
-  if (!response.ok) {
+  if (!response.ok || response.status === NOBODY_SIGNED_IN) {
     accessToken = null;
     return false;
   }
