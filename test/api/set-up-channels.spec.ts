@@ -105,6 +105,8 @@ describe('the channels of a plant', () => {
     expect(await waiting()).toEqual(['approve']);
     await patch(`channels/${id}`, { name: 'Film thickness', isRetired: true }).expect(200);
     expect(await waiting()).toEqual([]);
+    const ofLine = await app.http.get(`/api/lines/${plant.lines[1].id}/channels`).set(manager).expect(200);
+    expect(ofLine.body.items).toMatchObject([{ id, retiredSince: app.clock.now().toISOString() }]);
     expect((await getLineContext(app.database, plant.lines[1].id)).channels).toEqual([]);
     expect((await list()).map(({ name, isRetired }) => [name, isRetired])).toEqual([
       ['Coat weight', false],

@@ -19,5 +19,6 @@ export function toChannelView(row: ChannelRow): ChannelView {
         : { id: row.planId, revision: row.planRevision!, since: row.planApprovedAt!.toISOString() },
     planPending:
       row.pendingId === null ? null : { id: row.pendingId, revision: row.pendingRevision!, state: row.pendingState! },
+    retiredSince: row.retiredAt && row.retiredAt.toISOString(),
   };
 }

@@ -22,6 +22,8 @@ export interface ChannelView extends Named {
   planInForce: { id: number; revision: number; since: Instant } | null;
   /** A later revision that is a draft or proposed, if any. */
   planPending: { id: number; revision: number; state: PlanState } | null;
+  /** Since when new workbooks no longer bring readings to it; its record stays. */
+  retiredSince: Instant | null;
 }
 
 export interface StripLot {

@@ -5,9 +5,14 @@ import { When } from '../../../shared/ui/when';
 
 /** What explains the panes: the plan in force, the caution, the words. */
 export function RecordMargin({ channel }: { channel: ChannelView }) {
-  const { planInForce, planPending, gauge } = channel;
+  const { planInForce, planPending, gauge, retiredSince } = channel;
   return (
     <>
+      {retiredSince !== null && (
+        <p>
+          Retired since <When at={retiredSince} form="date" />: no new readings are taken. What was recorded stays.
+        </p>
+      )}
       <div>
         <h3>Plan</h3>
         {planInForce === null ? (

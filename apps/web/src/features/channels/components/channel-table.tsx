@@ -26,11 +26,16 @@ export function ChannelTable({ channels }: { channels: ChannelView[] }) {
 }
 
 function ChannelRow({ channel }: { channel: ChannelView }) {
-  const { characteristic, gauge, planInForce, planPending } = channel;
+  const { characteristic, gauge, planInForce, planPending, retiredSince } = channel;
   return (
     <tr>
       <td className="folds__first">
         <Link to={urls.channel(channel.id)}>{channel.name}</Link> <span className="soft">{characteristic.unit}</span>
+        {retiredSince !== null && (
+          <span className="soft">
+            , retired since <When at={retiredSince} form="date" />
+          </span>
+        )}
       </td>
       <td data-label="Gauge">
         {gauge === null ? <span className="soft">no gauge now</span> : `${gauge.assetNumber}, ${gauge.kind}`}
