@@ -118,15 +118,26 @@ describe('the long layout', () => {
       product: 'SEP-16',
     });
   });
-  it('refuses the rows whose unit column differs from the channel’s', async () => {
+  it('converts the rows whose unit column names another unit of the quantity, and refuses those of another', async () => {
     const result = await readRows([
       [...HEADER, 'Unit'],
       [at('6:00'), 'A', 'SEP-12', 'Web thickness', 16, 'um'],
       [at('6:01'), 'A', 'SEP-12', 'Web thickness', 0.6, 'mil'],
+      [at('6:02'), 'A', 'SEP-12', 'Web thickness', 16, 'g'],
+      [at('6:03'), 'A', 'SEP-12', 'Web thickness', 16, 'scale marks'],
     ]);
-    expect(values(result.readings)).toEqual([[12, 16]]);
-    expect(problemList(result)).toEqual(['row_not_used unit-differs E3']);
-    expect(result.report.problems[0].detail).toContain('is in mil, but the channel "Web thickness" is in µm');
+    expect(values(result.readings)).toEqual([
+      [12, 16],
+      [12, 15.24],
+    ]);
+    expect(problemList(result)).toEqual([
+      'notice unit-converted E',
+      'row_not_used unit-differs E4',
+      'row_not_used unit-differs E5',
+    ]);
+    expect(result.report.problems[1].detail).toContain(
+      'is in g, but the channel "Web thickness" is in µm, a unit of another quantity',
+    );
   });
 });
 
@@ -185,7 +196,7 @@ describe('a messy workbook', () => {
   it('is read as far as it goes, and every row and cell left out is named', async () => {
     const result = await fixture('messy.xlsx');
     // Counted by hand in fixtures/workbooks/make-hostile.mjs.
-    expect(result.report).toMatchObject({ rowsRead: 17, rowsNotUsed: 10, readingsParsed: 12, isBlocked: false });
+    expect(result.report).toMatchObject({ rowsRead: 17, rowsNotUsed: 10, readingsParsed: 12, isBlocked: true });
     expect(problemList(result)).toEqual([
       'notice column-not-used G3',
       'notice number-stored-as-text F5',
@@ -206,6 +217,8 @@ describe('a messy workbook', () => {
       'row_not_used ambiguous-date A17',
       'row_not_used repeated-header 18',
       'row_not_used summary-row 21',
+      'blocking decimal-sign E6',
+      'blocking code-or-value E10',
       'notice hidden-rows-read',
       'notice hidden-sheet-read',
       'notice no-header',
@@ -231,7 +244,7 @@ describe('a messy workbook', () => {
       at: Date.parse('2026-01-05T07:00:00+01:00'),
     });
     expect(result.report.problems[2].detail).toBe(
-      'Sheet "Shift", cell E6 holds the text "10,125", which could be read in two ways; store it as a number.',
+      'Sheet "Shift", cell E6 holds the text "10,125", which could be read in two ways; say which sign is the decimal sign.',
     );
   });
 });

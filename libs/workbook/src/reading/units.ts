@@ -10,7 +10,7 @@ const Exact = Decimal.clone({ precision: DIGITS });
 /** How values in one unit become values in another of the same quantity. */
 export interface Conversion {
   /** value · factor + offset, computed in decimals and rounded once to the nearest double. */
-  convert(value: number): number;
+  convert: (value: number) => number;
   /** "× 1000", "÷ 25.4", or an example where the zeros differ. */
   said: string;
 }

@@ -1,51 +1,13 @@
 import { GENERAL } from '../container/formats';
 import type { Cell } from '../container/sheet-rows';
-import { parseNumberText, parseValue } from './values';
+import { parseValue, Tokens, type ParsedValue } from './values';
 
-const habits = () => ({ sawDecimalComma: false });
 const text = (value: string): Cell => ({ kind: 'text', number: NaN, text: value, format: GENERAL });
 const number = (value: number, format = GENERAL): Cell => ({ kind: 'number', number: value, text: '', format });
-
 const special = (kind: Cell['kind'], text: string): Cell => ({ kind, number: NaN, text, format: GENERAL });
-
-describe('parseNumberText', () => {
-  it.each([
-    ['10125', 10125],
-    ['10.125', 10.125],
-    ['12,5', 12.5],
-    ['0,125', 0.125],
-    ['1234,567', 1234.567],
-    ['1.234,56', 1234.56],
-    ['1,234.56', 1234.56],
-    ['1,234,567', 1234567],
-    ['1.234.567,8', 1234567.8],
-    ['1 234,5', 1234.5],
-    ['1\u202f234\u00a0567', 1234567],
-    ["1'234.5", 1234.5],
-    ['-0.5', -0.5],
-    ['−3,25', -3.25],
-    ['+7', 7],
-    ['1E-03', 0.001],
-    ['.5', 0.5],
-  ])('reads %p as %p', (written, expected) => {
-    expect(parseNumberText(written, habits())).toBe(expected);
-  });
-  it.each(['10,125', '1,000', '999,999', '-10,125'])('finds %p ambiguous', (written) => {
-    expect(parseNumberText(written, habits())).toBe('ambiguous');
-  });
-  it('finds a point before three digits ambiguous once the column has shown decimal commas', () => {
-    const column = habits();
-    expect(parseNumberText('9,8', column)).toBe(9.8);
-    expect(parseNumberText('10.125', column)).toBe('ambiguous');
-    expect(parseNumberText('10.12', column)).toBe(10.12);
-  });
-  it.each(['', 'abc', '1,23,456', '1.2.3', '1,234.5.6', '12 34', '--5', '1e999'])(
-    'finds no number in %p',
-    (written) => {
-      expect(parseNumberText(written, habits())).toBeNull();
-    },
-  );
-});
+const parse = (cell: Cell | undefined, missing: string[] = []): ParsedValue =>
+  parseValue(cell, {}, new Tokens(missing));
+const plain = { kind: 'value', unit: null, isPercent: false, isText: false, uncertainty: null };
 
 describe('parseValue', () => {
   it.each([
@@ -57,55 +19,89 @@ describe('parseValue', () => {
     text('N/A'),
     text('k.A.'),
     text('—'),
+    text('Nicht gemessen'),
     text('\u00a0'),
   ])('finds %p missing and not zero', (cell) => {
-    expect(parseValue(cell, 'µm', habits())).toEqual({ kind: 'missing' });
+    expect(parse(cell)).toEqual({ kind: 'missing' });
   });
   it.each([
     ['<0.05', 'below'],
     ['< 0,05', 'below'],
-    ['≤0.05 µm', 'below'],
+    ['<=0.05', 'below'],
+    ['<1E-3', 'below'],
     ['<LOD', 'below'],
+    ['< LOQ', 'below'],
+    ['n.n.', 'below'],
     ['UNDER', 'below'],
+    ['-OL', 'below'],
+    ['LO', 'below'],
     ['>MAX', 'above'],
+    ['> LOD', 'above'],
     ['OL', 'above'],
     ['O.L.', 'above'],
+    ['+OL', 'above'],
     ['over', 'above'],
+    ['Over-range', 'above'],
+    ['OVLD', 'above'],
+    ['HI', 'above'],
     ['> 250', 'above'],
+    ['1.#INF', 'above'],
+    ['>>>', 'above'],
   ])('reads %p as censored %s', (written, censoring) => {
-    expect(parseValue(text(written), 'μm', habits())).toEqual({ kind: 'censored', censoring });
+    expect(parse(text(written))).toEqual({ kind: 'censored', censoring, unit: null });
+  });
+  it('keeps the unit of a censored reading', () => {
+    expect(parse(text('≤0.05 µm'))).toEqual({ kind: 'censored', censoring: 'below', unit: 'µm' });
   });
   it('reads zero as zero', () => {
-    expect(parseValue(number(0), 'µm', habits())).toEqual({ kind: 'value', value: 0, note: null });
-  });
-  it('reads a number with the channel’s own unit and says that it was text', () => {
-    expect(parseValue(text('12,5 g/m2'), 'g/m²', habits())).toEqual({
-      kind: 'value',
-      value: 12.5,
-      note: 'number-stored-as-text',
-    });
-  });
-  it('reads a percentage for a channel in %, and refuses it for another', () => {
-    const percent = { ...GENERAL, isPercent: true };
-    expect(parseValue(number(0.057, percent), '%', habits())).toMatchObject({ value: 5.7, note: 'percent-cell' });
-    expect(parseValue(number(0.057, percent), 'µm', habits())).toMatchObject({ kind: 'bad', code: 'percent-cell' });
+    expect(parse(number(0))).toEqual({ ...plain, value: 0 });
+    expect(parse(text('0,0'))).toEqual({ ...plain, value: 0, isText: true });
   });
   it.each([
-    [text('12 mil'), 'unit-differs'],
-    [text('<5 mil'), 'unit-differs'],
-    [text('10,125'), 'ambiguous-number'],
+    ['12,5 g/m2', 12.5, 'g/m2', null],
+    ['5.7 %', 5.7, '%', null],
+    ['1.234,5mPa·s', 1234.5, 'mPa·s', null],
+    ['12.3 ± 0.2', 12.3, null, '0.2'],
+    ['12,3 +/- 0,2 µm', 12.3, 'µm', '0,2'],
+    ['1E-03', 0.001, null, null],
+    ["'12.5", 12.5, null, null],
+    ['12 mil', 12, 'mil', null],
+    ['3 "', 3, '"', null],
+  ])('reads %p as %p in %p', (written, value, unit, uncertainty) => {
+    expect(parse(text(written))).toEqual({ ...plain, isText: true, value, unit, uncertainty });
+  });
+  it('tells a number formatted as a percentage', () => {
+    expect(parse(number(0.057, { ...GENERAL, isPercent: true }))).toEqual({ ...plain, value: 0.057, isPercent: true });
+  });
+  it('leaves to the column what it cannot tell by the cell alone', () => {
+    expect(parse(text('10,125'))).toEqual({ kind: 'ambiguous', text: '10,125' });
+    expect(parse(text('10,125 µm'))).toEqual({ kind: 'ambiguous', text: '10,125' });
+  });
+  it.each([
     [text('OK'), 'not-a-number'],
     [text('ERR'), 'not-a-number'],
-    [text('12 ± 3'), 'not-a-number'],
+    [text('± 3'), 'not-a-number'],
+    [text('2-3'), 'not-a-number'],
+    [text('12 34'), 'not-a-number'],
+    [text('12.5 '.repeat(20)), 'not-a-number'],
     [number(46027, { ...GENERAL, isDate: true }), 'value-is-a-date'],
     [number(Infinity), 'not-a-number'],
     [special('error', '#DIV/0!'), 'error-cell'],
     [special('formula-without-result', ''), 'formula-without-result'],
     [special('boolean', 'TRUE'), 'not-a-number'],
   ])('refuses %p with %p', (cell, code) => {
-    expect(parseValue(cell, 'µm', habits())).toMatchObject({ kind: 'bad', code });
+    expect(parse(cell)).toMatchObject({ kind: 'bad', code });
   });
-  it('questions a number that instruments write as a code', () => {
-    expect(parseValue(number(-999), 'µm', habits())).toMatchObject({ value: -999, note: 'looks-like-a-code' });
+  it.each<[Cell, string]>([
+    [number(9999), '9999'],
+    [number(-999), '-999'],
+    [text('9999'), '9999'],
+    [text('9.999'), '9,999'],
+    [number(99.99), '99,99'],
+    [text('VOID'), 'void'],
+    [number(0), '0'],
+  ])('finds %p missing where %p was said to stand for it', (cell, token) => {
+    expect(parse(cell, [token]).kind).toBe('missing');
+    expect(parse(cell, ['77']).kind).toBe(cell.text === 'VOID' ? 'bad' : 'value');
   });
 });
