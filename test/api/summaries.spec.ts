@@ -2,6 +2,7 @@ import { getQueueToken } from '@nestjs/bull';
 import type { Queue } from 'bull';
 import { Workbook } from 'exceljs';
 import {
+  DomainError,
   DUE_SUMMARIES_EVERY_MS,
   DUE_SUMMARIES_JOB,
   type SummaryListView,
@@ -9,6 +10,7 @@ import {
   WORK_QUEUE,
 } from '@app/contracts';
 import { insertManyWeeks } from '../../libs/data/src/testing/summary-week-rows';
+import { WeeklySummaryHandler } from '../../apps/worker/src/summary/weekly-summary.handler';
 import { WorkerModule } from '../../apps/worker/src/worker.module';
 import { startTestApp, type TestApp } from '../support/app';
 import { expectProblem } from '../support/expect-problem';
@@ -49,8 +51,9 @@ describe('weekly summaries', () => {
   }
 
   it('are made anew on demand, and mailed when that is asked for', async () => {
-    expect(await list()).toEqual({ items: [], lastWeekStartsOn: WEEK, maySend: false });
+    expect(await list()).toEqual({ items: [], lastWeekStartsOn: WEEK, underWay: [], maySend: false });
     expect((await ask(as.manager, { weekStartsOn: WEEK }).expect(202)).body).toEqual({
+      jobId: expect.any(Number),
       weekStartsOn: WEEK,
       version: 1,
     });
@@ -124,6 +127,43 @@ describe('weekly summaries', () => {
     expectProblem(await ask(as.engineer, { weekStartsOn: WEEK }), 403, 'forbidden');
     expectProblem(await ask(as.stranger, { weekStartsOn: WEEK }), 404, 'not-found');
     expect((await app.http.post(path()).send({ weekStartsOn: WEEK })).status).toBe(401);
+  });
+
+  it('that cannot be made say so and why, until they are asked for again', async () => {
+    const underWay = async (state: string) => {
+      for (let tries = 0; tries < 200; tries++) {
+        const [first] = (await list()).underWay;
+        if (first?.state === state) return first;
+        await new Promise((resolve) => setTimeout(resolve, 50));
+      }
+      throw new Error(`no summary is ${state}`);
+    };
+    app.clock.advance(1_000);
+    let giveUp = () => {};
+    const handler = app.nest.get(WeeklySummaryHandler, { strict: false });
+    const run = jest.spyOn(handler, 'run').mockImplementation(
+      () =>
+        new Promise((_done, reject) => {
+          giveUp = () => reject(new DomainError('unprocessable', 'broken', 'A figure of the week is broken.'));
+        }),
+    );
+    const { body: asked } = await ask(as.manager, { weekStartsOn: WEEK }).expect(202);
+    const item = { jobId: asked.jobId, weekStartsOn: WEEK, since: app.clock.now().toISOString() };
+    expect(await underWay('being_made')).toEqual({ ...item, state: 'being_made', sentence: null });
+    while (run.mock.calls.length === 0) await new Promise((resolve) => setTimeout(resolve, 50));
+    giveUp();
+    expect(await underWay('failed')).toEqual({
+      ...item,
+      state: 'failed',
+      sentence: 'Ebbline gave up. A figure of the week is broken.',
+    });
+    expect((await list()).items[0].version).toBe(2);
+    run.mockRestore();
+    app.clock.advance(1_000);
+    const { body: again } = await ask(as.manager, { weekStartsOn: WEEK }).expect(202);
+    expect(again).toMatchObject({ version: 3 });
+    await made(3);
+    expect((await list()).underWay).toEqual([]);
   });
 
   it('are made by the beat of a repeated job once a Monday has come', async () => {

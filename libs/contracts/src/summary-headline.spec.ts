@@ -61,6 +61,15 @@ describe('the first sentence of a week', () => {
     expect(plain({ gauges: [gauge({ share: 1 })] })).toContain('No lot was held');
   });
 
+  it('tells of a slow movement that will soon be there at its pace', () => {
+    const fast = gauge({ share: 0.41, lastWeekShare: 0.02, isGettingWorse: true });
+    expect(
+      plain({ ...notScored, gauges: [gauge({ share: 0.45, lastWeekShare: 0.35, isGettingWorse: true }), fast] }),
+    ).toBe(
+      'No held lot waits, but the slow movement of Coat weight on Coater 2 has used 41 % of its allowance, 2 % the week before; at that pace it is used up within 2 weeks.',
+    );
+  });
+
   it('tells of lots without a score when no movement is the reason', () => {
     expect(plain(notScored)).toBe(
       'No held lot waits, but 3 of 84 lots went without a score on a channel, most on Coat weight of Coater 2: the baseline is still learning.',

@@ -3,28 +3,42 @@ import {
   ageInWords,
   lotsInWords,
   measureInWords,
+  paceInWords,
   percentInWords,
   quantitiesInWords,
   valueInWords,
+  weeksToAllowance,
 } from './summary-wording';
 
 type Facts = Pick<SummaryContent, 'reminderHours' | 'total' | 'openHolds' | 'gauges' | 'notScored'>;
 
 /**
  * The one thing that the director must know of a week, a sentence. What comes first wins: the oldest lot on hold beyond the director's
- * hours and not decided since; what is at risk on hold; a slow movement beyond its allowance; lots without a score; that all is decided.
+ * hours and not decided since; what is at risk on hold; a slow movement beyond its allowance, or soon there at its pace; lots without a score;
+ * that all is decided.
  */
 export function summaryHeadline(facts: Facts): string {
   const waiting = facts.openHolds.holds.filter((hold) => hold.decidedSince === null);
   if (waiting.length > 0) return holdsHeadline(facts, waiting);
   const beyond = facts.gauges.filter(isBeyondAllowance);
   if (beyond.length > 0) return allowanceHeadline(beyond);
+  const [soon] = facts.gauges.filter(isSoonBeyondAllowance);
+  if (soon !== undefined)
+    return `No held lot waits, but the slow movement of ${soon.channel.name} on ${soon.line.name} has used ${paceInWords({ ...soon, share: soon.share ?? 0 })}.`;
   if (facts.total.week.notFullyScored > 0) return notScoredHeadline(facts);
   return quietHeadline(facts);
 }
 
 /** Whether lots of the channel go without a score because of its slow movement. */
 export const isBeyondAllowance = ({ share }: SummaryGauge): boolean => share !== null && share > 1;
+
+const SOON_WEEKS = 3;
+
+/** Whether the slow movement grew by a tenth of its allowance or more, and at that pace uses it up within three weeks. */
+export function isSoonBeyondAllowance(gauge: SummaryGauge): boolean {
+  const weeks = weeksToAllowance(gauge);
+  return gauge.isGettingWorse && weeks !== null && weeks <= SOON_WEEKS;
+}
 
 function holdsHeadline(facts: Facts, waiting: SummaryOpenHold[]): string {
   const [oldest] = waiting;

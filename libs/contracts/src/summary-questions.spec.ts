@@ -30,6 +30,23 @@ describe('whom to ask what', () => {
     ]);
   });
 
+  it('is one question a person, however many lots wait for them', () => {
+    const other = openHold({
+      holdId: 8,
+      lot: { id: 71, number: '73101' },
+      line: { id: 3, name: 'Slurry 3' },
+      ageHours: 30,
+    });
+    const holds = [openHold(), other, openHold({ ageHours: 20 }), openHold({ ageHours: 9 })];
+    expect(asked({ openHolds: { count: 4, holds } })).toEqual([
+      [
+        'the quality manager, Adaeze Thornbury',
+        'What keeps 4 lots from being decided: 24118 of Coater 2 (2 d 4 h), 73101 of Slurry 3 (1 d 6 h), 24118 of Coater 2 (20 h) and 1 more?',
+        '/holds/7',
+      ],
+    ]);
+  });
+
   it('is the lead of the line about lots that nobody confirmed to stand aside', () => {
     const holds = [openHold({ isSetAside: false, ageHours: 5 }), openHold({ isSetAside: false, ageHours: 4 })];
     expect(asked({ openHolds: { count: 2, holds } })).toEqual([
@@ -52,7 +69,10 @@ describe('whom to ask what', () => {
     ]);
     expect(at(0.55, 0.3, true)).toHaveLength(1);
     expect(at(0.55, 0.5)).toEqual([]);
-    expect(at(0.4, 0.1, true)).toEqual([]);
+    expect(at(0.4, 0.25, true)).toEqual([]);
+    expect(at(0.4, 0.1, true)).toEqual([
+      'Can gauge BG-204 be checked before it holds up lots? The slow movement of Coat weight on Coater 2 has used 40 % of its allowance, 10 % the week before; at that pace it is used up within 2 weeks.',
+    ]);
   });
 
   it('is a role alone where nobody has it', () => {

@@ -1,7 +1,7 @@
-import type { SummaryContent, SummaryQuestion } from './api/summaries';
+import type { SummaryContent, SummaryGauge, SummaryOpenHold, SummaryQuestion } from './api/summaries';
 import { ROLE_NAMES, type Role } from './roles';
-import { isBeyondAllowance } from './summary-headline';
-import { ageInWords, lotsInWords, percentInWords } from './summary-wording';
+import { isBeyondAllowance, isSoonBeyondAllowance } from './summary-headline';
+import { ageInWords, lotsInWords, paceInWords } from './summary-wording';
 
 /** Somebody of the plant who may be asked, with the lines that are theirs. */
 export interface Answerer {
@@ -38,15 +38,28 @@ function whomOf(people: Answerer[], role: Role, lineId: number): string {
 
 const waitingHolds = (facts: Facts) => facts.openHolds.holds.filter((hold) => hold.decidedSince === null);
 
+/** One question a person, who may have many lots before them. */
 function holdQuestions(facts: Facts, people: Answerer[]): SummaryQuestion[] {
-  return waitingHolds(facts)
-    .filter((hold) => hold.ageHours >= facts.reminderHours.manager)
-    .slice(0, MOST_HOLDS)
-    .map((hold) => ({
-      whom: whomOf(people, 'quality_manager', hold.line.id),
-      question: `What keeps lot ${hold.lot.number} of ${hold.line.name} from being decided? It had waited ${ageInWords(hold.ageHours)} at the week’s end.`,
-      path: `/holds/${hold.holdId}`,
-    }));
+  const old = waitingHolds(facts).filter((hold) => hold.ageHours >= facts.reminderHours.manager);
+  const byWhom = new Map<string, SummaryOpenHold[]>();
+  for (const hold of old) {
+    const whom = whomOf(people, 'quality_manager', hold.line.id);
+    byWhom.set(whom, [...(byWhom.get(whom) ?? []), hold]);
+  }
+  return [...byWhom].map(([whom, holds]) => ({
+    whom,
+    question: keptQuestion(holds),
+    path: `/holds/${holds[0].holdId}`,
+  }));
+}
+
+function keptQuestion([first, ...rest]: SummaryOpenHold[]): string {
+  if (rest.length === 0)
+    return `What keeps lot ${first.lot.number} of ${first.line.name} from being decided? It had waited ${ageInWords(first.ageHours)} at the week’s end.`;
+  const named = [first, ...rest].slice(0, MOST_HOLDS);
+  const lots = named.map((hold) => `${hold.lot.number} of ${hold.line.name} (${ageInWords(hold.ageHours)})`);
+  const more = rest.length + 1 - named.length;
+  return `What keeps ${rest.length + 1} lots from being decided: ${lots.join(', ')}${more === 0 ? '' : ` and ${more} more`}?`;
 }
 
 function setAsideQuestions(facts: Facts, people: Answerer[]): SummaryQuestion[] {
@@ -64,17 +77,19 @@ function setAsideQuestions(facts: Facts, people: Answerer[]): SummaryQuestion[] 
 
 function gaugeQuestions(facts: Facts, people: Answerer[]): SummaryQuestion[] {
   return facts.gauges.flatMap((gauge) => {
-    const { share, lastWeekShare, channel, line } = gauge;
-    if (share === null || !(share >= NEAR_ALLOWANCE || (gauge.isGettingWorse && share >= HALF))) return [];
+    const { share, channel, line } = gauge;
+    if (share === null || !isWorthAsking(gauge, share)) return [];
     const name = gauge.gaugeAssetNumber === null ? 'the gauge' : `gauge ${gauge.gaugeAssetNumber}`;
-    const before = lastWeekShare === null ? '' : `, ${percentInWords(lastWeekShare)} the week before`;
-    const state = `The slow movement of ${channel.name} on ${line.name} has used ${percentInWords(share)} of its allowance${before}`;
+    const state = `The slow movement of ${channel.name} on ${line.name} has used ${paceInWords({ ...gauge, share })}`;
     const question = isBeyondAllowance(gauge)
       ? `When will ${name} be checked? ${state}, and its lots are not scored.`
       : `Can ${name} be checked before it holds up lots? ${state}.`;
     return [{ whom: whomOf(people, 'technician', line.id), question, path: `/channels/${channel.id}` }];
   });
 }
+
+const isWorthAsking = (gauge: SummaryGauge, share: number) =>
+  share >= NEAR_ALLOWANCE || (gauge.isGettingWorse && share >= HALF) || isSoonBeyondAllowance(gauge);
 
 function notScoredQuestions(facts: Facts, people: Answerer[]): SummaryQuestion[] {
   return facts.notScored

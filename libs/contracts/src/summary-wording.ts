@@ -1,4 +1,4 @@
-import type { LocalDate, Measure } from './api/summaries';
+import type { LocalDate, Measure, SummaryGauge } from './api/summaries';
 import { formatNumber } from './format';
 
 const NARROW_SPACE = '\u202f';
@@ -49,6 +49,32 @@ export function ageSpanInWords({ fromHours, toHours }: { fromHours: number; toHo
 
 /** A share in whole per cent. */
 export const percentInWords = (share: number): string => `${formatNumber(share * 100, 0)}${NARROW_SPACE}%`;
+
+type Shares = Pick<SummaryGauge, 'share' | 'lastWeekShare'>;
+
+/**
+ * Weeks until an allowance is used up if its slow movement goes on as since the week before: (1 − now) / (now − before), by shares. Null
+ * when it did not grow, is used up already, or one of the shares is not known.
+ */
+export function weeksToAllowance({ share, lastWeekShare }: Shares): number | null {
+  if (share === null || lastWeekShare === null || !(share < 1) || !(share > lastWeekShare)) return null;
+  return (1 - share) / (share - lastWeekShare);
+}
+
+/** Further ahead nobody can see from two weeks. */
+const MOST_WEEKS_AHEAD = 8;
+
+/** "41 % of its allowance, 2 % the week before; at that pace it is used up within 2 weeks". */
+export function paceInWords(gauge: Shares & { share: number }): string {
+  const before = gauge.lastWeekShare === null ? '' : `, ${percentInWords(gauge.lastWeekShare)} the week before`;
+  const weeks = weeksToAllowance(gauge);
+  const left = weeks === null ? 0 : Math.max(1, Math.ceil(weeks));
+  const pace =
+    left === 0 || left > MOST_WEEKS_AHEAD
+      ? ''
+      : `; at that pace it is used up within ${left === 1 ? 'a week' : `${left} weeks`}`;
+  return `${percentInWords(gauge.share)} of its allowance${before}${pace}`;
+}
 
 const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'];
 

@@ -1,5 +1,7 @@
 import type { SummaryContent, SummaryListItem } from '@app/contracts';
 import { findRow, type Queryable, rows, type Transaction } from './database';
+import { findFirstReadingAt, type SummaryPlant } from './summary-facts';
+import { dueWeeks, type PlantWeek } from './summary-week';
 
 export interface SummaryRow {
   id: number;
@@ -42,14 +44,60 @@ export function listSummaryVersions(
   );
 }
 
-/** The newest week of the plant that has a summary. */
-export async function findNewestSummaryWeek(db: Queryable, plantId: number): Promise<string | null> {
-  const row = await findRow<{ startsOn: string | null }>(
+/** Mondays of the weeks that have a summary, oldest first. */
+export async function listSummaryWeeksTold(db: Queryable, plantId: number): Promise<string[]> {
+  const found = await rows<{ startsOn: string }>(
     db,
-    `select to_char(max(week_starts_on), 'YYYY-MM-DD') as "startsOn" from summaries where plant_id = :plantId`,
+    `select distinct to_char(week_starts_on, 'YYYY-MM-DD') as "startsOn" from summaries where plant_id = :plantId order by 1`,
     { plantId },
   );
-  return row?.startsOn ?? null;
+  return found.map((row) => row.startsOn);
+}
+
+/** A year of missed weeks is caught up. */
+const MOST_WEEKS = 53;
+
+/** The weeks of the plant that are due now, oldest first: the newest one, and those that were missed. */
+export async function listDueSummaryWeeks(
+  db: Queryable,
+  { id: plantId, timeZone }: Pick<SummaryPlant, 'id' | 'timeZone'>,
+  at: Date,
+): Promise<PlantWeek[]> {
+  const toldStartsOn = await listSummaryWeeksTold(db, plantId);
+  return dueWeeks(at, timeZone, { toldStartsOn, firstReadingAt: await findFirstReadingAt(db, plantId) }, MOST_WEEKS);
+}
+
+export interface SummaryUnderWayRow {
+  jobId: number;
+  weekStartsOn: string;
+  state: 'owed' | 'failed';
+  /** When it was asked for, or given up. */
+  since: Date;
+  attempts: number;
+  /** False: it was due, and is owed again by itself. */
+  isAsked: boolean;
+  /** Of one that was given up, a sentence. */
+  why: string | null;
+}
+
+/** Of each week the summary that is being made, or that was given up since the week's newest version. */
+export function listSummariesUnderWay(db: Queryable, plantId: number): Promise<SummaryUnderWayRow[]> {
+  return rows<SummaryUnderWayRow>(
+    db,
+    `with newest as (
+       select distinct on (subject ->> 'weekStartsOn') id, subject ->> 'weekStartsOn' as week, state, owed_since, ended_at, attempts,
+         subject ->> 'askedBy' is not null as is_asked
+       from owed_jobs where plant_id = :plantId and name = 'weekly-summary' order by subject ->> 'weekStartsOn', id desc
+     )
+     select n.id as "jobId", n.week as "weekStartsOn", n.state, coalesce(n.ended_at, n.owed_since) as since, n.attempts, n.is_asked as "isAsked",
+       (select e.after ->> 'why' from audit_entries e where e.plant_id = :plantId and e.action = 'fail-summary' and e.at = n.ended_at
+          and e.after ->> 'weekStartsOn' = n.week order by e.id desc limit 1) as why
+     from newest n
+     where n.state = 'owed' or n.state = 'failed' and not exists (
+       select 1 from summaries s where s.plant_id = :plantId and s.week_starts_on = cast(n.week as date) and s.made_at >= n.ended_at)
+     order by n.week desc`,
+    { plantId },
+  );
 }
 
 /** Mondays of the weeks whose summary was given up since: they are not owed again before a person asks, or a while has passed. */

@@ -45,7 +45,7 @@ export async function listSummaryChangedLots(
        l.quantity, l.quantity_unit as "quantityUnit", l.ends_at as "endsAt", x.channels, h.id as "holdId", h.state as "holdState",
        array(select distinct t.disposition from decision_parts t where t.hold_id = h.id order by 1) as dispositions
      from compared x join lots l on l.id = x.lot_id join lines n on n.id = l.line_id join products p on p.id = l.product_id
-     left join lateral (select id, state from holds where lot_id = l.id order by opened_at desc, id desc limit 1) h on true
+     left join lateral (select id, state from holds where lot_id = l.id and state <> 'withdrawn' order by opened_at desc, id desc limit 1) h on true
      where x.by_plan <> x.by_constant order by l.ends_at desc, l.id desc`,
     { plantId, ...weekBindings(weeks) },
   );

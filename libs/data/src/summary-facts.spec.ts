@@ -4,7 +4,7 @@ import { insertRow } from '../../../test/support/factories/insert';
 import { planParameters } from '../../../test/support/factories/plans';
 import { insertFit, insertVerdict } from '../../../test/support/factories/verdicts';
 import {
-  findNewestSummaryWeek,
+  listSummaryWeeksTold,
   findSummary,
   getSummaryVersion,
   insertSummary,
@@ -171,8 +171,8 @@ describe('what is told of a week', () => {
     const content = await told();
     const add = (weekStartsOn: string, version: number) =>
       db.transaction((tx) => insertSummary(tx, { plantId: plant.id, weekStartsOn, version, content, madeAt: WEEK.to }));
-    expect([await findNewestSummaryWeek(db, plant.id), await getSummaryVersion(db, plant.id, '2026-03-02')]).toEqual([
-      null,
+    expect([await listSummaryWeeksTold(db, plant.id), await getSummaryVersion(db, plant.id, '2026-03-02')]).toEqual([
+      [],
       0,
     ]);
     const first = await add('2026-03-02', 1);
@@ -192,8 +192,8 @@ describe('what is told of a week', () => {
       ['2026-02-23', 1],
     ]);
     expect((await listSummaryVersions(db, plant.id, '2026-03-02')).map(({ id }) => id)).toEqual([second, first]);
-    expect([await findNewestSummaryWeek(db, plant.id), await getSummaryVersion(db, plant.id, '2026-03-02')]).toEqual([
-      '2026-03-02',
+    expect([await listSummaryWeeksTold(db, plant.id), await getSummaryVersion(db, plant.id, '2026-03-02')]).toEqual([
+      ['2026-02-23', '2026-03-02'],
       2,
     ]);
     await expect(db('summaries').where({ id: first }).update({ version: 9 })).rejects.toThrow('append-only');

@@ -41,7 +41,7 @@ export function listSummaryFigures(
        union all select week, 'not_fully_scored', '', lot_id, null from of_week where lacks_score
        union all
        select distinct w.week, 'held', '', h.lot_id, cast(null as float8)
-       from weeks w join holds h on h.plant_id = :plantId and h.opened_at >= w.from_at and h.opened_at < w.to_at
+       from weeks w join holds h on h.plant_id = :plantId and h.opened_at >= w.from_at and h.opened_at < w.to_at and h.state <> 'withdrawn'
        union all
        select w.week, 'decided', t.disposition, h.lot_id, sum(t.quantity)
        from weeks w join decisions d on d.plant_id = :plantId and d.decided_at >= w.from_at and d.decided_at < w.to_at
@@ -49,7 +49,7 @@ export function listSummaryFigures(
        group by w.week, t.disposition, h.lot_id
        union all
        select w.week, 'open', cast(width_bucket(extract(epoch from w.to_at - h.opened_at) / 3600, cast(:ageLimits as numeric[])) as text), h.lot_id, null
-       from weeks w join holds h on h.plant_id = :plantId and h.opened_at < w.to_at
+       from weeks w join holds h on h.plant_id = :plantId and h.opened_at < w.to_at and h.state <> 'withdrawn'
        left join decision_holds dh on dh.hold_id = h.id left join decisions d on d.id = dh.decision_id
        where d.id is null or d.decided_at >= w.to_at
      )

@@ -37,7 +37,7 @@ export async function listSummaryOpenHolds(
      from holds h join plants a on a.id = h.plant_id join lots l on l.id = h.lot_id join lines n on n.id = h.line_id
      join products p on p.id = l.product_id left join set_asides s on s.hold_id = h.id
      left join decision_holds dh on dh.hold_id = h.id left join decisions d on d.id = dh.decision_id
-     where h.plant_id = :plantId and h.opened_at < :to and (d.id is null or d.decided_at >= :to)
+     where h.plant_id = :plantId and h.opened_at < :to and h.state <> 'withdrawn' and (d.id is null or d.decided_at >= :to)
      order by h.opened_at, h.id limit :most`,
     { plantId, to: week.to, most: MOST_LISTED },
   );

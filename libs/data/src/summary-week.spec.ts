@@ -44,34 +44,42 @@ describe('a week of a plant', () => {
 
 describe('the weeks whose summary is due', () => {
   const zone = 'Europe/London';
-  const due = (at: string, newestToldStartsOn: string | null, firstReadingAt: string | null = '2026-01-07T10:00:00Z') =>
+  const due = (at: string, toldStartsOn: string[], firstReadingAt: string | null = '2026-01-07T10:00:00Z', most = 53) =>
     dueWeeks(
       new Date(at),
       zone,
-      { newestToldStartsOn, firstReadingAt: firstReadingAt === null ? null : new Date(firstReadingAt) },
-      4,
+      { toldStartsOn, firstReadingAt: firstReadingAt === null ? null : new Date(firstReadingAt) },
+      most,
     ).map((week) => week.startsOn);
 
   it('are the one that ended, from Monday 06:00 on', () => {
-    expect(due('2026-03-30T04:59:59Z', '2026-03-16')).toEqual([]);
-    expect(due('2026-03-30T05:00:00Z', '2026-03-16')).toEqual(['2026-03-23']);
-    expect(due('2026-04-05T22:00:00Z', '2026-03-23')).toEqual([]);
+    expect(due('2026-03-30T04:59:59Z', ['2026-03-16'])).toEqual([]);
+    expect(due('2026-03-30T05:00:00Z', ['2026-03-16'])).toEqual(['2026-03-23']);
+    expect(due('2026-04-05T22:00:00Z', ['2026-03-23'])).toEqual([]);
   });
 
-  it('are those missed while nobody told them, at most four', () => {
-    expect(due('2026-03-30T05:00:00Z', '2026-03-02')).toEqual(['2026-03-09', '2026-03-16', '2026-03-23']);
-    expect(due('2026-03-30T05:00:00Z', '2026-01-05')).toEqual(['2026-03-02', '2026-03-09', '2026-03-16', '2026-03-23']);
+  it('are with it all that were missed since the first that was told', () => {
+    const missed = ['2026-02-09', '2026-02-16', '2026-02-23', '2026-03-02', '2026-03-09', '2026-03-16', '2026-03-23'];
+    expect(due('2026-03-30T05:00:00Z', ['2026-02-02'])).toEqual(missed);
+    expect(due('2026-03-30T05:00:00Z', ['2026-02-23', '2026-02-02', '2026-03-16'])).toEqual(
+      missed.filter((week) => week !== '2026-02-23' && week !== '2026-03-16'),
+    );
+    expect(due('2026-03-30T05:00:00Z', ['2026-02-02'], undefined, 2)).toEqual(missed.slice(-2));
+  });
+
+  it('are none while the newest is told, whatever was missed before', () => {
+    expect(due('2026-03-30T05:00:00Z', ['2026-02-02', '2026-03-23'])).toEqual([]);
   });
 
   it('are only the last one where none was ever told', () => {
-    expect(due('2026-03-30T05:00:00Z', null)).toEqual(['2026-03-23']);
-    expect(due('2026-03-30T04:00:00Z', null)).toEqual(['2026-03-16']);
+    expect(due('2026-03-30T05:00:00Z', [])).toEqual(['2026-03-23']);
+    expect(due('2026-03-30T04:00:00Z', [])).toEqual(['2026-03-16']);
   });
 
   it('are none before the plant’s first reading', () => {
-    expect(due('2026-03-30T05:00:00Z', null, null)).toEqual([]);
-    expect(due('2026-03-30T05:00:00Z', null, '2026-03-29T23:00:00Z')).toEqual([]);
-    expect(due('2026-03-30T05:00:00Z', null, '2026-03-29T22:59:00Z')).toEqual(['2026-03-23']);
-    expect(due('2026-03-30T05:00:00Z', '2026-03-02', '2026-03-18T00:00:00Z')).toEqual(['2026-03-16', '2026-03-23']);
+    expect(due('2026-03-30T05:00:00Z', [], null)).toEqual([]);
+    expect(due('2026-03-30T05:00:00Z', [], '2026-03-29T23:00:00Z')).toEqual([]);
+    expect(due('2026-03-30T05:00:00Z', [], '2026-03-29T22:59:00Z')).toEqual(['2026-03-23']);
+    expect(due('2026-03-30T05:00:00Z', ['2026-03-02'], '2026-03-18T00:00:00Z')).toEqual(['2026-03-16', '2026-03-23']);
   });
 });

@@ -49,26 +49,24 @@ export function toldAt(week: PlantWeek, timeZone: string): Date {
 }
 
 /**
- * The weeks whose summary is due at an instant, oldest first: those since the newest one that was told, at most `most`; without any
- * told so far only the last complete one. None before the week of the plant's first reading.
+ * The weeks whose summary is due at an instant, oldest first, at most `most`: the newest that has ended, and with it every week since the
+ * first one that was told which has none; none while the newest is told. Without any told so far only the newest. None before the week
+ * of the plant's first reading.
  */
 export function dueWeeks(
   at: Date,
   timeZone: string,
-  known: { newestToldStartsOn: string | null; firstReadingAt: Date | null },
+  known: { toldStartsOn: string[]; firstReadingAt: Date | null },
   most: number,
 ): PlantWeek[] {
-  if (known.firstReadingAt === null) return [];
-  const due: PlantWeek[] = [];
+  const { firstReadingAt, toldStartsOn } = known;
   let week = lastCompleteWeek(at, timeZone);
   if (toldAt(week, timeZone) > at) week = weekBefore(week, timeZone);
-  const count = known.newestToldStartsOn === null ? 1 : most;
-  while (
-    due.length < count &&
-    week.to > known.firstReadingAt &&
-    (known.newestToldStartsOn === null || week.startsOn > known.newestToldStartsOn)
-  ) {
-    due.unshift(week);
+  if (firstReadingAt === null || toldStartsOn.includes(week.startsOn)) return [];
+  const firstTold = [...toldStartsOn].sort()[0] ?? week.startsOn;
+  const due: PlantWeek[] = [];
+  while (due.length < most && week.to > firstReadingAt && week.startsOn >= firstTold) {
+    if (!toldStartsOn.includes(week.startsOn)) due.unshift(week);
     week = weekBefore(week, timeZone);
   }
   return due;

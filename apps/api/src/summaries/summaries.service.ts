@@ -19,6 +19,7 @@ import {
   insertOwedJob,
   lastCompleteWeek,
   listSummaries,
+  listSummariesUnderWay,
   listSummaryVersions,
   type Person,
   type SummaryRow,
@@ -28,6 +29,7 @@ import {
 import { CLOCK, type Clock, DATABASE, Dispatcher } from '@app/platform';
 import { writeSummary } from '@app/workbook';
 import { AccessService } from '../access/access.service';
+import { toUnderWay } from './under-way';
 
 /** A plant's weeks as they were told, and new versions of them on demand. */
 @Injectable()
@@ -45,6 +47,7 @@ export class SummariesService {
     return {
       items: await listSummaries(this.database, plantId),
       lastWeekStartsOn: lastCompleteWeek(this.clock.now(), plant.timeZone).startsOn,
+      underWay: (await listSummariesUnderWay(this.database, plantId)).map(toUnderWay),
       maySend: maySend(roles),
     };
   }
@@ -100,7 +103,7 @@ export class SummariesService {
       return { version, owedJobId: await insertOwedJob(tx, { plantId, name: JOBS.weeklySummary, subject, at }) };
     });
     await this.dispatcher.owedJobs([owedJobId]);
-    return { weekStartsOn, version };
+    return { weekStartsOn, version, jobId: owedJobId };
   }
 
   private async require(person: Person, id: number): Promise<{ thing: SummaryRow; roles: Role[] }> {

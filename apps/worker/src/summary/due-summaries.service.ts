@@ -4,23 +4,19 @@ import type { Queue } from 'bull';
 import { DUE_SUMMARIES_EVERY_MS, DUE_SUMMARIES_JOB, JOBS, WORK_QUEUE } from '@app/contracts';
 import {
   type Database,
-  dueWeeks,
-  findFirstReadingAt,
-  findNewestSummaryWeek,
   insertOwedJob,
+  listDueSummaryWeeks,
   listSummaryPlants,
   listSummaryWeeksGivenUp,
   type SummaryPlant,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE, Dispatcher, within } from '@app/platform';
 
-/** After a longer stop only the newest weeks are told. */
-const MOST_WEEKS = 4;
 const PATIENCE_MS = 3_000;
 /** A week that could not be told is tried anew after so long. */
 const GIVEN_UP_MS = 6 * 3_600_000;
 
-/** Owes each plant the summaries that are due: at start, which catches up what a stop missed, and with every beat of a repeated job. */
+/** Owes each plant the summary that is due: at start, which catches up what a stop missed, and with every beat of a repeated job. */
 @Injectable()
 export class DueSummariesService {
   private readonly logger = new Logger(DueSummariesService.name);
@@ -37,7 +33,7 @@ export class DueSummariesService {
     await within(PATIENCE_MS, this.begin());
   }
 
-  /** Owes what is due now; the same week owed twice is one. Returns how many weeks that are. */
+  /** Owes what is due now; the same week owed twice is one. Returns of how many plants. */
   async oweDue(): Promise<number> {
     const owed: number[] = [];
     for (const plant of await listSummaryPlants(this.database)) owed.push(...(await this.oweOf(plant)));
@@ -62,25 +58,17 @@ export class DueSummariesService {
     }
   }
 
-  private async oweOf({ id: plantId, timeZone }: SummaryPlant): Promise<number[]> {
+  /** The newest week alone: who makes it makes those that were missed before it too. */
+  private async oweOf(plant: SummaryPlant): Promise<number[]> {
+    const { id: plantId } = plant;
     const at = this.clock.now();
-    const weeks = dueWeeks(
-      at,
-      timeZone,
-      {
-        newestToldStartsOn: await findNewestSummaryWeek(this.database, plantId),
-        firstReadingAt: await findFirstReadingAt(this.database, plantId),
-      },
-      MOST_WEEKS,
-    );
+    const newest = (await listDueSummaryWeeks(this.database, plant, at)).at(-1);
+    if (newest === undefined) return [];
     const givenUp = await listSummaryWeeksGivenUp(this.database, plantId, new Date(at.getTime() - GIVEN_UP_MS));
-    return this.database.transaction(async (tx) => {
-      const ids: number[] = [];
-      for (const { startsOn: weekStartsOn } of weeks.filter((week) => !givenUp.includes(week.startsOn))) {
-        const subject = { plantId, weekStartsOn, isSent: true, askedBy: null };
-        ids.push(await insertOwedJob(tx, { plantId, name: JOBS.weeklySummary, subject, at }));
-      }
-      return ids;
-    });
+    if (givenUp.includes(newest.startsOn)) return [];
+    const subject = { plantId, weekStartsOn: newest.startsOn, isSent: true, askedBy: null };
+    return [
+      await this.database.transaction((tx) => insertOwedJob(tx, { plantId, name: JOBS.weeklySummary, subject, at })),
+    ];
   }
 }

@@ -7,6 +7,13 @@ import { writeSummary } from '@app/workbook';
 
 const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
 
+/** A week that was missed, and has its page now. */
+export interface EarlierWeek {
+  id: number;
+  weekStartsOn: string;
+  headline: string;
+}
+
 /** Writes the mails of a week's summary, with its chart and its workbook. */
 @Injectable()
 export class SummaryMailService {
@@ -29,12 +36,15 @@ export class SummaryMailService {
   /** Returns the outbox ids to send once the transaction has committed, and to how many people. */
   async write(
     tx: Transaction,
-    summary: { id: number; plantId: number; version: number; content: SummaryContent },
+    summary: { id: number; plantId: number; version: number; content: SummaryContent; earlier: EarlierWeek[] },
     attachments: OutboxAttachment[],
     at: Date,
   ): Promise<number[]> {
     const { publicUrl } = this.config;
-    const mail = weeklySummaryMail({ ...summary, publicUrl, url: `${publicUrl}/summaries/${summary.id}` });
+    const urlOf = (id: number) => `${publicUrl}/summaries/${id}`;
+    const earlier = summary.earlier.map((week) => ({ ...week, url: urlOf(week.id) }));
+    const allWeeksUrl = `${publicUrl}/plants/${summary.plantId}/summaries`;
+    const mail = weeklySummaryMail({ ...summary, earlier, allWeeksUrl, publicUrl, url: urlOf(summary.id) });
     const recipients = await listSummaryRecipients(tx, summary.plantId);
     const event = `summary-${summary.id}`;
     const mails = recipients.map(({ email }) => ({ event, kind: 'weekly-summary', recipient: email, ...mail }));

@@ -1,11 +1,12 @@
 import { Workbook } from 'exceljs';
 import type { Queue } from 'bull';
 import { DUE_SUMMARIES_JOB } from '@app/contracts';
-import { findFirstReadingAt, findNewestSummaryWeek, insertOwedJob, listOutboxAttachments } from '@app/data';
+import { findFirstReadingAt, insertOwedJob, listOutboxAttachments } from '@app/data';
 import type { Dispatcher } from '@app/platform';
 import { insertManyWeeks } from '../../../../libs/data/src/testing/summary-week-rows';
 import { WorkerBench } from '../testing/worker-bench';
 import { DueSummariesService } from './due-summaries.service';
+import type { SummaryMailService } from './summary-mail.service';
 
 const DAY = 86_400_000;
 
@@ -93,17 +94,61 @@ describe('the weekly summary', () => {
     expect(await bench.db('owed_jobs').pluck('name')).toEqual(['weekly-summary']);
   });
 
-  it('catches up weeks that a stop missed, each once', async () => {
-    await due().oweDue();
-    await runAll();
-    bench.clock.advance(3 * 7 * DAY);
-    for (let start = 0; start < 3; start++) {
-      await due().start();
+  describe('after a stop of weeks', () => {
+    const MISSED = ['2026-03-09 v1', '2026-03-16 v1', '2026-03-23 v1'];
+    beforeEach(async () => {
+      await due().oweDue();
       await runAll();
-    }
-    expect(await told()).toEqual(['2026-03-02 v1', '2026-03-09 v1', '2026-03-16 v1', '2026-03-23 v1']);
-    expect(await mails()).toHaveLength(4);
-    expect(await findNewestSummaryWeek(bench.db, plantId())).toBe('2026-03-23');
+      bench.clock.advance(3 * 7 * DAY);
+    });
+
+    it('makes a page of each missed week and mails the newest alone, once, naming and linking the others', async () => {
+      for (let start = 0; start < 3; start++) {
+        await due().start();
+        await runAll();
+      }
+      expect(await told()).toEqual(['2026-03-02 v1', ...MISSED]);
+      const [, mail, ...more] = (await mails()) as { subject: string; plain_text: string; html: string }[];
+      expect(more).toEqual([]);
+      expect(mail.subject).toContain('23 to 29 Mar 2026');
+      const earlier = await bench.db('summaries').whereIn('week_starts_on', ['2026-03-09', '2026-03-16']).pluck('id');
+      for (const part of [mail.plain_text, mail.html]) {
+        expect(part).toContain('9 to 15 Mar 2026');
+        expect(part).toContain('16 to 22 Mar 2026');
+        for (const id of earlier) expect(part).toContain(`http://127.0.0.1:3000/summaries/${id}`);
+      }
+      expect((await bench.db('audit_entries').orderBy('id').pluck('sentence')).slice(1)).toEqual([
+        'Ebbline made version 1 of the summary of the week of 9 to 15 Mar 2026, which had been missed.',
+        'Ebbline made version 1 of the summary of the week of 16 to 22 Mar 2026, which had been missed.',
+        'Ebbline made version 1 of the summary of the week of 23 to 29 Mar 2026 and mailed it to 1 person.',
+      ]);
+    });
+
+    it('writes pages and mail together or not at all', async () => {
+      await due().oweDue();
+      const handler = bench.handlers.find(({ jobName }) => jobName === 'weekly-summary') as unknown as {
+        mails: SummaryMailService;
+      };
+      const write = jest.spyOn(handler.mails, 'write').mockImplementationOnce(async (...of) => {
+        await handler.mails.write(...of);
+        throw new Error('the connection broke after the mail was written');
+      });
+      await expect(runAll()).rejects.toThrow('the connection broke');
+      expect([await told(), (await mails()).length]).toEqual([['2026-03-02 v1'], 1]);
+      write.mockRestore();
+      await runAll();
+      expect([await told(), (await mails()).length]).toEqual([['2026-03-02 v1', ...MISSED], 2]);
+    });
+
+    it('leaves a week that is still owed to the newer one', async () => {
+      bench.clock.advance(-7 * DAY);
+      await due().oweDue();
+      bench.clock.advance(7 * DAY);
+      await due().oweDue();
+      expect(await bench.db('owed_jobs').where({ state: 'owed' })).toHaveLength(2);
+      await runAll();
+      expect([await told(), (await mails()).length]).toEqual([['2026-03-02 v1', ...MISSED], 2]);
+    });
   });
 
   it('is not made before the plant’s first reading', async () => {

@@ -8,6 +8,7 @@ import {
   getSummaryVersion,
   insertAuditEntry,
   insertSummary,
+  listDueSummaryWeeks,
   lockOwedJob,
   type OwedJob,
   type OutboxAttachment,
@@ -17,11 +18,22 @@ import {
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE, Dispatcher } from '@app/platform';
 import { type HandlerOutcome, NoLongerOwedError, type OwedJobHandler } from '../owed/owed-job-handler';
-import { SummaryMailService } from './summary-mail.service';
+import { type EarlierWeek, SummaryMailService } from './summary-mail.service';
+
+interface Made {
+  version: number;
+  content: SummaryContent;
+  /** Weeks before it that nobody was told, oldest first. */
+  missed: SummaryContent[];
+  attachments: OutboxAttachment[];
+}
 
 type Job = OwedJob & { subject: OwedJobSubject['weekly-summary'] };
 
-/** Freezes a plant's week as a new version of its summary, and mails it. One that is due is made only for a week without any. */
+/**
+ * Freezes a plant's week as a new version of its summary, and mails it. One that is due is made only for a week without any, together with
+ * the weeks that were missed before it: a page each, and one mail that names them, in one transaction.
+ */
 @Injectable()
 export class WeeklySummaryHandler implements OwedJobHandler<'weekly-summary'> {
   readonly jobName = JOBS.weeklySummary;
@@ -35,16 +47,26 @@ export class WeeklySummaryHandler implements OwedJobHandler<'weekly-summary'> {
 
   async run(job: Job): Promise<HandlerOutcome> {
     const { plantId, weekStartsOn, isSent, askedBy } = job.subject;
+    const plant = await findSummaryPlant(this.database, plantId);
+    if (!plant) throw new Error(`no plant ${plantId}`);
     const version = (await getSummaryVersion(this.database, plantId, weekStartsOn)) + 1;
-    if (askedBy === null && version > 1) {
-      await updateOwedJobEnded(this.database, job.id, 'done', this.clock.now());
-      return { done: false, reason: 'the week has its summary' };
-    }
+    const due = askedBy === null ? await listDueSummaryWeeks(this.database, plant, this.clock.now()) : [];
+    if (askedBy === null && version > 1) return this.leave(job, 'the week has its summary');
+    if (due.some((week) => week.startsOn > weekStartsOn)) return this.leave(job, 'a newer week is due and tells of it');
+    const missed: SummaryContent[] = [];
+    for (const week of due) if (week.startsOn < weekStartsOn) missed.push(await this.gather(plantId, week.startsOn));
     const content = await this.gather(plantId, weekStartsOn);
     const attachments = isSent ? await this.mails.attachments(content) : [];
-    const mailIds = await this.database.transaction((tx) => this.record(tx, job, { version, content, attachments }));
+    const mailIds = await this.database.transaction((tx) =>
+      this.record(tx, job, { version, content, missed, attachments }),
+    );
     await this.dispatcher.mails(mailIds);
     return { done: true };
+  }
+
+  private async leave(job: Job, reason: string): Promise<HandlerOutcome> {
+    await updateOwedJobEnded(this.database, job.id, 'done', this.clock.now());
+    return { done: false, reason };
   }
 
   /** Says so where people look for what was done: they may ask for it again. */
@@ -57,6 +79,7 @@ export class WeeklySummaryHandler implements OwedJobHandler<'weekly-summary'> {
       thingKind: 'plant',
       thingId: job.plantId,
       sentence: `Ebbline could not make the summary of the week of ${weekInWords(job.subject.weekStartsOn)}. ${sentence}`,
+      after: { weekStartsOn: job.subject.weekStartsOn, why: sentence },
     });
   }
 
@@ -72,29 +95,49 @@ export class WeeklySummaryHandler implements OwedJobHandler<'weekly-summary'> {
     );
   }
 
-  private async record(
-    tx: Transaction,
-    job: Job,
-    { version, content, attachments }: { version: number; content: SummaryContent; attachments: OutboxAttachment[] },
-  ): Promise<number[]> {
+  private async record(tx: Transaction, job: Job, made: Made): Promise<number[]> {
     if (!(await lockOwedJob(tx, job.id))) throw new NoLongerOwedError(job.id);
     const { plantId, weekStartsOn, isSent, askedBy } = job.subject;
+    const { version, content, attachments } = made;
     const at = this.clock.now();
+    const earlier: EarlierWeek[] = [];
+    for (const missed of made.missed) earlier.push(await this.recordMissed(tx, plantId, missed, at));
     const id = await insertSummary(tx, { plantId, weekStartsOn, version, content, madeAt: at });
-    const mailIds = isSent ? await this.mails.write(tx, { id, plantId, version, content }, attachments, at) : [];
+    const summary = { id, plantId, version, content, earlier };
+    const mailIds = isSent ? await this.mails.write(tx, summary, attachments, at) : [];
     const actor = askedBy === null ? null : ((await findPerson(tx, askedBy)) ?? null);
     const sent = isSent ? ` and mailed it to ${mailIds.length === 1 ? '1 person' : `${mailIds.length} people`}` : '';
     await insertAuditEntry(tx, {
-      plantId,
-      at,
-      actor: null,
-      action: 'make-summary',
-      thingKind: 'summary',
-      thingId: id,
+      ...entryOf(plantId, id, at),
       sentence: `Ebbline made version ${version} of the summary of the week of ${weekInWords(weekStartsOn)}${actor === null ? '' : ` asked for by ${actor.name}`}${sent}.`,
       after: { weekStartsOn, version, isSent },
     });
     await updateOwedJobEnded(tx, job.id, 'done', at);
     return mailIds;
   }
+
+  private async recordMissed(
+    tx: Transaction,
+    plantId: number,
+    content: SummaryContent,
+    at: Date,
+  ): Promise<EarlierWeek> {
+    const weekStartsOn = content.week.startsOn;
+    const id = await insertSummary(tx, { plantId, weekStartsOn, version: 1, content, madeAt: at });
+    await insertAuditEntry(tx, {
+      ...entryOf(plantId, id, at),
+      sentence: `Ebbline made version 1 of the summary of the week of ${weekInWords(weekStartsOn)}, which had been missed.`,
+      after: { weekStartsOn, version: 1, isSent: false },
+    });
+    return { id, weekStartsOn, headline: content.headline };
+  }
 }
+
+const entryOf = (plantId: number, thingId: number, at: Date) => ({
+  plantId,
+  at,
+  actor: null,
+  action: 'make-summary',
+  thingKind: 'summary',
+  thingId,
+});

@@ -191,11 +191,24 @@ export interface SummaryListItem {
   headline: string;
 }
 
+/** A version that a worker has not made. */
+export interface SummaryUnderWay {
+  jobId: number;
+  weekStartsOn: LocalDate;
+  state: 'being_made' | 'failed';
+  /** When it was asked for, or given up. */
+  since: Instant;
+  /** Why it failed and whether it is tried again by itself; null while it is being made. */
+  sentence: string | null;
+}
+
 /** GET plants/:id/summaries. */
 export interface SummaryListView {
   items: SummaryListItem[];
   /** The last complete week, which may have no summary yet. */
   lastWeekStartsOn: LocalDate;
+  /** What is being made, or could not be made since the week's newest version; newest week first, one a week. */
+  underWay: SummaryUnderWay[];
   maySend: boolean;
 }
 
@@ -205,8 +218,9 @@ export interface SummaryRequest {
   send?: boolean;
 }
 
-/** Its answer, 202: read the list until the week has this version. */
+/** Its answer, 202: read the list until the week has this version, or the job stands in `underWay` as failed. */
 export interface SummaryRequested {
+  jobId: number;
   weekStartsOn: LocalDate;
   version: number;
 }

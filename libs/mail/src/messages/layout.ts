@@ -50,9 +50,11 @@ export function sheet(html: string, edge: string): string {
   return `<div style="background:${PAPER.sheet};border:1px solid ${PAPER.hairline};border-left:4px solid ${edge};padding:16px 16px 4px;margin:0 0 12px">${html}</div>`;
 }
 
-export function page(title: string, body: string, foot: string): string {
+/** `style`: rules for narrow screens; who does not know them reads the same. Paper is light: readers are asked to leave it so. */
+export function page(title: string, body: string, foot: string, style = ''): string {
+  const head = `<meta name="color-scheme" content="light">${style === '' ? '' : `<style>${style}</style>`}`;
   return (
-    `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>${escapeHtml(title)}</title></head>` +
+    `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width">${head}<title>${escapeHtml(title)}</title></head>` +
     `<body style="margin:0;background:${PAPER.ground}"><div style="max-width:600px;margin:0 auto;padding:20px 12px">${body}` +
     `<p style="margin:16px 0 0;${FONT};font-size:12px;line-height:18px;color:${PAPER.inkSoft}">${escapeHtml(foot)}</p></div></body></html>`
   );

@@ -8,74 +8,78 @@ import {
   type Measure,
   measureInWords,
   percentInWords,
+  quantitiesInWords,
   SIGNATURE_MEANINGS,
   type SummaryContent,
+  valueInWords,
   type WeekFigures,
 } from '@app/contracts';
 
 /** A part of the summary, said the same in HTML and in plain text. */
 export interface SummarySection {
   title: string;
-  sentences: { text: string; path?: string | null }[];
+  /** With the page behind it: a path of ours, or its whole address. */
+  sentences: { text: string; path?: string | null; url?: string }[];
   table?: { head: string[]; rows: string[][] };
 }
 
 const MOST_NAMED = 6;
 
-/** What the mail says after its first sentence, in the order of what matters. */
+/** The figures behind the answers, in the order of what matters. */
 export function summarySections(content: SummaryContent): SummarySection[] {
   return [
-    questionsSection(content),
-    linesSection(content),
     openSection(content),
-    worseSection(content),
+    linesSection(content),
+    gaugesSection(content),
     changedSection(content),
     notScoredSection(content),
     intakesSection(content),
   ].filter((section) => section.sentences.length > 0 || section.table !== undefined);
 }
 
-function questionsSection({ whatToAsk }: SummaryContent): SummarySection {
-  return {
-    title: 'What to ask whom',
-    sentences: whatToAsk.slice(0, MOST_NAMED).map(({ whom, question, path }) => ({
-      text: `Ask ${whom}: ${question}`,
-      path,
-    })),
-  };
-}
-
 /** "12, 11 the week before". */
-const beside = (now: Measure, last: Measure | undefined): string =>
-  `${measureInWords(now)}${last === undefined ? '' : `; week before ${lotsInWords(last.lots)}`}`;
+const beside = (now: number, last: number | undefined): string =>
+  `${now}${last === undefined ? '' : `, ${last} the week before`}`;
 
 function linesSection({ lines, total }: SummaryContent): SummarySection {
   const row = (name: string, week: WeekFigures, last: WeekFigures | null): string[] => [
     name,
-    beside(week.scored, last?.scored),
-    beside(week.held, last?.held),
+    beside(week.scored.lots, last?.scored.lots),
+    `${beside(week.held.lots, last?.held.lots)}${amountOf(week.held)}`,
     decidedInWords(week),
-    beside(week.stillOpen, last?.stillOpen),
+    `${beside(week.stillOpen.lots, last?.stillOpen.lots)}${amountOf(week.stillOpen)}`,
   ];
   const rows = lines.map(({ line, week, lastWeek }) => row(line.name, week, lastWeek));
   if (lines.length > 1) rows.push(row('All lines', total.week, total.lastWeek));
   return {
-    title: 'Each line',
+    title: 'Lots of each line',
     sentences: [],
     table: { head: ['Line', 'Scored', 'Held in the week', 'Decided in the week', 'Open at its end'], rows },
   };
 }
 
+function amountOf(measure: Measure): string {
+  const parts = [quantitiesInWords(measure), valueInWords(measure)].filter((part) => part !== '');
+  return parts.length === 0 ? '' : `: ${parts.join(', ')}`;
+}
+
 const decidedInWords = ({ decided }: WeekFigures): string =>
   decided.length === 0
     ? 'none'
-    : decided.map((measure) => `${SIGNATURE_MEANINGS[measure.disposition]}: ${measureInWords(measure)}`).join('; ');
+    : decided.map((measure) => `${measure.lots} ${SIGNATURE_MEANINGS[measure.disposition]}`).join(', ');
 
-function openSection({ openHolds, total }: SummaryContent): SummarySection {
+function openSection({ openHolds, total, lines }: SummaryContent): SummarySection {
   if (openHolds.count === 0) return { title: 'Held and undecided', sentences: [] };
-  const ages = total.week.stillOpenByAge
-    .filter(({ lots }) => lots > 0)
-    .map((age) => `${ageSpanInWords(age)}: ${measureInWords(age)}`);
+  const agesOf = (week: WeekFigures, words: (measure: Measure) => string) =>
+    week.stillOpenByAge
+      .filter(({ lots }) => lots > 0)
+      .map((age) => `${ageSpanInWords(age)}: ${words(age)}`)
+      .join('; ');
+  const byLine = lines
+    .filter(({ week }) => week.stillOpen.lots > 0)
+    .map(({ line, week }) => ({
+      text: `${line.name}, ${lotsInWords(week.stillOpen.lots)}: ${agesOf(week, ({ lots }) => lotsInWords(lots))}.`,
+    }));
   const sentences = openHolds.holds.slice(0, MOST_NAMED).map((hold) => {
     const quantity =
       hold.quantity === null || hold.quantityUnit === null
@@ -90,24 +94,26 @@ function openSection({ openHolds, total }: SummaryContent): SummarySection {
   });
   return {
     title: 'Held and undecided at the week’s end',
-    sentences: [{ text: `At risk by age: ${ages.join('; ')}.` }, ...sentences, ...andMore(openHolds.count)],
+    sentences: [
+      { text: `At risk by age: ${agesOf(total.week, measureInWords)}.` },
+      ...(lines.length > 1 ? byLine : []),
+      ...sentences,
+      ...andMore(openHolds.count),
+    ],
   };
 }
 
 const andMore = (count: number) =>
   count > MOST_NAMED ? [{ text: `And ${count - MOST_NAMED} more: see the page or the workbook.` }] : [];
 
-function worseSection({ gauges }: SummaryContent): SummarySection {
+const GAUGES_TITLE = 'Slow movement within its allowance';
+
+function gaugesSection({ gauges }: SummaryContent): SummarySection {
   const told = gauges.filter(({ share }) => share !== null);
-  if (told.length === 0) return { title: 'What is getting worse', sentences: [] };
-  const worse = told.filter(({ isGettingWorse }) => isGettingWorse);
-  const opening =
-    worse.length === 0
-      ? 'No slow movement took up a tenth more of its allowance than in the week before.'
-      : `${worse.map(({ channel, line }) => `${channel.name} on ${line.name}`).join(', ')}: a tenth or more of the allowance was taken up since the week before.`;
+  if (told.length === 0) return { title: GAUGES_TITLE, sentences: [] };
   return {
-    title: 'What is getting worse',
-    sentences: [{ text: opening }],
+    title: GAUGES_TITLE,
+    sentences: [],
     table: {
       head: ['Channel', 'Gauge', 'Moved', 'Of its allowance', 'Week before'],
       rows: told.map((gauge) => [

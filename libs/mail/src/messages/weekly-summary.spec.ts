@@ -2,7 +2,7 @@ import type { SummaryContent } from '@app/contracts';
 import { figures, gauge, lotsOf500, madeSummary, openHold } from '../../../contracts/src/testing/made-summary';
 import { renderPng } from '../chart/render-png';
 import { chartInWords, summaryChart } from '../chart/summary-chart';
-import { CHART_CONTENT_ID, weeklySummaryMail } from './weekly-summary';
+import { CHART_CONTENT_ID, weeklySummaryMail, type WeeklySummaryFacts } from './weekly-summary';
 
 const line = { id: 1, name: 'Coater 2' };
 const week = figures({
@@ -75,10 +75,12 @@ const full: SummaryContent = madeSummary({
     ],
   },
 });
-const mailOf = (content: SummaryContent, version = 1) =>
+const mailOf = (content: SummaryContent, version = 1, earlier: WeeklySummaryFacts['earlier'] = []) =>
   weeklySummaryMail({
     content,
     version,
+    earlier,
+    allWeeksUrl: 'http://ebbline.example/plants/1/summaries',
     publicUrl: 'http://ebbline.example',
     url: 'http://ebbline.example/summaries/9',
   });
@@ -98,11 +100,17 @@ describe('the mail of a week', () => {
         full.headline,
         'Ask the quality manager, Adaeze Thornbury: What keeps lot 24118 from being decided?',
         'Slurry <3>',
-        '3 lots (1 500 m, 2 700 EUR); week before 1 lot',
-        'released: 1 lot (500 m, 900 EUR); scrapped: 1 lot (500 m, 900 EUR)',
+        '1 lot waited for a decision at the week’s end (0 the week before): 1 of Coater 2; the oldest, lot 24118 of Coater 2, for 2 d 4 h.',
+        'In the week 3 lots were held (1 the week before).',
+        'At risk on hold: 500 m, worth 900 EUR.',
+        'Scrapped in the week: 1 lot (500 m, 900 EUR).',
+        'Released in the week: 1 lot (500 m, 900 EUR).',
+        'Holds grow old: 1 lot had waited 1 d or longer at the week’s end, 0 the week before.',
+        'Coat weight on Coater 2, gauge BG-204: the slow movement has used 112 % of its allowance, 90 % the week before; its lots are not scored until the gauge is checked.',
+        '3, 1 the week before: 1 500 m, 2 700 EUR',
+        '1 released, 1 scrapped',
         '1 d to 3 d: 1 lot (500 m, 900 EUR)',
         'not confirmed to be set aside: Lot 24118 lies 4.3 σ below its baseline',
-        'Coat weight on Coater 2: a tenth or more of the allowance was taken up',
         '112 %',
         'BG-204',
         '2 lots that limits on unadjusted lot means would have held, and the plans did not',
@@ -118,6 +126,20 @@ describe('the mail of a week', () => {
   it('opens with the first sentence, and tells later versions apart', () => {
     const [heading, first] = mailOf(full).text.split('\n\n');
     expect([heading, first]).toEqual(['Marrowby Works, week of 2 to 8 Mar 2026', full.headline]);
+    const { html, text } = mailOf(full);
+    for (const part of [html, text.toLowerCase()]) {
+      const titles = [
+        'held',
+        'what it costs',
+        'getting worse',
+        'what to ask whom',
+        'open the page of this week',
+        'lots of each line',
+      ];
+      const places = titles.map((title) => part.toLowerCase().search(new RegExp(`(^|>)${title}`, 'm')));
+      expect([titles, places]).toEqual([titles, [...places].sort((a, b) => a - b)]);
+      expect(places[0]).toBeGreaterThan(0);
+    }
     expect(mailOf(full, 2).text).toContain('week of 2 to 8 Mar 2026, version 2');
   });
 
@@ -130,9 +152,41 @@ describe('the mail of a week', () => {
 
   it('leaves out what a quiet week does not have', () => {
     const { text } = mailOf(madeSummary({ headline: 'No lot was held, and all 84 lots measured were scored.' }));
-    for (const title of ['WHAT TO ASK WHOM', 'HELD AND UNDECIDED', 'LOTS WITHOUT A SCORE', 'WORKBOOKS THAT NEED'])
+    for (const sentence of [
+      'No lot waited for a decision at the week’s end. In the week 0 lots were held (0 the week before).',
+      'Nothing was scrapped, reworked or regraded in the week.',
+      'No slow movement took up a tenth more of its allowance than in the week before; the largest is Coat weight on Coater 2 at 41 %.',
+      'Nothing waits for anybody.',
+    ])
+      expect(plain(text)).toContain(sentence);
+    for (const title of ['HELD AND UNDECIDED', 'LOTS WITHOUT A SCORE', 'WORKBOOKS THAT NEED'])
       expect(text).not.toContain(title);
-    expect(text).toContain('EACH LINE');
+    expect(text).toContain('LOTS OF EACH LINE');
+    expect(text).not.toContain('TOLD ONLY NOW');
+  });
+
+  it('names and links the weeks that were missed, the newest of many', () => {
+    const week = (day: number) => ({
+      weekStartsOn: `2026-02-${String(day).padStart(2, '0')}`,
+      headline: `Headline <${day}>.`,
+      url: `http://ebbline.example/summaries/${day}`,
+    });
+    const mail = mailOf(full, 1, [week(16), week(23)]);
+    expect(mail.text).toContain(
+      '2 WEEKS TOLD ONLY NOW\n- 16 to 22 Feb 2026: Headline <16>.\n  http://ebbline.example/summaries/16\n- 23 Feb to 1 Mar 2026: Headline <23>.\n  http://ebbline.example/summaries/23',
+    );
+    expect(mail.html).toContain('Headline &lt;16&gt;. <a href="http://ebbline.example/summaries/16"');
+    expect(mail.text.indexOf('TOLD ONLY NOW')).toBeLessThan(mail.text.indexOf('LOTS OF EACH LINE'));
+    const many = mailOf(
+      full,
+      1,
+      [...Array(10).keys()].map((index) => week(index + 1)),
+    ).text;
+    expect(many).toContain(
+      '- 2 more before these: see the list of weeks.\n  http://ebbline.example/plants/1/summaries',
+    );
+    expect(many).not.toContain('Headline <2>');
+    expect(mailOf(full, 1, [week(23)]).text).toContain('A WEEK TOLD ONLY NOW');
   });
 });
 

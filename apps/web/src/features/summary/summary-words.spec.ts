@@ -9,7 +9,7 @@ import {
   lastWeekWords,
   measureDetail,
 } from './summary-words';
-import { lastDay, madeId } from './week';
+import { isAwaited, lastDay, madeId, underWayOf } from './week';
 
 const THIN = '\u202f';
 
@@ -98,10 +98,34 @@ describe('a week', () => {
 
   it('is made once the list has the version asked for, or a later one', () => {
     const item = { id: 1, weekStartsOn: '2026-03-02', version: 2, madeAt: '2026-03-09T06:00:00Z', headline: 'x' };
-    const asked = { weekStartsOn: '2026-03-02', version: 2 };
+    const asked = { weekStartsOn: '2026-03-02', version: 2, jobId: 7 };
     expect(madeId([item], asked)).toBe(1);
     expect(madeId([item], { ...asked, version: 3 })).toBeUndefined();
     expect(madeId([item], { ...asked, weekStartsOn: '2026-03-09' })).toBeUndefined();
     expect(madeId(undefined, asked)).toBeUndefined();
+  });
+
+  it('is awaited no longer once it is made or given up, and an earlier failure does not count', () => {
+    const asked = { weekStartsOn: '2026-03-02', version: 2, jobId: 7 };
+    const underWay = (jobId: number, state: 'being_made' | 'failed') => ({
+      jobId,
+      weekStartsOn: '2026-03-02',
+      state,
+      since: '2026-03-09T06:00:00Z',
+      sentence: state === 'failed' ? 'Ebbline gave up.' : null,
+    });
+    const list = (item: ReturnType<typeof underWay>) => ({
+      items: [],
+      lastWeekStartsOn: '2026-03-02',
+      underWay: [item],
+      maySend: true,
+    });
+    expect(isAwaited(undefined, asked)).toBe(true);
+    expect(isAwaited(list(underWay(7, 'being_made')), asked)).toBe(true);
+    expect(isAwaited(list(underWay(6, 'failed')), asked)).toBe(true);
+    expect(isAwaited(list(underWay(7, 'failed')), asked)).toBe(false);
+    expect(isAwaited(list(underWay(7, 'being_made')), null)).toBe(false);
+    expect(underWayOf(list(underWay(7, 'failed')), '2026-03-02')?.jobId).toBe(7);
+    expect(underWayOf(list(underWay(7, 'failed')), '2026-03-09')).toBeUndefined();
   });
 });

@@ -2,7 +2,7 @@ import type { SummaryListView, SummaryRequest, SummaryRequested, SummaryView } f
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { apiGet, apiSend } from '../../../shared/api/client';
 import { useToast } from '../../../shared/ui/toast';
-import { madeId } from '../week';
+import { isAwaited } from '../week';
 
 /** While a summary is being made. */
 const POLL_MS = 1_500;
@@ -11,13 +11,13 @@ const REFRESH_MS = 15_000;
 
 export const summariesKey = (plantId: number) => ['summaries', 'of', plantId] as const;
 
-/** `awaited`: a version that a worker makes just now; the list is read until it has it. */
+/** `awaited`: a version that a worker makes just now; the list is read until it has it or it was given up. */
 export function useSummaries(plantId: number, awaited: SummaryRequested | null = null) {
   return useQuery({
     queryKey: summariesKey(plantId),
     queryFn: ({ signal }) => apiGet<SummaryListView>(`/plants/${plantId}/summaries`, signal),
-    refetchInterval: ({ state }) =>
-      awaited === null || madeId(state.data?.items, awaited) !== undefined ? REFRESH_MS : POLL_MS,
+    refetchInterval: ({ state: { data } }) =>
+      isAwaited(data, awaited) || data?.underWay.some(({ state }) => state === 'being_made') ? POLL_MS : REFRESH_MS,
   });
 }
 

@@ -7,7 +7,10 @@ import { download } from '../../../shared/api/download';
 import { Action } from '../../../shared/ui/action';
 import { useToast } from '../../../shared/ui/toast';
 import { useMakeSummary, useSummaries } from '../api/summaries';
-import { madeId } from '../week';
+import { isAwaited, madeId, underWayOf } from '../week';
+import { NotMade } from './not-made';
+
+const MAKE_ANEW = 'Make it anew';
 
 /** What can be done with a week's summary. */
 export function SummaryTools({ summary }: { summary: SummaryView }) {
@@ -39,15 +42,15 @@ function DownloadWorkbook({ summary }: { summary: SummaryView }) {
 function MakeAnew({ summary }: { summary: SummaryView }) {
   const [awaited, setAwaited] = useState<SummaryRequested | null>(null);
   const making = useMakeSummary(summary.plant.id, setAwaited);
-  const made = useSummaries(summary.plant.id, awaited).data?.items;
+  const list = useSummaries(summary.plant.id, awaited).data;
   const navigate = useNavigate();
-  const newId = awaited === null ? undefined : madeId(made, awaited);
+  const newId = awaited === null ? undefined : madeId(list?.items, awaited);
   useEffect(() => {
     if (newId !== undefined) void navigate(urls.summary(newId));
   }, [newId, navigate]);
-  const isBusy = making.isPending || awaited !== null;
+  const isUnderWay = underWayOf(list, summary.week.startsOn)?.state === 'being_made';
   const make = (send: boolean) => making.mutate({ weekStartsOn: summary.week.startsOn, send });
-  if (isBusy) {
+  if (making.isPending || isUnderWay || isAwaited(list, awaited)) {
     return (
       <Action kind="quiet" isBusy>
         A new version is being made…
@@ -57,9 +60,16 @@ function MakeAnew({ summary }: { summary: SummaryView }) {
   return (
     <>
       <Action kind="quiet" onPress={() => make(false)}>
-        Make it anew
+        {MAKE_ANEW}
       </Action>
       <Action onPress={() => make(true)}>Make it anew and send</Action>
     </>
   );
+}
+
+/** That a newer version of this week was asked for and could not be made. */
+export function NewVersionFailed({ summary }: { summary: SummaryView }) {
+  const item = underWayOf(useSummaries(summary.plant.id).data, summary.week.startsOn);
+  if (item?.state !== 'failed') return null;
+  return <NotMade failed={item} askAgain={summary.maySend ? MAKE_ANEW : null} />;
 }

@@ -11,7 +11,8 @@ import { PageHeading } from '../../../shared/ui/page-heading';
 import { Sheet } from '../../../shared/ui/sheet';
 import { When } from '../../../shared/ui/when';
 import { useMakeSummary, useSummaries } from '../api/summaries';
-import { madeId } from '../week';
+import { NotMade } from '../components/not-made';
+import { isAwaited, underWayOf } from '../week';
 
 /** Which week? */
 export function SummariesPage() {
@@ -19,7 +20,7 @@ export function SummariesPage() {
   useShowsLine(undefined, plantId);
   const [awaited, setAwaited] = useState<SummaryRequested | null>(null);
   const query = useSummaries(plantId, awaited);
-  const isBeingMade = awaited !== null && madeId(query.data?.items, awaited) === undefined;
+  const isBeingMade = isAwaited(query.data, awaited);
   return (
     <>
       <PageHeading
@@ -40,6 +41,8 @@ export function SummariesPage() {
   );
 }
 
+const MAKE_IT = 'Make it now';
+
 interface MissingWeekProps {
   plantId: number;
   list: SummaryListView;
@@ -51,15 +54,23 @@ interface MissingWeekProps {
 function MissingWeek({ plantId, list, isBeingMade, onRequested }: MissingWeekProps) {
   const making = useMakeSummary(plantId, onRequested);
   const weekStartsOn = list.lastWeekStartsOn;
-  if (!list.maySend || list.items.some((item) => item.weekStartsOn === weekStartsOn)) return null;
-  const isBusy = making.isPending || isBeingMade;
+  if (list.items.some((item) => item.weekStartsOn === weekStartsOn)) return null;
+  const item = underWayOf(list, weekStartsOn);
+  const isBusy = making.isPending || isBeingMade || item?.state === 'being_made';
+  const hasFailed = item?.state === 'failed' && !isBusy;
+  if (!list.maySend && !hasFailed) return null;
   return (
-    <p className="summary__missing">
-      The week of {weekInWords(weekStartsOn)} has no summary yet.{' '}
-      <Action kind="quiet" isBusy={isBusy} onPress={() => making.mutate({ weekStartsOn })}>
-        {isBusy ? 'Being made…' : 'Make it now'}
-      </Action>
-    </p>
+    <>
+      {hasFailed && <NotMade failed={item} askAgain={list.maySend ? MAKE_IT : null} />}
+      {list.maySend && (
+        <p className="summary__missing">
+          The week of {weekInWords(weekStartsOn)} has no summary yet.{' '}
+          <Action kind="quiet" isBusy={isBusy} onPress={() => making.mutate({ weekStartsOn })}>
+            {isBusy ? 'Being made…' : MAKE_IT}
+          </Action>
+        </p>
+      )}
+    </>
   );
 }
 

@@ -15,7 +15,7 @@ import { Headline } from '../components/headline';
 import { LinesTable } from '../components/lines-table';
 import { NotScored } from '../components/not-scored';
 import { OpenHolds } from '../components/open-holds';
-import { SummaryTools } from '../components/summary-tools';
+import { NewVersionFailed, SummaryTools } from '../components/summary-tools';
 
 /** What must be known of the week? */
 export function SummaryPage() {
@@ -40,6 +40,7 @@ function Summary({ summary }: { summary: SummaryView }) {
         lead={<Lead summary={summary} />}
         tools={<SummaryTools summary={summary} />}
       />
+      <NewVersionFailed summary={summary} />
       <Headline summary={summary} />
       <LinesTable summary={summary} />
       <OpenHolds summary={summary} />
