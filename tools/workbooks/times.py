@@ -35,6 +35,19 @@ def serials(case):
     return openpyxl_write(case.sheets)
 
 
+@fixture("date-facts.xlsx", OPENPYXL, "serials whose days are known: 40729 is 5 July 2011; 60 is a day that never was", COATER)
+def date_facts(case):
+    case.layout = "wide"
+    sheet = case.sheet("Facts")
+    sheet.add(HEADER)
+    known = {40729: "2011-07-05T00:00", 40729.75: "2011-07-05T18:00", 36526.5: "2000-01-01T12:00", 45351: "2024-02-29T00:00"}
+    for serial, text_ in known.items():
+        case.data(sheet, [serial, "24212", "SEP-12", 12.1, 16.4], at(text_), "24212", "SEP-12").reads("D", CW, 12.1).reads("E", WT, 16.4)
+    case.data(sheet, [60.25, "24212", "SEP-12", 12.1, 16.4]).not_used("date-does-not-exist")
+    case.data(sheet, [59.25, "24212", "SEP-12", 12.1, 16.4]).not_used("stamp-before-2000")
+    return openpyxl_write(case.sheets)
+
+
 @fixture("dates-1904.xlsx", XLSXWRITER, "the 1904 date system", COATER)
 def dates_1904(case):
     rows(case, "1904", every("2026-03-03T14:05", 20, 16), lambda moment: [moment])

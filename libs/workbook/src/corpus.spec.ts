@@ -1,3 +1,4 @@
+import { mergeAnswers } from '@app/contracts';
 import fc from 'fast-check';
 import type { ColumnRole, LayoutAnswers, WorkbookAnswers } from './answers';
 import { CORPUS, nameOfChannel, type CorpusFile, type ExpectedReading } from './testing/corpus';
@@ -36,7 +37,10 @@ function inItsWords({ readings }: Read, { context, expected }: CorpusFile): Expe
 }
 
 /** The first readings that only one side has, so that a failure can be read. */
-function differing(read: ExpectedReading[], wanted: ExpectedReading[]): Record<string, unknown> {
+function differing(
+  read: ExpectedReading[],
+  wanted: ExpectedReading[],
+): { count: number; missing: string[]; unexpected: string[] } {
   const lines = (readings: ExpectedReading[]): string[] =>
     readings.map((one) => JSON.stringify(one, Object.keys(one).sort()));
   const only = (ones: string[], others: string[]): string[] => {
@@ -90,6 +94,36 @@ describe('workbooks as plants have them', () => {
         rowsNotUsed: expected.rowsNotUsed,
       });
       expect(countsByCode(result)).toMatchObject(expected.problemCodes ?? {});
+    },
+  );
+});
+
+/** Takes the choices that are offered, each with all others, until nothing is asked or the rows are those put in. */
+async function leadsThere(file: CorpusFile, answers: WorkbookAnswers, depth: number): Promise<boolean> {
+  const result = await file.read(answers);
+  const [question] = result.report.questions;
+  if (question === undefined) {
+    const { missing, unexpected } = differing(inItsWords(result, file), file.expected.readings);
+    return missing.length + unexpected.length === 0;
+  }
+  if (depth === 0) return false;
+  for (const choice of question.choices) {
+    if (await leadsThere(file, mergeAnswers(answers, choice.answers), depth - 1)) return true;
+  }
+  return false;
+}
+
+describe('questions', () => {
+  it.each(CORPUS.filter(({ answers }) => answers !== undefined).map((file) => [file.name, file] as const))(
+    '%s is read as it was meant by taking choices that are offered',
+    async (_, file) => {
+      const { questions } = (await file.read()).report;
+      for (const { detail, choices, rows } of questions) {
+        expect(detail).toMatch(/[?.]$/);
+        expect(choices.length).toBeGreaterThan(1);
+        expect(rows).toBeGreaterThan(0);
+      }
+      expect(await leadsThere(file, {}, 5)).toBe(true);
     },
   );
 });
