@@ -18,6 +18,7 @@ import times  # noqa: F401
 import times_saving  # noqa: F401
 import units  # noqa: F401
 import values  # noqa: F401
+import values_doubtful  # noqa: F401
 from corpus import FIXTURES, Case, to_json
 from provenance import describe
 
