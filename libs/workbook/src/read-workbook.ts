@@ -1,6 +1,6 @@
 import type { WorkbookAnswers } from './answers';
-import { readSheetRows, type SheetFacts } from './container/sheet-rows';
-import { openWorkbook } from './container/workbook-parts';
+import { openSource } from './container/open-source';
+import type { SheetFacts } from './container/sheet-rows';
 import { DEFAULT_LIMITS, type ReadLimits } from './limits';
 import { ChannelNames } from './reading/channel-names';
 import { Findings } from './reading/findings';
@@ -46,8 +46,9 @@ export async function readWorkbook(
 ): Promise<WorkbookReport> {
   const limits = { ...DEFAULT_LIMITS, ...options.limits };
   const zone = new ZoneClock(context.timeZone);
-  const book = await openWorkbook(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength), limits);
-  const findings = new Findings();
+  const buffer = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  const source = await openSource(buffer, limits, options.answers ?? {});
+  const findings = new Findings(source.text !== null);
   const parts: ReadingParts = {
     channels: new ChannelNames(context.channels),
     products: new ProductNames(context.products),
@@ -56,11 +57,12 @@ export async function readWorkbook(
     questions: new Questions(findings),
     answers: options.answers ?? {},
     zone,
-    dateSystem: book.dateSystem,
+    dateSystem: source.dateSystem,
     now: context.now,
+    isTextFile: source.text !== null,
+    decimalSignSeen: source.text?.decimalSign ?? null,
   };
-  const report = emptyReport(book.dateSystem);
-  const count = { cells: 0 };
+  const report = emptyReport(source.dateSystem, source.text);
   let batch: ParsedReading[] = [];
   const flush = async (): Promise<void> => {
     if (report.firstRows.length < FIRST_ROWS)
@@ -69,10 +71,10 @@ export async function readWorkbook(
     batch = [];
     if (full.length > 0) await onReadings(full);
   };
-  for (const sheet of book.sheets) {
+  for (const sheet of source.sheets) {
     const reader = new SheetReader(sheet.name, parts);
     const facts: SheetFacts = { mergedUntil: [] };
-    for await (const rows of readSheetRows(book, sheet, limits, count, facts)) {
+    for await (const rows of source.rows(sheet, facts)) {
       for (const row of rows) {
         reader.take(row, batch);
         if (batch.length >= BATCH) await flush();
@@ -97,7 +99,7 @@ export async function readWorkbook(
   return finishReport(report, parts);
 }
 
-const emptyReport = (dateSystem: 1900 | 1904): WorkbookReport => ({
+const emptyReport = (dateSystem: 1900 | 1904, text: WorkbookReport['text']): WorkbookReport => ({
   layout: null,
   sheets: [],
   columns: [],
@@ -113,7 +115,7 @@ const emptyReport = (dateSystem: 1900 | 1904): WorkbookReport => ({
   isBlocked: false,
   questions: [],
   grids: [],
-  text: null,
+  text,
 });
 
 function finishReport(report: WorkbookReport, { findings, questions, lots }: ReadingParts): WorkbookReport {

@@ -18,6 +18,15 @@ export const corrupt = (cause?: unknown): WorkbookRefusedError =>
     { cause },
   );
 
+/** @throws WorkbookRefusedError too-large */
+export function assertSize(bytes: Buffer, limits: ReadLimits): void {
+  if (bytes.length <= limits.maxBytes) return;
+  throw new WorkbookRefusedError(
+    'too-large',
+    `The file has ${mebibytes(bytes.length)}; at most ${mebibytes(limits.maxBytes)} can be read. Split it, for example into a workbook a week.`,
+  );
+}
+
 /** A zip archive in memory whose parts are inflated in pieces, each part at most once, all of them counted. */
 export class Archive {
   private inflated = 0;
@@ -31,12 +40,7 @@ export class Archive {
 
   /** @throws WorkbookRefusedError too-large, corrupt, password-protected */
   static async open(bytes: Buffer, limits: ReadLimits): Promise<Archive> {
-    if (bytes.length > limits.maxBytes) {
-      throw new WorkbookRefusedError(
-        'too-large',
-        `The file has ${mebibytes(bytes.length)}; at most ${mebibytes(limits.maxBytes)} can be read. Split it, for example into a workbook a week.`,
-      );
-    }
+    assertSize(bytes, limits);
     const entries = new Map<string, Entry>();
     let zip: ZipFile;
     try {

@@ -27,6 +27,20 @@ export interface CellCount {
   cells: number;
 }
 
+/**
+ * Counts one more cell.
+ *
+ * @throws WorkbookRefusedError too-many-cells
+ */
+export function assertRoomForCell(count: CellCount, { maxCells }: ReadLimits): void {
+  count.cells += 1;
+  if (count.cells <= maxCells) return;
+  throw new WorkbookRefusedError(
+    'too-many-cells',
+    `The workbook has more than ${maxCells.toLocaleString('en')} filled cells. Split it, for example into a workbook a week.`,
+  );
+}
+
 export interface SheetFacts {
   /** Last row of each merged area. */
   mergedUntil: number[];
@@ -148,13 +162,7 @@ class SheetParser {
   private closeCell(): void {
     const cell = this.toCell();
     if (!cell) return;
-    this.count.cells += 1;
-    if (this.count.cells > this.limits.maxCells) {
-      throw new WorkbookRefusedError(
-        'too-many-cells',
-        `The workbook has more than ${this.limits.maxCells.toLocaleString('en')} filled cells. Split it, for example into a workbook a week.`,
-      );
-    }
+    assertRoomForCell(this.count, this.limits);
     this.row.cells[this.column] = cell;
   }
 

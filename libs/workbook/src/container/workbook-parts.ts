@@ -3,7 +3,16 @@ import type { ReadLimits } from '../limits';
 import { WorkbookRefusedError } from '../refused';
 import { Archive, corrupt } from './archive';
 import { readFormats, type CellFormat } from './formats';
-import { assertLooksLikeWorkbook, NOT_EXCEL, OLD_FORMAT } from './identify';
+import {
+  ARCHIVE_OF_WORKBOOKS,
+  assertLooksLikeWorkbook,
+  NOT_EXCEL,
+  notExcel,
+  NUMBERS,
+  OFFICE_DOCUMENT,
+  OLD_FORMAT,
+  OPEN_DOCUMENT,
+} from './identify';
 import { readSharedTexts } from './texts';
 import { isTrue, parseWholeXml } from './xml';
 
@@ -65,10 +74,17 @@ async function findMainPart(archive: Archive): Promise<string> {
   }
   const roots = archive.has('_rels/.rels') ? [...(await readRelations(archive, '')).values()] : [];
   const main = roots.find((relation) => relation.type === 'officeDocument')?.target ?? 'xl/workbook.xml';
-  if (!archive.has(main) || /\.(docx?|pptx?)$|^word\/|^ppt\//.test(main)) {
-    throw new WorkbookRefusedError('not-excel', NOT_EXCEL);
-  }
+  if (!archive.has(main) || /^\/?(word|ppt)\//.test(main)) throw notExcel(whatElse(archive.names()));
   return main;
+}
+
+/** What an archive is that is no workbook, by the names in it. */
+function whatElse(names: readonly string[]): string {
+  const has = (pattern: RegExp): boolean => names.some((name) => pattern.test(name));
+  if (has(/^(word|ppt)\//)) return OFFICE_DOCUMENT;
+  if (has(/^content\.xml$/) && has(/^(mimetype|meta-inf\/manifest\.xml)$/)) return OPEN_DOCUMENT;
+  if (has(/^index\/document\.iwa$|^index\.zip$/)) return NUMBERS;
+  return has(/\.(xls[xmb]?|csv|txt|tsv)$/) ? ARCHIVE_OF_WORKBOOKS : NOT_EXCEL;
 }
 
 async function readRelations(archive: Archive, owner: string): Promise<Map<string, Relation>> {
@@ -106,7 +122,7 @@ async function readBook(
       sheets.push({ name: attributes.name ?? `Sheet ${sheets.length + 1}`, part: relation.target, isHidden });
     },
   });
-  if (root !== 'workbook') throw new WorkbookRefusedError('not-excel', NOT_EXCEL);
+  if (root !== 'workbook') throw notExcel(NOT_EXCEL);
   if (sheets.some((sheet) => !archive.has(sheet.part))) throw corrupt(new Error('a sheet is missing'));
   return { sheets, dateSystem };
 }

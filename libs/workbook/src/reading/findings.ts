@@ -11,8 +11,9 @@ export interface Place {
   column?: number;
 }
 
-/** "Sheet "Readings", cell F12". */
-export const placeText = ({ sheet, row, column }: Place): string => {
+/** "Sheet "Readings", cell F12"; of a text file, which has no sheets, "Row 12, column F". */
+export const placeText = ({ sheet, row, column }: Place, isTextFile = false): string => {
+  if (isTextFile) return textPlace(row, column);
   const where =
     row === undefined
       ? column === undefined
@@ -24,6 +25,12 @@ export const placeText = ({ sheet, row, column }: Place): string => {
   return `Sheet "${sheet}"${where}`;
 };
 
+function textPlace(row: number | undefined, column: number | undefined): string {
+  const letters = column === undefined ? '' : columnLetters(column);
+  if (row === undefined) return letters === '' ? 'The text file' : `Column ${letters}`;
+  return letters === '' ? `Row ${row}` : `Row ${row}, column ${letters}`;
+}
+
 /** A copy that keeps no larger text alive: texts cut from a file's pieces do. */
 export const ownText = (text: string): string => Buffer.from(text).toString();
 
@@ -31,6 +38,8 @@ export const ownText = (text: string): string => Buffer.from(text).toString();
 export class Findings {
   readonly problems: Problem[] = [];
   private readonly counts = new Map<string, ProblemCount>();
+
+  constructor(private readonly isTextFile = false) {}
 
   /** `say` gives what follows the place: a verb phrase, and what to do. It is called only when the problem is listed. */
   add(severity: Severity, code: string, place: Place, say: () => string): void {
@@ -42,9 +51,13 @@ export class Findings {
     const isListed = severity !== 'notice' || (count?.count ?? 1) <= MAX_NOTICES_PER_CODE;
     if (!isListed || !this.makeRoom(severity)) return;
     const column = place.column === undefined ? null : columnLetters(place.column);
-    const sentence = `${placeText(place)} ${say()}`;
+    const sentence = `${this.placeText(place)} ${say()}`;
     const detail = ownText(/[.?!]$/.test(sentence) ? sentence : `${sentence}.`);
     this.problems.push({ sheet: place.sheet, row, column, code, detail, severity });
+  }
+
+  placeText(place: Place): string {
+    return placeText(place, this.isTextFile);
   }
 
   /** What stops the whole workbook is listed even when the list is full. */

@@ -1,6 +1,6 @@
 import { columnLetters } from '../container/cell-names';
 import type { Choice, Question } from '../answers';
-import { ownText, placeText, type Findings, type Place } from './findings';
+import { ownText, type Findings, type Place } from './findings';
 
 /** More questions than anybody would answer; the first ones are asked. */
 const MAX_QUESTIONS = 60;
@@ -24,7 +24,7 @@ export class Questions {
       code,
       sheet: place.sheet,
       column,
-      detail: ownText(`${placeText(place)} ${text}`),
+      detail: ownText(`${this.findings.placeText(place)} ${text}`),
       rows,
       choices,
     });

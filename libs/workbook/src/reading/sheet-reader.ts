@@ -28,6 +28,10 @@ export interface ReadingParts {
   zone: ZoneClock;
   dateSystem: 1900 | 1904;
   now: number;
+  /** Every cell of the file is a text, so that a number in one is nothing to speak of. */
+  isTextFile: boolean;
+  /** Of a text file: the decimal sign that its first rows show beyond doubt. */
+  decimalSignSeen: '.' | ',' | null;
 }
 
 /** Reads one sheet: looks for the header in its first rows, then turns the rows below it into readings. */
