@@ -11,6 +11,7 @@ export * from './first-administrator';
 export * from './account-audit';
 export * from './sessions';
 export * from './sign-in-failures';
+export * from './intake-notes';
 export * from './intakes';
 export * from './staged-readings';
 export * from './store-readings';

@@ -1,6 +1,6 @@
 import type { IntakeListItem, IntakeProblem, IntakeView } from '@app/contracts';
-import { holdReason } from '@app/contracts';
-import type { IntakeRow } from '@app/data';
+import { holdReason, notScoredSentence } from '@app/contracts';
+import type { IntakeNotes, IntakeRow } from '@app/data';
 import type { WorkbookReport } from '@app/workbook';
 
 export type StoredReport = Omit<WorkbookReport, 'problems'>;
@@ -10,7 +10,8 @@ interface Parts {
   sameFile: IntakeRow | undefined;
   problems: IntakeProblem[];
   channels: Map<number, { name: string; unit: string }>;
-  outcome: { lotsScored: number; held: { holdId: number; lotNumber: string; sentences: string[] }[] } | null;
+  outcome:
+    (IntakeNotes & { lotsScored: number; held: { holdId: number; lotNumber: string; sentences: string[] }[] }) | null;
 }
 
 /** Whether a person may confirm it now: it was read, nothing blocks, and there is something to store. */
@@ -94,6 +95,13 @@ export function intakeView({ intake, sameFile, problems, channels, outcome }: Pa
         lotNumber,
         sentence: holdReason(lotNumber, sentences),
       })),
+      notScored: outcome.notScored.map(({ channelId, channelName, reason, lots }) => ({
+        channel: { id: channelId, name: channelName },
+        reason,
+        sentence: notScoredSentence(reason),
+        lots,
+      })),
+      beforeFirstPlan: outcome.beforeFirstPlan,
     },
   };
 }

@@ -16,6 +16,7 @@ import {
   findLine,
   findSameFile,
   getIntakeBytes,
+  getIntakeNotes,
   getIntakeOutcome,
   getLineContext,
   insertAuditEntry,
@@ -176,10 +177,18 @@ export class IntakesService {
       findSameFile(this.database, intake),
       listIntakeProblems(this.database, intake.id, SHOWN_PROBLEMS),
       getLineContext(this.database, intake.lineId, { isWithRetired: true }),
-      intake.state === 'scored' ? getIntakeOutcome(this.database, intake.id) : null,
+      intake.state === 'scored' ? this.outcome(intake.id) : null,
     ]);
     const channels = new Map(context.channels.map((channel) => [channel.id, channel]));
     return intakeView({ intake, sameFile, problems, channels, outcome });
+  }
+
+  private async outcome(intakeId: number) {
+    const [outcome, notes] = await Promise.all([
+      getIntakeOutcome(this.database, intakeId),
+      getIntakeNotes(this.database, intakeId),
+    ]);
+    return { ...outcome, ...notes };
   }
 }
 

@@ -10,6 +10,9 @@ import { routes } from './urls';
 
 const page = (path: string, lazy: RouteObject['lazy']): RouteObject => ({ path, lazy, errorElement: <ErrorPage /> });
 
+/** A page without the frame, which it would otherwise wait in. */
+const bare = (route: RouteObject): RouteObject => ({ ...route, hydrateFallbackElement: <Skeleton lines={3} /> });
+
 /** Where the frame itself failed. */
 const bareErrorPage = (
   <main className="page">
@@ -20,11 +23,13 @@ const bareErrorPage = (
 export const router = createBrowserRouter([
   { path: routes.signIn, element: <SignInPage />, errorElement: bareErrorPage },
   ...[routes.invitation, routes.newPassword].map((path) =>
-    page(path, async () => ({ Component: (await import('../features/links/pages/link-page')).LinkPage })),
+    bare(page(path, async () => ({ Component: (await import('../features/links/pages/link-page')).LinkPage }))),
   ),
-  page(routes.forgottenPassword, async () => ({
-    Component: (await import('../features/links/pages/forgotten-password-page')).ForgottenPasswordPage,
-  })),
+  bare(
+    page(routes.forgottenPassword, async () => ({
+      Component: (await import('../features/links/pages/forgotten-password-page')).ForgottenPasswordPage,
+    })),
+  ),
   {
     element: <SignedIn />,
     errorElement: bareErrorPage,

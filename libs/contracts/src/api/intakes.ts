@@ -150,7 +150,16 @@ export interface IntakeView {
   /** May be confirmed now: read, and nothing blocks. */
   isConfirmable: boolean;
   /** After scoring: what came of it. */
-  outcome: { lotsScored: number; lotsHeld: { holdId: number; lotNumber: string; sentence: string }[] } | null;
+  outcome: IntakeOutcome | null;
+}
+
+export interface IntakeOutcome {
+  lotsScored: number;
+  lotsHeld: { holdId: number; lotNumber: string; sentence: string }[];
+  /** Its lots that have no score now, by channel and reason; most first. */
+  notScored: { channel: Named; reason: string; sentence: string; lots: number }[];
+  /** Lots outside their control limits that are not held, since they were made before their channel's first plan was approved. */
+  beforeFirstPlan: { id: number; number: string }[];
 }
 
 /** One row of GET lines/:id/intakes. */
