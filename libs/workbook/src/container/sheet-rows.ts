@@ -170,7 +170,8 @@ class SheetParser {
     const format = this.book.formats[this.style] ?? GENERAL;
     const { value } = this;
     if (value === '' || (this.type === 'n' && value.trim() === '')) {
-      return this.isFormula && !this.hasValue
+      // An empty text as result is said to be one (t="str"); an empty value without a type is a result nobody worked out.
+      return this.isFormula && (!this.hasValue || this.type === 'n')
         ? { kind: 'formula-without-result', number: NaN, text: '', format }
         : undefined;
     }
