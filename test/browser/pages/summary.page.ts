@@ -16,6 +16,10 @@ export class SummaryPage {
     return this.page.getByRole('button', { name: 'Make it anew', exact: true }).click();
   }
 
+  makeAnewAndSend(): Promise<void> {
+    return this.page.getByRole('button', { name: 'Make it anew and send' }).click();
+  }
+
   /** The name of the workbook that comes. */
   async downloadWorkbook(): Promise<string> {
     const [download] = await Promise.all([
