@@ -8,6 +8,7 @@ import * as outboxAndAudit from './migrations/20261201090500_create_outbox_and_a
 import * as robustPlans from './migrations/20261201131000_add_robust_to_plan_revisions';
 import * as setUpAndPeople from './migrations/20261201140000_add_set_up_and_people';
 import * as auditIndexes from './migrations/20261201141500_index_audit_by_person_and_thing';
+import * as supersedeAndWithdrawal from './migrations/20261201151000_add_supersede_and_withdrawal';
 import * as intakeAnswers from './migrations/20261201152000_add_intake_answers';
 import * as mailsOfNoPlant from './migrations/20261201185200_let_mails_be_of_no_plant';
 
@@ -22,6 +23,7 @@ const MIGRATIONS: Record<string, Knex.Migration> = {
   '20261201131000_add_robust_to_plan_revisions': robustPlans,
   '20261201140000_add_set_up_and_people': setUpAndPeople,
   '20261201141500_index_audit_by_person_and_thing': auditIndexes,
+  '20261201151000_add_supersede_and_withdrawal': supersedeAndWithdrawal,
   '20261201152000_add_intake_answers': intakeAnswers,
   '20261201185200_let_mails_be_of_no_plant': mailsOfNoPlant,
 };

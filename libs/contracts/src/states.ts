@@ -1,7 +1,16 @@
-export const INTAKE_STATES = ['received', 'needs_attention', 'queued', 'working', 'scored', 'refused'] as const;
+export const INTAKE_STATES = [
+  'received',
+  'needs_attention',
+  'queued',
+  'working',
+  'scored',
+  'refused',
+  'withdrawn',
+] as const;
 export type IntakeState = (typeof INTAKE_STATES)[number];
 
-export const HOLD_STATES = ['open', 'decided'] as const;
+/** A hold is withdrawn, without anybody's decision, with the intake that alone led to it. */
+export const HOLD_STATES = ['open', 'decided', 'withdrawn'] as const;
 export type HoldState = (typeof HOLD_STATES)[number];
 
 export const DISPOSITIONS = ['release', 'scrap', 'rework', 'concession', 'regrade'] as const;

@@ -1,4 +1,4 @@
-import type { Disposition } from '@app/contracts';
+import type { Disposition, HoldState } from '@app/contracts';
 import { findRow, type Queryable, rows, type Transaction } from './database';
 
 export interface HoldForDecision {
@@ -10,7 +10,7 @@ export interface HoldForDecision {
   lotNumber: string;
   quantity: number | null;
   quantityUnit: string | null;
-  state: 'open' | 'decided';
+  state: HoldState;
   evidenceVersion: number;
   engineerMayRelease: boolean;
   isForControlLimitsAlone: boolean;

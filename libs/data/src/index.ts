@@ -59,3 +59,4 @@ export * from './summary-week';
 export * from './layouts';
 export * from './api-tokens';
 export * from './confirm-intake';
+export * from './compare-intake';

@@ -52,6 +52,8 @@ describe('intakes', () => {
     lotIds: [],
     rowsUsed: 7,
     rowsAlreadyThere: 1,
+    rowsSuperseding: 0,
+    readingsSuperseding: 0,
     rowsNotUsed: 2,
     readingsStored: 7,
     readingsAlreadyThere: 1,
@@ -94,7 +96,7 @@ describe('intakes', () => {
     const id = await receive();
     await place.db.transaction(async (tx) => {
       await updateIntakeRead(tx, id, read);
-      await updateIntakeConfirmed(tx, id, plant.people.engineer2.id, AT);
+      await updateIntakeConfirmed(tx, id, { by: plant.people.engineer2.id, at: AT });
       await updateIntakeStored(tx, id, { ...counts, at: AT });
       await updateIntakeScored(tx, id, AT);
     });
@@ -120,7 +122,7 @@ describe('intakes', () => {
   it('are refused with the sentence, but not once they are scored', async () => {
     const [refused, scored] = [await receive(), await receive()];
     await place.db.transaction(async (tx) => {
-      await updateIntakeConfirmed(tx, scored, plant.people.engineer.id, AT);
+      await updateIntakeConfirmed(tx, scored, { by: plant.people.engineer.id, at: AT });
       await updateIntakeStored(tx, scored, { ...counts, rowsUsed: 0, rowsAlreadyThere: 0, rowsNotUsed: 0, at: AT });
       await updateIntakeScored(tx, scored, AT);
       for (const id of [refused, scored]) await updateIntakeRefused(tx, id, 'The file is empty.');
@@ -197,7 +199,7 @@ describe('intakes', () => {
       const id = await receive();
       const storing = place.db.transaction(async (tx) => {
         await updateIntakeRead(tx, id, read);
-        await updateIntakeConfirmed(tx, id, plant.people.engineer.id, AT);
+        await updateIntakeConfirmed(tx, id, { by: plant.people.engineer.id, at: AT });
         await updateIntakeStored(tx, id, { ...counts, rowsUsed: 6, at: AT });
       });
       await refused(storing, 'intakes_rows_check');

@@ -1,4 +1,4 @@
-import type { IntakeState, WorkbookAnswers } from '@app/contracts';
+import type { IntakeComparison, IntakeState, WorkbookAnswers } from '@app/contracts';
 import { findRow, type Queryable, rows, type Transaction } from './database';
 
 export interface IntakeRow {
@@ -31,6 +31,17 @@ export interface IntakeRow {
   answers: WorkbookAnswers;
   /** It is confirmed for its receiver as soon as it is read, if nothing is left to say. */
   confirmsItself: boolean;
+  /** Held against what was stored when it was read or last looked at; null before that. */
+  comparison: IntakeComparison | null;
+  /** Where a stored reading has another value: it stands, or the workbook's supersedes it. */
+  differing: 'keep' | 'supersede';
+  rowsSuperseding: number;
+  /** A part of `readingsStored`. */
+  readingsSuperseding: number;
+  withdrawnBy: number | null;
+  withdrawnByName: string | null;
+  withdrawnAt: Date | null;
+  withdrawalReason: string | null;
 }
 
 export interface IntakeProblemRow {
@@ -49,9 +60,11 @@ const COLUMNS = `
   i.readings_already_there as "readingsAlreadyThere", i.received_by as "receivedBy", r.name as "receivedByName",
   i.received_at as "receivedAt", i.confirmed_by as "confirmedBy", c.name as "confirmedByName", i.confirmed_at as "confirmedAt",
   i.readings_stored_at as "readingsStoredAt", i.channel_ids::text[]::float8[] as "channelIds", i.scored_at as "scoredAt",
-  i.answers, i.confirms_itself as "confirmsItself"`;
+  i.answers, i.confirms_itself as "confirmsItself", i.comparison - 'seen' as comparison, i.differing,
+  i.rows_superseding as "rowsSuperseding", i.readings_superseding as "readingsSuperseding", i.withdrawn_by as "withdrawnBy",
+  w.name as "withdrawnByName", i.withdrawn_at as "withdrawnAt", i.withdrawal_reason as "withdrawalReason"`;
 const SOURCE = `from intakes i join lines l on l.id = i.line_id join people r on r.id = i.received_by
-  left join people c on c.id = i.confirmed_by`;
+  left join people c on c.id = i.confirmed_by left join people w on w.id = i.withdrawn_by`;
 
 /** Stores the workbook whole: row, hash and bytes in the caller's transaction. */
 export async function insertIntake(
@@ -150,7 +163,14 @@ export async function updateIntakeReadAgain(tx: Transaction, id: number, answers
   await tx('intake_problems').where({ intake_id: id }).delete();
   await tx('intakes')
     .where({ id, state: 'needs_attention' })
-    .update({ state: 'received', answers: JSON.stringify(answers), report: null, rows_read: 0, rows_not_used: 0 });
+    .update({
+      state: 'received',
+      answers: JSON.stringify(answers),
+      report: null,
+      comparison: null,
+      rows_read: 0,
+      rows_not_used: 0,
+    });
 }
 
 export async function updateIntakeRefused(tx: Transaction, id: number, failure: string): Promise<void> {
@@ -160,8 +180,12 @@ export async function updateIntakeRefused(tx: Transaction, id: number, failure: 
     .update({ state: 'refused', failure });
 }
 
-export async function updateIntakeConfirmed(tx: Transaction, id: number, by: number, at: Date): Promise<void> {
-  await tx('intakes').where({ id }).update({ state: 'queued', confirmed_by: by, confirmed_at: at });
+export async function updateIntakeConfirmed(
+  tx: Transaction,
+  id: number,
+  { by, at, differing = 'keep' }: { by: number; at: Date; differing?: IntakeRow['differing'] },
+): Promise<void> {
+  await tx('intakes').where({ id }).update({ state: 'queued', confirmed_by: by, confirmed_at: at, differing });
 }
 
 /** Records, in the transaction that stored them, what became of a confirmed intake's rows. */
@@ -173,9 +197,11 @@ export async function updateIntakeStored(
     lotIds: number[];
     rowsUsed: number;
     rowsAlreadyThere: number;
+    rowsSuperseding: number;
     rowsNotUsed: number;
     readingsStored: number;
     readingsAlreadyThere: number;
+    readingsSuperseding: number;
     at: Date;
   },
 ): Promise<void> {
@@ -185,9 +211,11 @@ export async function updateIntakeStored(
     lot_ids: stored.lotIds,
     rows_used: stored.rowsUsed,
     rows_already_there: stored.rowsAlreadyThere,
+    rows_superseding: stored.rowsSuperseding,
     rows_not_used: stored.rowsNotUsed,
     readings_stored: stored.readingsStored,
     readings_already_there: stored.readingsAlreadyThere,
+    readings_superseding: stored.readingsSuperseding,
     readings_stored_at: stored.at,
   });
 }

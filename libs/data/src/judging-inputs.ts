@@ -43,6 +43,8 @@ interface LotRow {
   isSettled: boolean;
 }
 
+const IS_TO_REJUDGE = `exists (select 1 from lots_to_rejudge j where j.channel_id = lc.channel_id and j.lot_id = lc.lot_id)`;
+
 /** Lots whose blocks are needed are longer than this share of T; the others are one point (one lot, one point). */
 const ONE_POINT_SHARE = 0.1;
 
@@ -67,7 +69,8 @@ async function listLotRows(
          and not exists (select 1 from holds h join decision_parts p on p.hold_id = h.id where h.lot_id = lc.lot_id and p.disposition = 'scrap')
          and not exists (select 1 from exclusions e where e.channel_id = lc.channel_id and e.lot_id = lc.lot_id and not e.is_withdrawn
            and not exists (select 1 from exclusions c where c.corrects_id = e.id)) as pulls,
-       coalesce(not v.is_provisional and v.not_scored_reason is distinct from 'no_plan_in_force' and v.reading_count = lc.count, false) as "isSettled"
+       coalesce(not v.is_provisional and v.not_scored_reason is distinct from 'no_plan_in_force' and v.reading_count = lc.count
+         and not ${IS_TO_REJUDGE}, false) as "isSettled"
      from lot_channels lc
      left join specifications s on s.id = lc.specification_id
      left join verdicts v on v.channel_id = lc.channel_id and v.lot_id = lc.lot_id and v.is_current
@@ -116,7 +119,7 @@ async function listSegmentStarts(db: Queryable, channelId: number): Promise<numb
   return found.map((row) => row.at);
 }
 
-/** The level that movements are counted from, kept with the segment's last fit by the same plan. */
+/** The level that movements are counted from, kept with the segment's last fit by the same plan; none that knew an intake withdrawn since. */
 async function findStartLevel(
   db: Queryable,
   channelId: number,
@@ -127,6 +130,8 @@ async function findStartLevel(
     `select f.start_level as "startLevel" from fits f join plan_revisions p on p.id = f.plan_revision_id and p.state = 'in_force'
      where f.channel_id = :channelId and f.start_level is not null
        and f.segment_starts_at is not distinct from to_timestamp(cast(:segmentStartsAt as float8))
+       and not exists (select 1 from intakes w where w.plant_id = f.plant_id and w.state = 'withdrawn' and w.channel_ids @> array[f.channel_id]
+         and f.judged_at between w.readings_stored_at and w.withdrawn_at)
      order by f.judged_at desc, f.id desc limit 1`,
     { channelId, segmentStartsAt },
   );
@@ -137,7 +142,7 @@ const DEFAULT_PERIOD_SECONDS = 3 * 86_400;
 
 /**
  * Everything a judging of the channel needs, read in one snapshot by the caller's transaction. Segments without a lot to judge are left
- * out. Settled lots are judged again only from `rejudgeFrom` (epoch s) on, or when readings came late to them.
+ * out. Settled lots are judged again only from `rejudgeFrom` (epoch s) on, or when something is owed to them (`lots_to_rejudge`).
  */
 export async function getChannelInputs(
   db: Queryable,
@@ -168,7 +173,8 @@ export async function getChannelInputs(
     `select extract(epoch from min(coalesce(lc.mean_at, lc.first_at)))::float8 as "from" from lot_channels lc
      left join verdicts v on v.channel_id = lc.channel_id and v.lot_id = lc.lot_id and v.is_current
      where lc.channel_id = :channelId and lc.first_at is not null
-       and (v.id is null or v.is_provisional or v.not_scored_reason = 'no_plan_in_force' or v.reading_count <> lc.count or lc.last_at >= to_timestamp(cast(:rejudgeFrom as float8)))`,
+       and (v.id is null or v.is_provisional or v.not_scored_reason = 'no_plan_in_force' or v.reading_count <> lc.count
+         or ${IS_TO_REJUDGE} or lc.last_at >= to_timestamp(cast(:rejudgeFrom as float8)))`,
     { channelId, rejudgeFrom },
   );
   const inputs: ChannelInputs = { channelId, ...channel, plan: plan ?? null, segments: [] };

@@ -59,7 +59,7 @@ const MOST_LOTS = 5000;
 export async function listLotNumbers(db: Queryable, lineId: number): Promise<string[]> {
   const found = await rows<{ number: string }>(
     db,
-    `select number from (select distinct on (number) number, starts_at from lots where line_id = :lineId order by number, starts_at desc) l
+    `select number from (select distinct on (number) number, starts_at from lots where line_id = :lineId and withdrawn_at is null order by number, starts_at desc) l
      order by starts_at desc limit ${MOST_LOTS}`,
     { lineId },
   );

@@ -65,7 +65,7 @@ const lastDisposition = (disposition: Disposition) =>
   `(select p.disposition from holds h join decision_parts p on p.hold_id = h.id where h.lot_id = l.id
     order by p.decision_id desc, p.id limit 1) = '${disposition}'`;
 const HOLD_OPEN = `exists (select 1 from holds h where h.lot_id = l.id and h.state = 'open')`;
-const EVER_HELD = `exists (select 1 from holds h where h.lot_id = l.id)`;
+const EVER_HELD = `exists (select 1 from holds h where h.lot_id = l.id and h.state <> 'withdrawn')`;
 
 /** On one of the channels on which the lot was measured. */
 const onChannel = (condition: string) =>
@@ -100,10 +100,11 @@ const NOT_SCORED_ON = `v.score is null and lc.channel_id = :notScoredOn
 const TIME_CONDITIONS: Record<(typeof LOT_TIMES)[number], (within: (instant: string) => string) => string> = {
   started: (within) => within('l.starts_at'),
   ended: (within) => within('l.ends_at'),
-  held: (within) => `exists (select 1 from holds h where h.lot_id = l.id and ${within('h.opened_at')})`,
+  held: (within) =>
+    `exists (select 1 from holds h where h.lot_id = l.id and h.state <> 'withdrawn' and ${within('h.opened_at')})`,
   decided: (within) => decidedWhere(within('d.decided_at')),
   open: () => `exists (select 1 from holds h left join decision_holds dh on dh.hold_id = h.id left join decisions d on d.id = dh.decision_id
-    where h.lot_id = l.id and (h.opened_at < :to or cast(:to as timestamptz) is null) and (d.id is null or d.decided_at >= :to))`,
+    where h.lot_id = l.id and h.state <> 'withdrawn' and (h.opened_at < :to or cast(:to as timestamptz) is null) and (d.id is null or d.decided_at >= :to))`,
 };
 const decidedWhere = (condition: string) =>
   `exists (select 1 from holds h join decision_parts t on t.hold_id = h.id join decisions d on d.id = t.decision_id
@@ -129,6 +130,7 @@ function where(filter: LotFilter): { sql: string; bindings: Record<string, unkno
   const isTimed = from !== undefined || to !== undefined || by !== 'started';
   const conditions = [
     'l.plant_id = any(:plantIds)',
+    'l.withdrawn_at is null',
     filter.lineId !== undefined && 'l.line_id = :lineId',
     isTimed && TIME_CONDITIONS[by](bounds),
     disposition !== undefined && by !== 'decided' && decidedWhere('true'),
@@ -177,7 +179,7 @@ export function listLots(
        select distinct on (v.lot_id) v.lot_id, c.id, c.name, v.score from verdicts v join channels c on c.id = v.channel_id
        where v.is_current and v.score is not null and v.lot_id in (select id from page) order by v.lot_id, abs(v.score) desc, c.id
      ), held as (
-       select distinct on (lot_id) lot_id, id, state, opened_at from holds where lot_id in (select id from page)
+       select distinct on (lot_id) lot_id, id, state, opened_at from holds where lot_id in (select id from page) and state <> 'withdrawn'
        order by lot_id, state = 'open' desc, id desc
      )
      select l.id, l.number, n.id as "lineId", n.name as "lineName", p.code as product, l.quantity, l.quantity_unit as "quantityUnit",

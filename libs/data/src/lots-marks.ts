@@ -53,7 +53,8 @@ export async function mapLotMarks(
        where v.is_current and v.lot_id = any(:lotIds) ${channelId === null ? '' : 'and v.channel_id = :channelId'}
        group by v.lot_id
      ), held as (
-       select distinct on (lot_id) lot_id, state from holds where lot_id = any(:lotIds) order by lot_id, state = 'open' desc, id desc
+       select distinct on (lot_id) lot_id, state from holds where lot_id = any(:lotIds) and state <> 'withdrawn'
+       order by lot_id, state = 'open' desc, id desc
      ), decided as (
        select distinct on (h.lot_id) h.lot_id, p.disposition from holds h join decision_parts p on p.hold_id = h.id
        where h.lot_id = any(:lotIds) order by h.lot_id, p.decision_id desc, p.id

@@ -47,7 +47,8 @@ interface Place {
 
 /**
  * Opens one hold a lot with all its causes, adds new causes to open holds, and counts up the evidence of open holds whose verdicts
- * changed. A cause that led to a hold once, open or decided, does not lead to another: people decided on it.
+ * changed. A cause that led to a hold once, open or decided, does not lead to another: people decided on it; unless readings that they
+ * decided on were superseded since.
  */
 export async function holdLots(
   tx: Transaction,
@@ -156,7 +157,8 @@ async function findPlaces(tx: Transaction, candidates: HoldCandidate[]): Promise
     `select k.lot_id as "lotId", l.number as "lotNumber", l.line_id as "lineId", l.plant_id as "plantId", l.ends_at as "endsAt",
        c.id as "channelId", c.name as "channelName", x.unit, x.resolution, s.lower, s.upper, k.signal,
        exists (select 1 from hold_causes h join holds o on o.id = h.hold_id
-         where o.lot_id = k.lot_id and h.channel_id = k.channel_id and h.signal = k.signal) as "isKnownCause"
+         where o.lot_id = k.lot_id and h.channel_id = k.channel_id and h.signal = k.signal and (o.state = 'open' or (o.state = 'decided'
+           and not exists (select 1 from lots_to_rejudge j where j.channel_id = k.channel_id and j.lot_id = k.lot_id and j.because = 'superseded')))) as "isKnownCause"
      from jsonb_to_recordset(:keys) as k(lot_id bigint, channel_id bigint, signal text)
      join lots l on l.id = k.lot_id join channels c on c.id = k.channel_id join characteristics x on x.id = c.characteristic_id
      join lot_channels lc on lc.channel_id = k.channel_id and lc.lot_id = k.lot_id left join specifications s on s.id = lc.specification_id`,

@@ -24,7 +24,7 @@ export function listStripLots(db: Queryable, lineId: number, shiftCount: number)
     db,
     `with recent as (
        select l.id, l.plant_id, l.number, l.starts_at, l.ends_at, p.time_zone, l.starts_at at time zone p.time_zone as wall
-       from lots l join plants p on p.id = l.plant_id where l.line_id = :lineId
+       from lots l join plants p on p.id = l.plant_id where l.line_id = :lineId and l.withdrawn_at is null
        order by l.starts_at desc, l.id desc limit :mostLots
      ), placed as (
        select r.*, coalesce(s.name, 'outside the shift calendar') as shift_name,

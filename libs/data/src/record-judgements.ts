@@ -53,7 +53,20 @@ export async function recordJudgements(
       }
     }
   }
-  return { verdictCount, held: await holdLots(tx, candidates, [...changedLotIds], context) };
+  const held = await holdLots(tx, candidates, [...changedLotIds], context);
+  await deleteLooks(tx, judged);
+  return { verdictCount, held };
+}
+
+/** The lots that were judged are no longer owed another look. */
+async function deleteLooks(tx: Transaction, judged: JudgedChannel[]): Promise<void> {
+  for (const { channelId, segments } of judged) {
+    const lotIds = segments.flatMap(({ judgement }) => judgement.lots.map(({ lotId }) => lotId));
+    await tx.raw('delete from lots_to_rejudge where channel_id = :channelId and lot_id = any(:lotIds)', {
+      channelId,
+      lotIds,
+    });
+  }
 }
 
 async function lockUnchanged(tx: Transaction, judged: JudgedChannel[]): Promise<void> {
@@ -135,7 +148,7 @@ interface WrittenVerdict extends LotJudgement {
   formerState: string | null;
 }
 
-/** Adds a verdict for each lot whose verdict says something new, and makes it the current one. */
+/** Adds a verdict for each lot whose verdict says something new or of which readings were superseded, and makes it the current one. */
 async function insertVerdicts(
   tx: Transaction,
   channel: JudgedChannel,
@@ -150,7 +163,8 @@ async function insertVerdicts(
     `select i.lot_id as "lotId", v.id as "formerId", v.control_state as "formerState"
      from jsonb_to_recordset(:incoming) as i(${RECORD}) join lot_channels lc on lc.channel_id = :channelId and lc.lot_id = i.lot_id
      left join verdicts v on v.channel_id = :channelId and v.lot_id = i.lot_id and v.is_current
-     where v.id is null or v.reading_count <> lc.count or v.specification_id is distinct from lc.specification_id
+     where v.id is null or exists (select 1 from lots_to_rejudge j where j.channel_id = :channelId and j.lot_id = i.lot_id and j.because = 'superseded')
+       or v.reading_count <> lc.count or v.specification_id is distinct from lc.specification_id
        or (v.control_state, v.is_provisional, v.not_scored_reason, v.score, v.score_limit, v.lot_mean, v.specification_state, v.constant_state)
        is distinct from (i.control_state, i.is_provisional, i.not_scored_reason, i.score, i.score_limit, i.lot_mean, i.specification_state, i.constant_state)`,
     { incoming, channelId: channel.channelId },

@@ -36,7 +36,7 @@ export function listRecordLots(
        select lc.lot_id, lc.first_at, coalesce(lc.mean_at, lc.first_at + (lc.last_at - lc.first_at) / 2) as at, lc.mean,
          lc.specification_id, v.baseline, v.control_low, v.control_high, v.score,
          coalesce(v.control_state <> 'within_control_limits' or v.specification_state = 'outside_specification', false)
-           or exists (select 1 from holds h where h.lot_id = lc.lot_id) as stands_out
+           or exists (select 1 from holds h where h.lot_id = lc.lot_id and h.state <> 'withdrawn') as stands_out
        from lot_channels lc left join verdicts v on v.channel_id = lc.channel_id and v.lot_id = lc.lot_id and v.is_current
        where lc.channel_id = :channelId and lc.last_at >= :from
          and lc.first_at between cast(:from as timestamptz) - cast(:longestLot as interval) and :to

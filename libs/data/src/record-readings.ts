@@ -40,7 +40,7 @@ const FROM_READINGS = `
     max(r.value - coalesce(s.nominal, :fallbackNominal)) as high
   from readings r join lot_channels lc on lc.channel_id = r.channel_id and lc.lot_id = r.lot_id
   left join specifications s on s.id = lc.specification_id
-  where r.channel_id = :channelId and r.superseded_by is null and r.measured_at between :from and :to and r.value is not null
+  where r.channel_id = :channelId and r.superseded_by is null and r.withdrawn_at is null and r.measured_at between :from and :to and r.value is not null
   group by 1 order by 1`;
 
 const FROM_LOTS = `

@@ -20,8 +20,8 @@ export async function findRecordExtent(
 ): Promise<{ first: Date; last: Date } | undefined> {
   const row = await findRow<{ first: Date | null; last: Date | null }>(
     db,
-    `select (select measured_at from readings where channel_id = :channelId and superseded_by is null order by measured_at limit 1) as first,
-       (select measured_at from readings where channel_id = :channelId and superseded_by is null order by measured_at desc limit 1) as last`,
+    `select (select measured_at from readings where channel_id = :channelId and superseded_by is null and withdrawn_at is null order by measured_at limit 1) as first,
+       (select measured_at from readings where channel_id = :channelId and superseded_by is null and withdrawn_at is null order by measured_at desc limit 1) as last`,
     { channelId },
   );
   return row?.first && row.last ? { first: row.first, last: row.last } : undefined;

@@ -105,7 +105,7 @@ export async function updateSpecificationsOfLots(
      from touched t cross join lateral (
        select count(*) filter (where r.value < t.lower) as count_below, count(*) filter (where r.value > t.upper) as count_above
        from readings r where r.channel_id = t.channel_id and r.measured_at between t.starts_at and t.ends_at and r.lot_id = t.lot_id
-         and r.superseded_by is null
+         and r.superseded_by is null and r.withdrawn_at is null
      ) w
      where lc.channel_id = t.channel_id and lc.lot_id = t.lot_id returning lc.channel_id as "channelId"`,
     changed,

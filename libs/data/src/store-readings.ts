@@ -1,9 +1,13 @@
+import { updateInputsChanged } from './breaks';
 import { rows, type Transaction } from './database';
+import { DIFFERS, gatherIncoming, type IntakePlace, IS_NEW, lockLineReadings } from './incoming-readings';
 import { type IntakeProblemRow, insertIntakeProblems } from './intakes';
+import { updateLotChannels } from './lot-sums';
 
 /**
  * Moves an intake's staged readings into `readings`, set by set, never a query per row: lots and their places are made, readings that
- * are there already change nothing and are counted, and what each touched lot comes to on each channel is worked out again.
+ * are there already change nothing and are counted, or are superseded where that was asked, and what each touched lot comes to on each
+ * channel is worked out again.
  */
 
 export interface StoredReadings {
@@ -11,58 +15,87 @@ export interface StoredReadings {
   lotIds: number[];
   rowsUsed: number;
   rowsAlreadyThere: number;
+  rowsSuperseding: number;
   rowsNotUsed: number;
+  /** With those that supersede others. */
   readingsStored: number;
   readingsAlreadyThere: number;
+  readingsSuperseding: number;
+  superseded: SupersededPlace[];
+}
+
+/** What became of a lot on a channel of which readings were superseded. */
+export interface SupersededPlace {
+  lotId: number;
+  lotNumber: string;
+  channelName: string;
+  readings: number;
+  meanBefore: number | null;
+  meanAfter: number | null;
+  isDecided: boolean;
 }
 
 const MAX_LISTED = 500;
 
-/** So that the readings of a large workbook are sorted in memory. */
-const SORT_MEMORY_MB = 64;
+/** Of a row of `incoming`: it is stored now. */
+const IS_STORED = `((${IS_NEW}) or supersedes)`;
 
 export async function storeReadings(
   tx: Transaction,
   intake: { id: number; plantId: number; lineId: number; rowsRead: number },
+  /** Of readings that differ, those stored up to this id are superseded; null: what is stored stands. */
+  supersedable: number | null = null,
 ): Promise<StoredReadings> {
-  await tx.raw(`select pg_advisory_xact_lock(hashtext('store readings'), cast(:lineId as integer))`, {
-    lineId: intake.lineId,
-  });
-  await tx.raw(`set local work_mem = '${SORT_MEMORY_MB}MB'`);
-  const ids: Ids = { intakeId: intake.id, plantId: intake.plantId, lineId: intake.lineId };
+  await lockLineReadings(tx, intake.lineId);
+  const ids: IntakePlace = { intakeId: intake.id, plantId: intake.plantId, lineId: intake.lineId };
   await makeLots(tx, ids);
-  await gatherIncoming(tx, ids);
+  await gatherIncoming(tx, ids, supersedable);
+  const touched = await lockTouched(tx);
   await tellDropped(tx, ids);
   await tellDiffering(tx, ids);
+  const before = supersedable === null ? [] : await listSuperseded(tx);
   await insertReadings(tx, ids);
+  if (before.length > 0) await supersede(tx, ids);
   await updateLotSpans(tx, ids);
-  await updateLotChannels(tx);
+  await updateLotChannels(tx, `select distinct channel_id, lot_id from incoming where ${IS_STORED}`);
+  const superseded = await withMeansAfter(tx, before);
   const counts = await countRows(tx);
-  const [touched] = await rows<{ channelIds: number[]; lotIds: number[] }>(
-    tx,
-    `select coalesce(array_agg(distinct channel_id), '{}') as "channelIds", coalesce(array_agg(distinct lot_id), '{}') as "lotIds"
-     from incoming where ${IS_NEW}`,
-  );
-  const channelIds = touched.channelIds.map(Number);
-  await tx.raw('select 1 from channels where id = any(:channelIds) order by id for update', { channelIds });
-  await tx.raw('update channels set inputs_version = inputs_version + 1 where id = any(:channelIds)', { channelIds });
+  await oweLooks(tx, ids);
+  await updateInputsChanged(tx, touched.channelIds);
   await tx('staged_readings').where({ intake_id: intake.id }).delete();
   await tx.raw('drop table incoming');
+  const { rowsUsed, rowsAlreadyThere, rowsSuperseding } = counts;
   return {
-    channelIds,
-    lotIds: touched.lotIds.map(Number),
-    rowsUsed: counts.rowsUsed,
-    rowsAlreadyThere: counts.rowsAlreadyThere,
-    rowsNotUsed: intake.rowsRead - counts.rowsUsed - counts.rowsAlreadyThere,
-    readingsStored: counts.readingsStored,
-    readingsAlreadyThere: counts.readingsAlreadyThere,
+    ...touched,
+    ...counts,
+    rowsNotUsed: intake.rowsRead - rowsUsed - rowsAlreadyThere - rowsSuperseding,
+    superseded,
   };
 }
 
-type Ids = { intakeId: number; plantId: number; lineId: number };
+/** The channels and lots that get readings; the channels are locked before any of their rows, as recording verdicts does. */
+async function lockTouched(tx: Transaction): Promise<{ channelIds: number[]; lotIds: number[] }> {
+  const [touched] = await rows<{ channelIds: number[]; lotIds: number[] }>(
+    tx,
+    `select coalesce(array_agg(distinct channel_id), '{}') as "channelIds", coalesce(array_agg(distinct lot_id), '{}') as "lotIds"
+     from incoming where ${IS_STORED}`,
+  );
+  const channelIds = touched.channelIds.map(Number);
+  await tx.raw('select 1 from channels where id = any(:channelIds) order by id for update', { channelIds });
+  return { channelIds, lotIds: touched.lotIds.map(Number) };
+}
 
-/** Of a row of `incoming`: it is stored now. */
-const IS_NEW = 'not is_there and drop_code is null';
+/** The next judging looks at the lots that got readings, although their verdicts may be settled; at lots without one it looks anyway. */
+async function oweLooks(tx: Transaction, ids: IntakePlace): Promise<void> {
+  await tx.raw(
+    `insert into lots_to_rejudge (plant_id, channel_id, lot_id, because)
+     select :plantId, i.channel_id, i.lot_id, case when i.supersedes then 'superseded' else 'added' end
+     from (select channel_id, lot_id, bool_or(supersedes) as supersedes from incoming where ${IS_STORED} group by 1, 2) i
+     join verdicts v on v.channel_id = i.channel_id and v.lot_id = i.lot_id and v.is_current
+     on conflict (channel_id, lot_id) do update set because = excluded.because where excluded.because = 'superseded'`,
+    ids,
+  );
+}
 
 /** What the first row that gives a quantity says, with its unit; none where the workbook names none. Nothing is a lot of 0. */
 const FIRST_QUANTITY = `
@@ -70,10 +103,10 @@ const FIRST_QUANTITY = `
   (array_agg(coalesce(quantity_unit, '') order by ordinal) filter (where quantity > 0))[1] as quantity_unit`;
 
 /**
- * Makes the lots that are new. The first row that names a product says the lot's; rows that name another are none of it. Rows alike but for
+ * Makes the lots that are new, or were withdrawn. The first row that names a product says the lot's; rows that name another are none of it. Rows alike but for
  * time are gathered first, so that only some few a lot are put in order.
  */
-async function makeLots(tx: Transaction, ids: Ids): Promise<void> {
+async function makeLots(tx: Transaction, ids: IntakePlace): Promise<void> {
   await tx.raw(
     `with alike as (
        select lot, product, quantity, quantity_unit, min(ordinal) as ordinal, min(measured_at) as starts_at, max(measured_at) as ends_at
@@ -86,51 +119,15 @@ async function makeLots(tx: Transaction, ids: Ids): Promise<void> {
      select :plantId, :lineId, lot, lot_product_id, ${FIRST_QUANTITY}, min(starts_at), max(ends_at)
      from known where lot_product_id is not null and (product_id is null or product_id = lot_product_id)
      group by lot, lot_product_id
-     on conflict (line_id, number, run) do nothing`,
+     on conflict (line_id, number, run) do update set product_id = excluded.product_id, quantity = excluded.quantity,
+       quantity_unit = excluded.quantity_unit, starts_at = excluded.starts_at, ends_at = excluded.ends_at, withdrawn_at = null
+     where lots.withdrawn_at is not null`,
     ids,
   );
-}
-
-/**
- * The staged readings with their lots, occurrence numbers, what is stored already, and why a reading cannot be used: no product for a new
- * lot, another product than the lot has, a serial or position said twice at one instant. Occurrence counts equal stamps by the order of rows.
- */
-async function gatherIncoming(tx: Transaction, ids: Ids): Promise<void> {
-  const [span] = await rows<{ channelIds: number[]; from: Date; to: Date }>(
-    tx,
-    `select array_agg(distinct channel_id) as "channelIds", min(measured_at) as "from", max(measured_at) as "to"
-     from staged_readings where intake_id = :intakeId`,
-    ids,
-  );
-  await tx.raw(
-    `create temporary table incoming on commit drop as
-     with known_lots as (
-       select distinct on (number) id, number, product_id from lots
-       where line_id = :lineId and number in (select lot from staged_readings where intake_id = :intakeId)
-       order by number, run desc
-     ), staged as (
-       select s.ordinal, s.sheet, s."row", s."column", s.lot, p.id as product_id, s.product as product_text, s.quantity, s.quantity_unit,
-         s.channel_id, s.measured_at, s.value, s.censoring, coalesce(s.serial, '') as serial, coalesce(s.position, '') as position,
-         row_number() over (partition by s.channel_id, s.measured_at, s.lot, coalesce(s.serial, ''), coalesce(s.position, '')
-           order by s.ordinal)::integer as occurrence
-       from staged_readings s left join products p on p.plant_id = :plantId and p.code = s.product
-       where s.intake_id = :intakeId
-     ), placed as (
-       select s.*, l.id as lot_id, case when l.id is null then 'product-missing' when s.product_id <> l.product_id then 'product-differs'
-           when s.occurrence > 1 and (s.serial <> '' or s.position <> '') then 'repeated-in-file' end as drop_code
-       from staged s left join known_lots l on l.number = s.lot
-     )
-     select i.*, r.id is not null as is_there, r.value as stored_value, r.censoring as stored_censoring
-     from placed i left join readings r on i.drop_code is null and r.superseded_by is null and r.channel_id = i.channel_id
-       and r.measured_at = i.measured_at and r.lot_id = i.lot_id and r.serial = i.serial and r.position = i.position
-       and r.occurrence = i.occurrence and r.channel_id = any(:channelIds) and r.measured_at between :from and :to`,
-    { ...ids, channelIds: span.channelIds ?? [], from: span.from, to: span.to },
-  );
-  await tx.raw('analyze incoming (channel_id, lot_id, measured_at)');
 }
 
 /** Says of each reading that could not be used why not. */
-async function tellDropped(tx: Transaction, ids: Ids): Promise<void> {
+async function tellDropped(tx: Transaction, ids: IntakePlace): Promise<void> {
   const dropped = await rows<IntakeProblemRow & { lot: string; product: string | null; known: string | null }>(
     tx,
     `select i.sheet, i."row", i."column", i.drop_code as code, i.lot, i.product_text as product, p.code as known
@@ -161,12 +158,12 @@ async function tellDropped(tx: Transaction, ids: Ids): Promise<void> {
 }
 
 /** Where a stored value differs from the workbook's, it stands and the difference is said. */
-async function tellDiffering(tx: Transaction, ids: Ids): Promise<void> {
+async function tellDiffering(tx: Transaction, ids: IntakePlace): Promise<void> {
   const differing = await rows<{ sheet: string; row: number; column: string; stored: string; incoming: string }>(
     tx,
     `select sheet, "row", "column", coalesce(stored_value::text, 'off scale ' || stored_censoring) as stored,
        coalesce(value::text, 'off scale ' || censoring) as incoming
-     from incoming where is_there and (stored_value, stored_censoring) is distinct from (value, censoring) order by ordinal limit ${MAX_LISTED}`,
+     from incoming where ${DIFFERS} and not supersedes order by ordinal limit ${MAX_LISTED}`,
   );
   await insertIntakeProblems(
     tx,
@@ -183,7 +180,7 @@ async function tellDiffering(tx: Transaction, ids: Ids): Promise<void> {
   );
 }
 
-async function insertReadings(tx: Transaction, ids: Ids): Promise<void> {
+async function insertReadings(tx: Transaction, ids: IntakePlace): Promise<void> {
   await tx.raw(
     `insert into lot_channels (plant_id, line_id, channel_id, lot_id)
      select distinct cast(:plantId as bigint), cast(:lineId as bigint), channel_id, lot_id from incoming where ${IS_NEW}
@@ -192,7 +189,7 @@ async function insertReadings(tx: Transaction, ids: Ids): Promise<void> {
   );
   await tx.raw(
     `insert into intake_lots (plant_id, channel_id, lot_id, intake_id)
-     select distinct cast(:plantId as bigint), channel_id, lot_id, cast(:intakeId as bigint) from incoming where ${IS_NEW}`,
+     select distinct cast(:plantId as bigint), channel_id, lot_id, cast(:intakeId as bigint) from incoming where ${IS_STORED}`,
     ids,
   );
   await tx.raw(
@@ -201,9 +198,68 @@ async function insertReadings(tx: Transaction, ids: Ids): Promise<void> {
      from incoming where ${IS_NEW} order by channel_id, measured_at`,
     ids,
   );
+  await tx.raw(
+    `insert into intake_reliances (plant_id, intake_id, earlier_intake_id, readings)
+     select :plantId, :intakeId, stored_intake_id, count(*) from incoming where is_there and not supersedes group by stored_intake_id`,
+    ids,
+  );
+  await tx.raw(
+    `insert into intake_quantities (plant_id, intake_id, lot_id, quantity, quantity_unit)
+     select :plantId, :intakeId, lot_id, quantity, quantity_unit from (
+       select lot_id, ${FIRST_QUANTITY} from incoming where drop_code is null group by lot_id) q where quantity is not null`,
+    ids,
+  );
 }
 
-async function updateLotSpans(tx: Transaction, ids: Ids): Promise<void> {
+/** The lots and channels of which readings are superseded, with their means before. */
+function listSuperseded(tx: Transaction): Promise<(SupersededPlace & { channelId: number })[]> {
+  return rows(
+    tx,
+    `select i.lot_id as "lotId", l.number as "lotNumber", c.id as "channelId", c.name as "channelName", i.readings,
+       lc.mean as "meanBefore", lc.mean as "meanAfter",
+       exists (select 1 from holds h where h.lot_id = l.id and h.state = 'decided') as "isDecided"
+     from (select channel_id, lot_id, count(*) as readings from incoming where supersedes group by 1, 2) i
+     join lots l on l.id = i.lot_id join channels c on c.id = i.channel_id
+     join lot_channels lc on lc.channel_id = i.channel_id and lc.lot_id = i.lot_id order by l.starts_at, l.id, c.id`,
+  );
+}
+
+async function withMeansAfter(
+  tx: Transaction,
+  places: (SupersededPlace & { channelId: number })[],
+): Promise<SupersededPlace[]> {
+  if (places.length === 0) return [];
+  const means = await rows<{ key: string; mean: number | null }>(
+    tx,
+    `select lot_id || ' ' || channel_id as key, mean from lot_channels
+     where (channel_id, lot_id) in (select channel_id, lot_id from incoming where supersedes)`,
+  );
+  const after = new Map(means.map(({ key, mean }) => [key, mean]));
+  return places.map(({ channelId, ...place }) => ({
+    ...place,
+    meanAfter: after.get(`${place.lotId} ${channelId}`) ?? null,
+  }));
+}
+
+/** Stores the readings that differ and marks those in whose place they stand; their references are checked once both are there. */
+async function supersede(tx: Transaction, ids: IntakePlace): Promise<void> {
+  await tx.raw('set constraints readings_superseder_fkey deferred');
+  await tx.raw('alter table incoming add column new_id bigint');
+  await tx.raw(`update incoming set new_id = nextval(pg_get_serial_sequence('readings', 'id')) where supersedes`);
+  await tx.raw(
+    'update readings r set superseded_by = i.new_id from incoming i where i.supersedes and r.id = i.stored_id',
+  );
+  await tx.raw(
+    `insert into readings (id, plant_id, channel_id, lot_id, intake_id, measured_at, value, censoring, occurrence, serial, position)
+     overriding system value
+     select new_id, :plantId, channel_id, lot_id, :intakeId, measured_at, value, censoring, occurrence, serial, position
+     from incoming where supersedes order by new_id`,
+    ids,
+  );
+  await tx.raw('set constraints readings_superseder_fkey immediate');
+}
+
+async function updateLotSpans(tx: Transaction, ids: IntakePlace): Promise<void> {
   await tx.raw(
     `update lots l set starts_at = least(l.starts_at, n.starts_at), ends_at = greatest(l.ends_at, n.ends_at),
        quantity = coalesce(l.quantity, n.quantity), quantity_unit = coalesce(l.quantity_unit, n.quantity_unit)
@@ -215,61 +271,24 @@ async function updateLotSpans(tx: Transaction, ids: Ids): Promise<void> {
   );
 }
 
-/**
- * What each touched lot comes to on each touched channel, with its sixteen time blocks and the specification of its start. The readings
- * are looked up lot by lot through the identity index inside one statement: joined as a set, fresh tables mislead the planner.
- */
-async function updateLotChannels(tx: Transaction): Promise<void> {
-  await tx.raw(
-    `create temporary table touched on commit drop as
-     select i.channel_id, i.lot_id, l.starts_at, l.ends_at, s.id as specification_id, s.lower, s.upper
-     from (select distinct channel_id, lot_id from incoming where ${IS_NEW}) i
-     join lots l on l.id = i.lot_id join channels c on c.id = i.channel_id
-     left join specifications s on s.product_id = l.product_id and s.characteristic_id = c.characteristic_id and s.valid @> l.starts_at`,
-  );
-  await tx.raw('analyze touched');
-  await tx.raw(
-    `update lot_channels lc set count = w.count, censored_low = w.censored_low, censored_high = w.censored_high, first_at = w.first_at,
-       last_at = w.last_at, mean_at = w.mean_at, mean = w.mean, sum_squares = w.sum_squares, minimum = w.minimum, maximum = w.maximum,
-       count_below = w.count_below, count_above = w.count_above, specification_id = t.specification_id, blocks = w.blocks
-     from touched t cross join lateral (
-       with active as materialized (
-         select r.value, r.censoring, r.measured_at, date_part('epoch', r.measured_at) as at from readings r
-         where r.channel_id = t.channel_id and r.measured_at between t.starts_at and t.ends_at and r.lot_id = t.lot_id and r.superseded_by is null
-       ), span as materialized (
-         select min(at) as first_at, nullif(max(at) - min(at), 0) as length from active
-       ), blocks as (
-         select least(15, coalesce(floor(16 * (a.at - s.first_at) / s.length), 0))::integer as block, count(*) as count, avg(a.at) as at,
-           avg(a.value) as mean, var_pop(a.value) * count(*) as sum_squares
-         from active a cross join span s where a.value is not null group by 1
-       )
-       select count(value) as count, count(*) filter (where censoring = 'below') as censored_low,
-         count(*) filter (where censoring = 'above') as censored_high, min(measured_at) as first_at, max(measured_at) as last_at,
-         to_timestamp(avg(at) filter (where value is not null)) as mean_at, avg(value) as mean, var_pop(value) * count(value) as sum_squares,
-         min(value) as minimum, max(value) as maximum, count(*) filter (where value < t.lower) as count_below,
-         count(*) filter (where value > t.upper) as count_above,
-         (select jsonb_agg(jsonb_build_object('index', block, 'at', b.at, 'count', b.count, 'mean', b.mean, 'sumSquares', b.sum_squares) order by block)
-          from blocks b) as blocks
-       from active
-     ) w
-     where lc.channel_id = t.channel_id and lc.lot_id = t.lot_id`,
-  );
-  await tx.raw('drop table touched');
-}
-
-/** A sheet's row is used when it brought a reading, already there when all that it brings is there. */
+/** A sheet's row is used when it brought a reading, superseding when it took the place of one, already there when all of it is there. */
 async function countRows(tx: Transaction) {
   const [counts] = await rows<{
     rowsUsed: number;
     rowsAlreadyThere: number;
+    rowsSuperseding: number;
     readingsStored: number;
     readingsAlreadyThere: number;
+    readingsSuperseding: number;
   }>(
     tx,
-    `select count(*) filter (where stored > 0) as "rowsUsed", count(*) filter (where stored = 0 and there > 0) as "rowsAlreadyThere",
-       coalesce(sum(stored), 0)::bigint as "readingsStored", coalesce(sum(there), 0)::bigint as "readingsAlreadyThere"
+    `select count(*) filter (where new > 0) as "rowsUsed", count(*) filter (where new = 0 and superseding > 0) as "rowsSuperseding",
+       count(*) filter (where new = 0 and superseding = 0 and there > 0) as "rowsAlreadyThere",
+       coalesce(sum(new + superseding), 0)::bigint as "readingsStored", coalesce(sum(there), 0)::bigint as "readingsAlreadyThere",
+       coalesce(sum(superseding), 0)::bigint as "readingsSuperseding"
      from (
-       select count(*) filter (where ${IS_NEW}) as stored, count(*) filter (where is_there) as there
+       select count(*) filter (where ${IS_NEW}) as new, count(*) filter (where supersedes) as superseding,
+         count(*) filter (where is_there and not supersedes) as there
        from incoming group by sheet, "row"
      ) by_row`,
   );

@@ -35,8 +35,7 @@ export class DecisionsService {
     await this.access.requireThing(person.id, await findHoldForDecision(this.database, holdId), 'set_aside');
     await this.database.transaction(async (tx) => {
       const hold = (await lockHold(tx, holdId)) as HoldForDecision;
-      if (hold.state !== 'open')
-        throw new DomainError('conflict', 'already-decided', `Lot ${hold.lotNumber} was decided already.`);
+      if (hold.state !== 'open') throw endedAlready(hold);
       if (hold.isSetAside)
         throw new DomainError(
           'conflict',
@@ -132,13 +131,17 @@ export class DecisionsService {
   }
 }
 
+const endedAlready = ({ lotNumber, state }: HoldForDecision) =>
+  state === 'withdrawn'
+    ? new DomainError(
+        'conflict',
+        'hold-withdrawn',
+        `The hold of lot ${lotNumber} ended meanwhile, undecided: the intake that led to it was withdrawn.`,
+      )
+    : new DomainError('conflict', 'already-decided', `Lot ${lotNumber} was decided meanwhile. Read the hold again.`);
+
 function refuseStale(hold: HoldForDecision, evidenceVersion: number): void {
-  if (hold.state !== 'open')
-    throw new DomainError(
-      'conflict',
-      'already-decided',
-      `Lot ${hold.lotNumber} was decided meanwhile. Read the hold again.`,
-    );
+  if (hold.state !== 'open') throw endedAlready(hold);
   if (hold.evidenceVersion !== evidenceVersion)
     throw new DomainError(
       'conflict',

@@ -8,8 +8,10 @@ export interface HoldAuthority {
   confirmerIds: number[];
 }
 
-/** What a person with these roles may decide of a hold now; of a decided one nothing. */
+/** What a person with these roles may decide of a hold now; of one that has ended nothing. */
 export function mayDecide(personId: number, roles: readonly Role[], hold: HoldAuthority): HoldView['mayDecide'] {
   if (hold.state === 'decided') return { dispositions: [], why: 'This hold is decided.' };
+  if (hold.state === 'withdrawn')
+    return { dispositions: [], why: 'This hold ended undecided: the intake that led to it was withdrawn.' };
   return decisionRights({ ...hold, roles, hasConfirmedItsIntake: hold.confirmerIds.includes(personId) });
 }

@@ -62,5 +62,7 @@ function asProgress(intake: IntakeRow): IntakeProgress {
       return { ...progress, stage: 'done', channelsScored: total, sentence: 'Scored.' };
     case 'refused':
       return { ...progress, stage: 'failed', sentence: intake.failure ?? 'Refused.' };
+    case 'withdrawn':
+      return { ...progress, stage: 'done', channelsScored: total, sentence: 'Withdrawn.' };
   }
 }

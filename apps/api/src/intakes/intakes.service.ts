@@ -10,6 +10,7 @@ import {
   type WorkbookAnswers,
 } from '@app/contracts';
 import {
+  comparisonChanged,
   confirmIntake,
   type Database,
   findIntake,
@@ -27,6 +28,7 @@ import {
   listIntakes,
   lockIntake,
   type Person,
+  refreshComparison,
   updateIntakeReadAgain,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE, Dispatcher, ThreadPools } from '@app/platform';
@@ -138,6 +140,8 @@ export class IntakesService {
 
   async confirm(person: Person, id: number, request: ConfirmIntakeRequest = {}): Promise<IntakeView> {
     await this.require(person, id, 'upload_intake');
+    const isOutdated = await this.database.transaction((tx) => refreshComparison(tx, id, this.clock.now()));
+    if (isOutdated) throw comparisonChanged();
     const owedJobId = await this.database.transaction(async (tx) => {
       const intake = (await lockIntake(tx, id)) as IntakeRow;
       refuseUnconfirmable(intake);

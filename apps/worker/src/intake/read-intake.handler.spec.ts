@@ -45,14 +45,15 @@ describe('reading a workbook', () => {
   });
 
   it('refuses what is no workbook with a sentence, once, and keeps the bytes', async () => {
-    const { owedJobId } = await received(Buffer.from('this is no workbook'));
+    const picture = Buffer.from('89504e470d0a1a0a0000000d49484452', 'hex');
+    const { owedJobId } = await received(picture);
     expect(await bench.processor.runOwed(owedJobId)).toEqual({ done: true });
     const [intake] = await bench.db('intakes');
     expect(intake).toMatchObject({ state: 'refused', failure: expect.stringMatching(/\.$/) });
     await bench.oweAgain(owedJobId);
     await bench.processor.runOwed(owedJobId);
     expect(await audited()).toEqual(['refuse']);
-    expect(await bench.db('intake_bytes')).toMatchObject([{ bytes: Buffer.from('this is no workbook') }]);
+    expect(await bench.db('intake_bytes')).toMatchObject([{ bytes: picture }]);
   });
 
   it.each([

@@ -1,4 +1,5 @@
 import {
+  compareIntake,
   confirmIntake,
   createDatabase,
   type Database,
@@ -17,6 +18,7 @@ import {
   updateIntakeRead,
   updateOwedJobEnded,
 } from '@app/data';
+import type { IntakeComparison } from '@app/contracts';
 import { type LineContext, readWorkbook, type WorkbookReport, WorkbookRefusedError } from '@app/workbook';
 
 export interface ReadIntakeTask {
@@ -69,6 +71,7 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
           rowsNotUsed: report.rowsNotUsed,
           at,
         });
+        const comparison = await compareIntake(tx, { ...intake, rowsRead: report.rowsRead }, at);
         await insertAuditEntry(tx, {
           plantId: intake.plantId,
           at,
@@ -80,7 +83,7 @@ export default async function readIntake(task: ReadIntakeTask): Promise<ReadInta
           before: { state: 'received' },
           after: { state: 'needs_attention' },
         });
-        if (intake.confirmsItself && leavesNothingToSay(report))
+        if (intake.confirmsItself && leavesNothingToSay(report) && storesAllAsItIs(comparison))
           owedJobIds.push(await confirmForReceiver(tx, intake, at));
         await updateOwedJobEnded(tx, task.owedJobId, 'done', at);
         await notifyProgress(tx, {
@@ -118,6 +121,10 @@ function leavesNothingToSay({ isBlocked, questions, grids, problemCounts, readin
   const isWhole = problemCounts.every(({ severity }) => severity === 'notice');
   return readingsParsed > 0 && !isBlocked && questions.length === 0 && isKnown && isWhole;
 }
+
+/** No reading differs from a stored one or cannot be placed. */
+const storesAllAsItIs = ({ readingsDiffering, rowsNotUsed }: IntakeComparison) =>
+  readingsDiffering === 0 && rowsNotUsed === 0;
 
 /** As who sent it had asked. Gives the id of the scoring that is owed now. */
 async function confirmForReceiver(

@@ -3,6 +3,7 @@ import { type IntakeProgress, JOBS } from '@app/contracts';
 import {
   type Database,
   findIntake,
+  findSupersedable,
   insertAuditEntry,
   type IntakeRow,
   lockIntake,
@@ -85,7 +86,7 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
       const intake = await lockIntake(tx, intakeId);
       if (!intake || intake.state !== 'queued') return;
       await this.tellStoring(intake);
-      const stored = await storeReadings(tx, intake);
+      const stored = await storeReadings(tx, intake, await findSupersedable(tx, intake));
       await updateIntakeStored(tx, intakeId, { ...stored, at: this.clock.now() });
       await insertAuditEntry(tx, {
         plantId: intake.plantId,

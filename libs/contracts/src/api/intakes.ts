@@ -53,16 +53,22 @@ export interface DifferingReading {
 /** What confirming would do, by what was stored when the workbook was read. */
 export interface IntakeComparison {
   at: Instant;
+  /** Rows with a reading that is new; else with one that differs; else with one that is there; together with `rowsNotUsed` all. */
+  rowsNew: number;
+  rowsDiffering: number;
+  rowsAlreadyThere: number;
+  rowsNotUsed: number;
   readingsNew: number;
+  /** With the same value. */
   readingsAlreadyThere: number;
   /** All of them; `differing` lists the first 500. */
   readingsDiffering: number;
   differing: DifferingReading[];
   /** Readings that earlier intakes brought for the same lots and channels within its span of time, and which it does not have. */
   readingsNotInFile: number;
-  /** Earlier intakes that brought readings for the same lots. */
+  /** Earlier intakes that brought readings for the same lots, newest first. */
   overlaps: { intakeId: number; fileName: string; receivedAt: Instant; receivedBy: string; lots: string[] }[];
-  /** Lots of the workbook that are decided already, or whose verdicts are settled. */
+  /** Lots with a reading that is new or differs, and that are decided already or have a settled verdict. */
   lotsDecided: string[];
   lotsSettled: string[];
 }

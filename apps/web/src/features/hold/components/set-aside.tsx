@@ -17,6 +17,7 @@ export function SetAside({ hold }: { hold: HoldView }) {
       </p>
     );
   }
+  if (hold.state === 'withdrawn') return <p>Nobody confirmed that the lot stood apart before the hold ended.</p>;
   if (hold.state === 'decided') return <p>Nobody confirmed that the lot stood apart before it was decided.</p>;
   if (!hold.maySetAside) {
     return <p>Nobody has confirmed yet that lot {lot.number} stands apart. The line lead or an engineer does.</p>;

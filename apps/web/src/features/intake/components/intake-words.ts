@@ -7,6 +7,7 @@ export const STATE_WORDS: Record<IntakeState, string> = {
   working: 'working',
   scored: 'scored',
   refused: 'refused',
+  withdrawn: 'withdrawn',
 };
 
 /** What a column is read as, in words. A role that is not known here is shown as it came. */

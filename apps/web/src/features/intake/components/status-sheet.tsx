@@ -37,6 +37,7 @@ const TITLES: Record<IntakeView['state'], string> = {
   working: 'Being scored',
   scored: 'What came of it',
   refused: 'Refused',
+  withdrawn: 'Withdrawn',
 };
 
 function Refused({ intake }: { intake: IntakeView }) {
