@@ -1,4 +1,4 @@
-/** `npm run bench`: how long an intake takes, and with `baseline` how long a fit takes, each against yardsticks in the same run. See --help. */
+/** `npm run bench`: how long an intake takes, with `reading` how long a workbook takes to be read, with `baseline` how long a fit takes, each against yardsticks in the same run. See --help. */
 import { mkdtempSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
@@ -11,6 +11,10 @@ npm run bench -- --sizes 5000,50000 --repeats 3   smaller
 
 Eight channels, twelve lots a shift, thirty days of history; medians. Each time is also given as a ratio to exceljs's bare
 streaming read of the same file in the same run: only the ratios compare between machines. It has a database of its own.
+
+npm run bench -- reading           workbooks of 50,000 and 200,000 readings, long and wide, to readings: time against exceljs's bare streaming read of the
+                                   same file, and the peak memory of a process that reads 50,000 against one that reads 500,000; no database
+npm run bench -- reading --sizes 50000 --repeats 3   smaller
 
 npm run bench -- baseline          exact smoothing-spline fits with leverages and scores, 1,000 to 1,000,000 points, no database
 npm run bench -- baseline --sizes 1000,10000 --repeats 3   smaller
@@ -51,6 +55,10 @@ async function main() {
     const args = process.argv.slice(2);
     if (args[0] === 'baseline') {
       await run('bench-baseline.js', args.slice(1), { BENCH_ROOT: root });
+      return;
+    }
+    if (args[0] === 'reading') {
+      await run('bench-reading.js', args.slice(1), {});
       return;
     }
     const cluster = await startThrowAwayCluster(programs, CLUSTER_OPTIONS);

@@ -1,18 +1,6 @@
 import ExcelJS from 'exceljs';
 import { CHANNELS, LOTS_PER_SHIFT, PRODUCT, SHIFT_SECONDS } from './bench-plant';
-
-/** Seeded by its argument, so that two runs bench the same figures (mulberry32). */
-export function drawsOf(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let mixed = Math.imul(state ^ (state >>> 15), state | 1);
-    mixed ^= mixed + Math.imul(mixed ^ (mixed >>> 7), mixed | 61);
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 4294967296;
-  };
-}
-
-const normal = (draw: () => number) => Math.sqrt(-2 * Math.log(1 - draw())) * Math.cos(2 * Math.PI * draw());
+import { drawsOf, normal } from './draws';
 
 export interface WorkbookPlan {
   path: string;
@@ -58,20 +46,4 @@ export async function writeBenchWorkbook(plan: WorkbookPlan): Promise<number> {
   sheet.commit();
   await workbook.commit();
   return count;
-}
-
-/** The yardstick: exceljs's streaming read of every cell, and nothing else. Returns seconds. */
-export async function bareRead(path: string): Promise<number> {
-  const begun = performance.now();
-  const reader = new ExcelJS.stream.xlsx.WorkbookReader(path, {
-    worksheets: 'emit',
-    sharedStrings: 'cache',
-    styles: 'cache',
-    hyperlinks: 'ignore',
-    entries: 'emit',
-  });
-  let cells = 0;
-  for await (const sheet of reader) for await (const row of sheet) row.eachCell(() => cells++);
-  if (cells === 0) throw new Error('the yardstick read nothing');
-  return (performance.now() - begun) / 1000;
 }

@@ -3,8 +3,9 @@ import { parseArgs } from 'node:util';
 import type { IntakeView, PlanView } from '@app/contracts';
 import { createDatabase } from '@app/data';
 import { migrateToLatest } from '../../database/migrate';
+import { bareRead } from './bare-read';
 import { CHANNELS, LOTS_PER_SHIFT, PASSWORD, seedBenchPlant, SHIFT_SECONDS } from './bench-plant';
-import { bareRead, writeBenchWorkbook } from './bench-workbook';
+import { writeBenchWorkbook } from './bench-workbook';
 import { BenchClient, BenchServer } from './server';
 
 const HISTORY_DAYS = 30;
