@@ -7,6 +7,7 @@ import { Findings } from './reading/findings';
 import { LotBook } from './reading/lot-book';
 import { ProductNames } from './reading/product-names';
 import { Questions } from './reading/questions';
+import { sayOfWorkbook } from './reading/say-of-workbook';
 import { SheetReader, type ReadingParts } from './reading/sheet-reader';
 import { ZoneClock } from './reading/zone-clock';
 import type { LineContext, OnReadings, ParsedReading, WorkbookReport } from './types';
@@ -52,10 +53,11 @@ export async function readWorkbook(
   const parts: ReadingParts = {
     channels: new ChannelNames(context.channels),
     products: new ProductNames(context.products),
-    lots: new LotBook(),
+    lots: new LotBook(options.answers?.lots),
     findings,
     questions: new Questions(findings),
     answers: options.answers ?? {},
+    remembered: context.remembered ?? [],
     zone,
     dateSystem: source.dateSystem,
     now: context.now,
@@ -63,6 +65,7 @@ export async function readWorkbook(
     decimalSignSeen: source.text?.decimalSign ?? null,
   };
   const report = emptyReport(source.dateSystem, source.text);
+  const leftOut = new Set<string>();
   let batch: ParsedReading[] = [];
   const flush = async (): Promise<void> => {
     if (report.firstRows.length < FIRST_ROWS)
@@ -72,7 +75,7 @@ export async function readWorkbook(
     if (full.length > 0) await onReadings(full);
   };
   for (const sheet of source.sheets) {
-    const reader = new SheetReader(sheet.name, parts);
+    const reader = new SheetReader(sheet.name, sheet.isHidden, parts);
     const facts: SheetFacts = { mergedUntil: [] };
     for await (const rows of source.rows(sheet, facts)) {
       for (const row of rows) {
@@ -81,22 +84,17 @@ export async function readWorkbook(
       }
       options.onProgress?.(report.rowsRead + reader.rowsRead);
     }
-    report.columns.push(...reader.finish(facts, batch));
-    report.sheets.push({ name: sheet.name, headerRow: reader.layout?.header.row ?? null, rows: reader.rows });
+    const { columns, grid } = reader.finish(facts, batch);
+    report.columns.push(...columns);
+    report.grids.push(grid);
+    report.sheets.push({ name: sheet.name, headerRow: reader.headerRow, rows: reader.rowsBelow });
     report.rowsRead += reader.rowsRead;
     report.rowsNotUsed += reader.rowsNotUsed;
-    report.layout ??= reader.layout?.kind ?? null;
-    if (sheet.isHidden && reader.rows > 0) {
-      parts.findings.add(
-        'notice',
-        'hidden-sheet-read',
-        { sheet: sheet.name },
-        () => 'is hidden; it was read like the others',
-      );
-    }
+    report.layout ??= reader.kind;
+    if (reader.isLeftOut) leftOut.add(sheet.name);
   }
   await flush();
-  return finishReport(report, parts);
+  return finishReport(report, parts, leftOut);
 }
 
 const emptyReport = (dateSystem: 1900 | 1904, text: WorkbookReport['text']): WorkbookReport => ({
@@ -118,22 +116,9 @@ const emptyReport = (dateSystem: 1900 | 1904, text: WorkbookReport['text']): Wor
   text,
 });
 
-function finishReport(report: WorkbookReport, { findings, questions, lots }: ReadingParts): WorkbookReport {
-  const hasHeader = report.sheets.some((sheet) => sheet.headerRow !== null);
-  for (const { name, headerRow, rows } of report.sheets) {
-    if (headerRow !== null || rows === 0) continue;
-    findings.add(
-      hasHeader ? 'notice' : 'blocking',
-      'no-header',
-      { sheet: name },
-      () =>
-        `has no header row in its first 40 rows (one that names time, lot and value, or time, lot and channels), so nothing on it was read (${rows === 1 ? 'one row' : `${rows} rows`})`,
-    );
-  }
-  if (lots.readings === 0 && findings.countOf('blocking') === 0) {
-    const sheet = report.sheets[0]?.name ?? '';
-    findings.add('blocking', 'no-readings', { sheet }, () => 'and the rest of the workbook give no reading at all');
-  }
+function finishReport(report: WorkbookReport, parts: ReadingParts, leftOut: ReadonlySet<string>): WorkbookReport {
+  sayOfWorkbook(report, leftOut, parts);
+  const { findings, questions, lots } = parts;
   return {
     ...report,
     readingsParsed: lots.readings,

@@ -35,6 +35,33 @@ export class ChannelNames {
     return found;
   }
 
+  /**
+   * Channels that a longer text names with some of its words ("BG-201 night", "Coat weight, week 2"): those of its longest
+   * name that are known here.
+   */
+  findWithin(text: string): ReadonlySet<number> {
+    const words = text
+      .split(/[\s,;:()[\]/|]+/)
+      .filter(Boolean)
+      .slice(0, 12);
+    for (let length = Math.min(words.length, 6); length > 0; length -= 1) {
+      const found = new Set<number>();
+      for (let from = 0; from + length <= words.length; from += 1) {
+        for (const id of this.find(words.slice(from, from + length).join(' '))) found.add(id);
+      }
+      if (found.size > 0) return found;
+    }
+    return NONE;
+  }
+
+  has(id: number | undefined): boolean {
+    return id !== undefined && this.byId.has(id);
+  }
+
+  all(): ChannelContext[] {
+    return [...this.byId.values()];
+  }
+
   /** The only channel that a text may mean. */
   findOne(text: string): ChannelContext | undefined {
     const found = this.find(text);

@@ -24,6 +24,8 @@ export interface HeaderColumn {
   isDeviation: boolean;
   /** Neither a role nor one of the ordinary columns that are not used. */
   isUnknown: boolean;
+  /** Of tables that stand side by side: the table's number from 0; -1 in one that cannot be read by itself. */
+  block: number;
 }
 
 const ROLE: Record<HeaderMeaning, ColumnRole> = {
@@ -70,6 +72,7 @@ export const plainColumn = (column: number, header: string): HeaderColumn => ({
   isPositionAlone: false,
   isDeviation: false,
   isUnknown: true,
+  block: 0,
 });
 
 /** What one header text may mean by itself. */

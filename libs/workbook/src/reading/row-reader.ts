@@ -25,14 +25,8 @@ export interface RowReaderParts {
   findings: Findings;
 }
 
-/**
- * Turns one sheet's data rows into readings. Each row either gives a reading or is reported once as *not used*, so that
- * the rows not used are as many as the problems of that severity.
- */
+/** Turns the rows of one table into readings. A row either gives a reading or the reason why it gives none. */
 export class RowReader {
-  rowsRead = 0;
-  rowsNotUsed = 0;
-
   /** Columns whose cells make a row a data row. */
   private readonly used: readonly HeaderColumn[];
 
@@ -40,17 +34,8 @@ export class RowReader {
     this.used = parts.layout.header.columns.filter(({ role }) => role !== 'ignored' && role !== 'remark');
   }
 
-  read(row: SheetRow, into: ParsedReading[]): void {
-    if (row.cells.every(isBlank)) return;
-    this.rowsRead += 1;
-    const result = this.readRow(row, into);
-    if (!(result instanceof RowNotUsed)) return;
-    this.rowsNotUsed += 1;
-    const { code, why, column } = result;
-    this.parts.findings.add('row_not_used', code, { ...this.place(row), column }, () => why);
-  }
-
-  private readRow(row: SheetRow, into: ParsedReading[]): RowNotUsed | undefined {
+  /** @returns why the row is not used, or undefined when it gave a reading */
+  read(row: SheetRow, into: ParsedReading[]): RowNotUsed | undefined {
     const { layout, channels, findings, stamps, lots } = this.parts;
     const set = this.findNonData(row);
     if (set) return set;
@@ -86,21 +71,32 @@ export class RowReader {
         return new RowNotUsed('check-standard-row', why, source?.column);
       }
     }
+    if (isWithoutTime || stampCell?.kind === 'text') {
+      const [only, more] = row.cells.filter((cell) => !isBlank(cell));
+      if (only?.kind === 'text' && !more) {
+        return new RowNotUsed('row-without-reading', `holds nothing but the text "${only.text.trim().slice(0, 60)}"`);
+      }
+    }
     if (used.some(({ column }) => !isBlank(row.cells[column]))) return undefined;
     return new RowNotUsed('row-without-reading', 'has neither time nor lot nor value');
   }
 
   private readLot(row: SheetRow): string | RowNotUsed {
-    const { lot } = this.parts.layout;
-    const read = lotText(lot && row.cells[lot.column]);
-    return typeof read === 'string' ? read : new RowNotUsed(read.code, read.why, lot?.column);
+    const { layout, lots } = this.parts;
+    const { lot, titles } = layout;
+    const cell = lot && row.cells[lot.column];
+    if (titles.lot && isMissing(cell)) return lots.meant(titles.lot.value);
+    const read = lotText(cell);
+    return typeof read === 'string' ? lots.meant(read) : new RowNotUsed(read.code, read.why, lot?.column);
   }
 
   private readProduct(row: SheetRow): string | null | RowNotUsed {
     const { layout, products, findings } = this.parts;
-    if (!layout.product) return null;
+    const fromTitle = layout.titles.product?.value ?? null;
+    if (!layout.product) return fromTitle;
     const { column } = layout.product;
     const text = cellText(row.cells[column]);
+    if (text === null && fromTitle !== null) return fromTitle;
     if (text === null) {
       findings.add('notice', 'product-missing', { ...this.place(row), column }, () => 'names no product');
       return null;

@@ -14,8 +14,27 @@ export const SINGLE: ColumnRole[] = [
   'quantity',
 ];
 
-/** Settles what columns mean beside each other: times, numbered readings, and roles that only one may have. */
+/**
+ * Settles what columns mean beside each other: tables side by side, times, numbered readings, and roles that only one
+ * column of a table may have.
+ */
 export function settleColumns(columns: HeaderColumn[]): HeaderColumn[] {
+  numberBlocks(columns);
+  for (const block of new Set(columns.map((column) => column.block))) {
+    const own = columns.filter((column) => column.block === block);
+    if (block < 0) for (const column of own) setAside(column);
+    else settleBlock(own);
+  }
+  return columns;
+}
+
+function setAside(column: HeaderColumn): void {
+  column.role = 'ignored';
+  column.channelId = null;
+  column.isUnknown = false;
+}
+
+function settleBlock(columns: HeaderColumn[]): void {
   settleTime(columns);
   settlePositions(columns);
   for (const role of SINGLE) {
@@ -24,13 +43,48 @@ export function settleColumns(columns: HeaderColumn[]): HeaderColumn[] {
       again.isUnknown = true;
     }
   }
-  return columns;
+}
+
+const TIMES: ColumnRole[] = ['time', 'date', 'time_of_day'];
+const has = (columns: readonly HeaderColumn[], ...roles: ColumnRole[]): boolean =>
+  columns.some((column) => roles.includes(column.role));
+const hasValues = (columns: readonly HeaderColumn[]): boolean =>
+  has(columns, 'value', 'channel_values') || columns.filter((column) => column.isPositionAlone).length > 1;
+
+/**
+ * Finds tables side by side: after an empty column, columns that repeat a time of the table before and have values. They
+ * are a table by themselves when they have a lot too, or when the table before has none either.
+ */
+function numberBlocks(columns: HeaderColumn[]): void {
+  let block = 0;
+  let table: HeaderColumn[] = [];
+  for (const group of groupsOf(columns)) {
+    const repeats = TIMES.some((role) => has(group, role) && has(table, role));
+    const isApart = repeats && hasValues(group) && hasValues(table);
+    const isWhole = has(group, 'lot') || !has(table, 'lot');
+    if (isApart && isWhole) {
+      block += 1;
+      table = [];
+    }
+    for (const column of group) column.block = isApart && !isWhole ? -1 : block;
+    if (!isApart || isWhole) table.push(...group);
+  }
+}
+
+/** Runs of columns without an empty one between. */
+function groupsOf(columns: readonly HeaderColumn[]): HeaderColumn[][] {
+  const groups: HeaderColumn[][] = [];
+  for (const column of columns) {
+    const before = groups.at(-1)?.at(-1);
+    if (before && before.column === column.column - 1) groups.at(-1)!.push(column);
+    else groups.push([column]);
+  }
+  return groups;
 }
 
 /** "Time" beside "Date" is the time of day; alone, either holds both. */
 function settleTime(columns: HeaderColumn[]): void {
-  const has = (role: ColumnRole): boolean => columns.some((column) => column.role === role);
-  const [hasStamp, hasDate, hasClock] = [has('time'), has('date'), has('time_of_day')];
+  const [hasStamp, hasDate, hasClock] = [has(columns, 'time'), has(columns, 'date'), has(columns, 'time_of_day')];
   for (const column of columns) {
     if (column.role !== 'date' && column.role !== 'time_of_day') continue;
     if (hasStamp) column.role = 'ignored';
@@ -41,8 +95,7 @@ function settleTime(columns: HeaderColumn[]): void {
 /** "1", "2", "3" or "Cavity 1", "Cavity 2" are readings of a row where no other column holds values. */
 function settlePositions(columns: HeaderColumn[]): void {
   const numbered = columns.filter((column) => column.isPositionAlone && column.role === 'ignored');
-  const hasValues = columns.some(({ role }) => role === 'channel_values' || role === 'value');
-  if (hasValues || numbered.length < 2) return;
+  if (has(columns, 'value', 'channel_values') || numbered.length < 2) return;
   for (const column of numbered) {
     column.role = 'value';
     column.isUnknown = false;

@@ -1,11 +1,15 @@
 import { columnLetters } from '../container/cell-names';
 import type { ChannelContext, ColumnRole } from '../types';
-import type { ChannelNames } from './channel-names';
+import { channelOfSheet } from './channel-of-sheet';
+import { isUnitRight } from './column-units';
 import type { Findings } from './findings';
 import type { Header } from './header';
 import type { HeaderColumn } from './header-cell';
-import { isSameUnit } from './names';
-import type { ColumnHabits } from './values';
+import type { ChannelNames } from './channel-names';
+import { sayWhatIsMissing } from './missing-columns';
+import type { Questions } from './questions';
+import { dayOfSheet } from './sheet-day';
+import type { Titles } from './titles';
 
 export interface ValueColumn {
   column: number;
@@ -16,14 +20,13 @@ export interface ValueColumn {
   position: string | null;
   unit: string | null;
   isDeviation: boolean;
-  habits: ColumnHabits;
 }
 
 /** A day that a sheet gives for all its rows, in a title or in its name. */
 export interface SheetDay {
   /** Its midnight on the sheet's clocks, in milliseconds as if it were UTC. */
   localMs: number;
-  /** Where it stands: 'cell B2', 'the sheet\'s name'. */
+  /** Where it stands: 'cell B2', 'the sheet's name'. */
   from: string;
   /** It is the day on which a night shift began: times after midnight belong to the next. */
   isShiftDate: boolean;
@@ -45,14 +48,22 @@ export interface SheetLayout {
   quantity?: HeaderColumn;
   channelColumns: HeaderColumn[];
   values: ValueColumn[];
+  /** What the titles above the header give for every row without its own. */
+  titles: Titles;
   /** For times without a date; null where neither a title nor the sheet's name gives a day. */
   day: SheetDay | null;
   /** The header says UTC or GMT, so the plant's zone does not apply. */
   isUtc: boolean;
 }
 
+export interface LayoutParts {
+  channels: ChannelNames;
+  findings: Findings;
+  questions: Questions;
+}
+
 /** Settles what a sheet's columns are for, and says what is missing, contradictory or not used. */
-export function resolveLayout(sheet: string, header: Header, channels: ChannelNames, findings: Findings): SheetLayout {
+export function resolveLayout(sheet: string, header: Header, titles: Titles, parts: LayoutParts): SheetLayout {
   const first = (role: ColumnRole): HeaderColumn | undefined => header.columns.find((column) => column.role === role);
   const all = (role: ColumnRole): HeaderColumn[] => header.columns.filter((column) => column.role === role);
   const isLong = all('value').length > 0 && (all('channel').length > 0 || all('channel_values').length === 0);
@@ -77,39 +88,27 @@ export function resolveLayout(sheet: string, header: Header, channels: ChannelNa
     quantity: first('quantity'),
     channelColumns: isLong ? all('channel') : [],
     values: [],
-    day: null,
+    titles,
+    day: dayOfSheet(sheet, titles),
     isUtc: /^(utc|gmt|z)$/i.test(time?.unit ?? ''),
   };
-  layout.values = isLong
-    ? longValues(layout, all('value'), channels, findings)
-    : wideValues(layout, findings, channels);
+  layout.values = isLong ? longValues(layout, all('value'), parts) : wideValues(layout, parts);
   if (layout.channelColumns.length === 0 && layout.values.length > 1) layout.kind = 'wide';
-  sayWhatIsMissing(layout, channels, findings);
+  sayWhatIsMissing(layout, parts);
   return layout;
 }
 
-function longValues(
-  { sheet, header, channelColumns }: SheetLayout,
-  columns: HeaderColumn[],
-  channels: ChannelNames,
-  findings: Findings,
-): ValueColumn[] {
-  const channel = channelColumns.length > 0 ? null : (channels.findOne(sheet) ?? channels.only() ?? null);
-  if (!channel && channelColumns.length === 0) {
-    findings.add(
-      'blocking',
-      'no-channel-column',
-      { sheet, row: header.row },
-      () =>
-        `has a column of values but none that names the channel; add one headed "Characteristic", or name the sheet after the channel (${channels.list()})`,
-    );
-  }
+function longValues(layout: SheetLayout, columns: HeaderColumn[], parts: LayoutParts): ValueColumn[] {
+  const { channelColumns, titles } = layout;
+  const channel = channelColumns.length > 0 ? null : channelOfSheet(layout, columns, parts);
   return columns
-    .filter((column) => !channel || isUnitRight(sheet, header.row, column, channel, findings))
-    .map((column) => toValueColumn(column, channel));
+    .map((column) => toValueColumn(column, channel, titles))
+    .filter((source) => !channel || isUnitRight(layout, source, channel, parts));
 }
 
-function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels: ChannelNames): ValueColumn[] {
+function wideValues(layout: SheetLayout, parts: LayoutParts): ValueColumn[] {
+  const { channels, findings } = parts;
+  const { sheet, header, titles } = layout;
   const seen = new Map<string, HeaderColumn>();
   const values: ValueColumn[] = [];
   for (const column of header.columns) {
@@ -128,8 +127,8 @@ function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels
       continue;
     }
     seen.set(key, column);
-    if (!isUnitRight(sheet, header.row, column, channel, findings)) continue;
-    values.push(toValueColumn(column, channel));
+    const source = toValueColumn(column, channel, titles);
+    if (isUnitRight(layout, source, channel, parts)) values.push(source);
   }
   return values;
 }
@@ -137,73 +136,12 @@ function wideValues({ sheet, header }: SheetLayout, findings: Findings, channels
 const toValueColumn = (
   { column, unit, position, isDeviation }: HeaderColumn,
   channel: ChannelContext | null,
+  titles: Titles,
 ): ValueColumn => ({
   column,
   letters: columnLetters(column),
   channel,
   position,
-  unit,
+  unit: unit ?? titles.unit?.value ?? null,
   isDeviation,
-  habits: { sawDecimalComma: false },
 });
-
-function isUnitRight(
-  sheet: string,
-  row: number,
-  column: HeaderColumn,
-  channel: ChannelContext,
-  findings: Findings,
-): boolean {
-  if (column.unit === null || isSameUnit(column.unit, channel.unit)) return true;
-  findings.add(
-    'blocking',
-    'unit-differs',
-    { sheet, row, column: column.column },
-    () =>
-      `gives "${column.name}" in ${column.unit}, but the channel "${channel.name}" is in ${channel.unit || 'no unit'}; values are not converted, so store them in ${channel.unit || 'no unit'} and say so in the header`,
-  );
-  return false;
-}
-
-function sayWhatIsMissing(layout: SheetLayout, channels: ChannelNames, findings: Findings): void {
-  const { sheet, header } = layout;
-  const place = { sheet, row: header.row };
-  if (!layout.time && !layout.date) {
-    findings.add(
-      'blocking',
-      'no-time-column',
-      place,
-      () => 'has no column headed "Time" (or "Date" and "Time"); add one',
-    );
-  }
-  if (!layout.lot) findings.add('blocking', 'no-lot-column', place, () => 'has no column headed "Lot"; add one');
-  if (!layout.product) {
-    findings.add(
-      'notice',
-      'no-product-column',
-      place,
-      () => 'has no column headed "Product", so no lot on it names its product',
-    );
-  }
-  if (
-    layout.values.length === 0 &&
-    !header.columns.some((column) => column.role === 'channel_values' || column.role === 'value')
-  ) {
-    findings.add(
-      'blocking',
-      'no-value-column',
-      place,
-      () =>
-        `has no column of values; head one "Value" beside one headed "Characteristic", or head columns with the line's channels (${channels.list()})`,
-    );
-  }
-  for (const column of header.columns.filter((one) => one.isUnknown)) {
-    findings.add(
-      'notice',
-      'column-not-used',
-      { ...place, column: column.column },
-      () =>
-        `is headed "${column.header}", which is no channel of this line and no other column that is read, so the column is not used`,
-    );
-  }
-}
