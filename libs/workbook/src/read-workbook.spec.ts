@@ -162,17 +162,17 @@ describe('the wide layout', () => {
       at: Date.parse('2026-01-05T06:10:00+01:00'),
     });
   });
-  it('converts from the unit that the header states, and says so', async () => {
+  it('stops at a unit that differs from the channel’s, and names both', async () => {
     const result = await readRows([
-      ['Time', 'Lot', 'Product', 'Coat weight [g/m2]', 'Web thickness [g]'],
+      ['Time', 'Lot', 'Product', 'Coat weight [g/m2]', 'Web thickness [mil]'],
       [at('6:00'), 'A', 'SEP-12', 12, 0.6],
     ]);
-    expect(problemList(result)).toEqual(['notice unit-converted E']);
-    // 1 mil is 25.4 µm.
-    expect(values(result.readings)).toEqual([
-      [11, 12],
-      [12, 15.24],
-    ]);
+    expect(result.report.isBlocked).toBe(true);
+    expect(problemList(result)).toEqual(['blocking unit-differs E1']);
+    expect(result.report.problems[0].detail).toMatch(
+      /"Web thickness" in mil, but the channel "Web thickness" is in µm/,
+    );
+    expect(values(result.readings)).toEqual([[11, 12]]);
   });
   it('stops at one channel in two columns', async () => {
     const result = await readRows([
@@ -184,10 +184,10 @@ describe('the wide layout', () => {
   it('takes units from a row of their own', async () => {
     const result = await readRows([
       ['Time', 'Lot', 'Product', 'Coat weight', 'Web thickness'],
-      [null, null, null, 'g/m²', '[bar]'],
+      [null, null, null, 'g/m²', '[mil]'],
       [at('6:00'), 'A', 'SEP-12', 12, 0.6],
     ]);
-    expect(problemList(result)).toEqual(['notice unit-converted E']);
+    expect(problemList(result)).toEqual(['blocking unit-differs E1']);
     expect(result.report.rowsRead).toBe(1);
   });
 });
@@ -229,6 +229,8 @@ describe('a messy workbook', () => {
       [11, null],
       [12, null],
       [11, 0],
+      [12, 16.6],
+      [11, 12.3],
       [12, 16.6],
       [11, 12.3],
       [12, 16.6],

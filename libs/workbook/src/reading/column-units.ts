@@ -1,5 +1,6 @@
-import type { ValueAnswer, WorkbookAnswers } from '../answers';
+import type { Choice, ValueAnswer, WorkbookAnswers } from '../answers';
 import type { ChannelContext } from '../types';
+import type { Findings } from './findings';
 import type { Questions } from './questions';
 import type { SheetLayout, ValueColumn } from './sheet-layout';
 import { relateUnits, unitsLike } from './units';
@@ -23,40 +24,34 @@ export function answerOfValues(
 }
 
 /**
- * Whether a column whose header states a unit can be read: the unit is the channel's, or one of the same quantity. Where it
- * is not, that is asked.
+ * Whether a column whose header states a unit can be read: the unit is the channel's, or one of the same quantity. One of
+ * another quantity stops the workbook; of one that is not known it is asked.
  */
-export function askOfUnit(
+export function isUnitRight(
   layout: Pick<SheetLayout, 'sheet' | 'header'>,
   source: ValueColumn,
   channel: ChannelContext,
-  questions: Questions,
+  { findings, questions }: { findings: Findings; questions: Questions },
 ): boolean {
   if (source.unit === null) return true;
   const relation = relateUnits(source.unit, channel.unit);
   if (relation.kind === 'same' || relation.kind === 'convertible') return true;
   const place = { sheet: layout.sheet, row: layout.header.row, column: source.column };
   const own = channel.unit || 'no unit';
-  const choose = (unit: string): { label: string; answers: WorkbookAnswers } => ({
+  const stated = `gives "${channel.name}" in ${source.unit.slice(0, 30)}`;
+  if (relation.kind === 'other-quantity') {
+    const say = (): string =>
+      `${stated}, but the channel is in ${own}, a unit of another quantity; correct the header, or say in which unit the values are`;
+    findings.add('blocking', 'unit-differs', place, say);
+    return false;
+  }
+  const choices: Choice[] = [channel.unit, ...unitsLike(channel.unit).slice(0, MOST_UNITS)].map((unit) => ({
     label: `The values are in ${unit || 'no unit'}`,
     answers: answerOfValues(layout, source, channel, {}, { unit }),
-  });
-  const isUnknown = relation.kind === 'unknown';
-  const stated = `gives "${channel.name}" in ${source.unit.slice(0, 30)}`;
-  questions.ask(
-    isUnknown ? 'unit-unknown' : 'unit-differs',
-    place,
-    isUnknown
-      ? `${stated}, and how that relates to ${own}, the channel's unit, is not known here. In which unit are the values?`
-      : `${stated}, but the channel is in ${own}, a unit of another quantity. Is the header wrong, and in which unit are the values?`,
-    0,
-    [
-      ...[channel.unit, ...unitsLike(channel.unit).slice(0, MOST_UNITS)].map(choose),
-      {
-        label: 'Do not use the column',
-        answers: { sheets: { [layout.sheet]: { columns: { [source.letters]: { role: 'ignored' } } } } },
-      },
-    ],
-  );
+  }));
+  const ignored = { [source.letters]: { role: 'ignored' as const } };
+  choices.push({ label: 'Do not use the column', answers: { sheets: { [layout.sheet]: { columns: ignored } } } });
+  const text = `${stated}, and how that relates to ${own}, the channel's unit, is not known here. In which unit are the values?`;
+  questions.ask('unit-unknown', place, text, 0, choices);
   return false;
 }

@@ -22,13 +22,19 @@ export class RowOrder {
   /**
    * @param early the instant on the first pass, epoch milliseconds
    * @param late the instant on the second pass
-   * @returns the one that the order of the rows asks for, or null when no row before it tells
+   * @param answered the pass that was said where the order of the rows does not tell
+   * @returns the one that the order of the rows asks for, or null when no row before it tells and nothing was said
    */
-  choose(early: number, late: number): number | null {
-    if (this.previous === null) return null;
+  choose(early: number, late: number, answered?: 'first' | 'second'): number | null {
+    const { previous } = this;
     const isForward = this.balance >= 0;
-    const lead = (this.previous - (isForward ? early : late)) * (isForward ? 1 : -1);
-    if (lead > late - early + JITTER) return null;
+    const lead = previous === null ? null : (previous - (isForward ? early : late)) * (isForward ? 1 : -1);
+    if (lead === null || lead > late - early + JITTER) {
+      if (answered === undefined) return null;
+      this.previous = answered === 'first' ? early : late;
+      this.hasStepped = isForward === (answered === 'second');
+      return this.previous;
+    }
     this.hasStepped ||= lead > JITTER;
     this.previous = this.hasStepped === isForward ? late : early;
     return this.previous;
