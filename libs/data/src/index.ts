@@ -60,3 +60,4 @@ export * from './layouts';
 export * from './api-tokens';
 export * from './confirm-intake';
 export * from './compare-intake';
+export * from './shift-names';

@@ -35,10 +35,8 @@ describe('an ordinary shift', () => {
     await frame.to('Intake');
     await intake.upload({ name: 'coater-2 early.xlsx', bytes: await shiftWorkbook('long', [NEXT_SHIFT]) });
     await frame.heading('coater-2 early.xlsx: needs attention').waitFor();
-    expect(await intake.accounting.innerText()).toMatch(
-      /^560 rows read = 560 to be stored or there already \+ 0 not used/,
-    );
-    expect(await frame.sheet(/^What was recognised: a row a reading/).innerText()).toContain('Coat weight');
+    expect(await intake.accounting.innerText()).toMatch(/^560 rows read = 560 new \+ 0 already there \+ 0 not used/);
+    expect(await frame.sheet('How it is read: correct it here').innerText()).toContain('Coat weight');
     for (const lot of ['24501', LIGHT_LOT, '24503', THICK_LOT]) expect(await intake.lots.innerText()).toContain(lot);
   });
 

@@ -10,6 +10,8 @@ interface Parts {
   sameFile: IntakeRow | undefined;
   problems: IntakeProblem[];
   channels: Map<number, { name: string; unit: string }>;
+  /** Of the first rows, in their order. */
+  shifts: (string | null)[];
   outcome:
     (IntakeNotes & { lotsScored: number; held: { holdId: number; lotNumber: string; sentences: string[] }[] }) | null;
 }
@@ -25,7 +27,7 @@ function isReady({ isBlocked, questions = [], readingsParsed }: StoredReport): b
   return !isBlocked && questions.length === 0 && readingsParsed > 0;
 }
 
-export function intakeView({ intake, sameFile, problems, channels, outcome }: Parts): IntakeView {
+export function intakeView({ intake, sameFile, problems, channels, shifts, outcome }: Parts): IntakeView {
   const report = intake.report as StoredReport | null;
   const nameOf = (channelId: number | null) => (channelId === null ? undefined : channels.get(channelId)?.name);
   return {
@@ -50,10 +52,11 @@ export function intakeView({ intake, sameFile, problems, channels, outcome }: Pa
       const name = nameOf(channelId);
       return { ...column, channel: channelId !== null && name !== undefined ? { id: channelId, name } : null };
     }),
-    firstRows: (report?.firstRows ?? []).map((reading) => ({
+    firstRows: (report?.firstRows ?? []).map((reading, index) => ({
       sheet: reading.sheet,
       row: reading.row,
       at: new Date(reading.at).toISOString(),
+      shift: shifts[index] ?? null,
       lot: reading.lot,
       product: reading.product,
       quantity: reading.quantity,

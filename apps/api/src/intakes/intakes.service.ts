@@ -26,14 +26,15 @@ import {
   type IntakeRow,
   listIntakeProblems,
   listIntakes,
+  listShiftNames,
   lockIntake,
-  type Person,
   refreshComparison,
+  type Person,
   updateIntakeReadAgain,
 } from '@app/data';
 import { CLOCK, type Clock, DATABASE, Dispatcher, ThreadPools } from '@app/platform';
 import { AccessService } from '../access/access.service';
-import { intakeListItem, intakeView, isConfirmable } from './intake-view';
+import { intakeListItem, intakeView, isConfirmable, type StoredReport } from './intake-view';
 
 const SHOWN_PROBLEMS = 1000;
 /** An upload answers when its workbook has been read, or after this long with the intake still being read. */
@@ -177,14 +178,17 @@ export class IntakesService {
   }
 
   private async view(intake: IntakeRow): Promise<IntakeView> {
-    const [sameFile, problems, context, outcome] = await Promise.all([
+    const firstRows = (intake.report as StoredReport | null)?.firstRows ?? [];
+    const instants = firstRows.map(({ at }) => new Date(at));
+    const [sameFile, problems, context, shifts, outcome] = await Promise.all([
       findSameFile(this.database, intake),
       listIntakeProblems(this.database, intake.id, SHOWN_PROBLEMS),
       getLineContext(this.database, intake.lineId, { isWithRetired: true }),
+      listShiftNames(this.database, intake.plantId, instants),
       intake.state === 'scored' ? this.outcome(intake.id) : null,
     ]);
     const channels = new Map(context.channels.map((channel) => [channel.id, channel]));
-    return intakeView({ intake, sameFile, problems, channels, outcome });
+    return intakeView({ intake, sameFile, problems, channels, shifts, outcome });
   }
 
   private async outcome(intakeId: number) {

@@ -24,6 +24,8 @@ export interface IntakeReadingPreview {
   sheet: string;
   row: number;
   at: Instant;
+  /** By the plant's calendar; null where it has none then. */
+  shift: string | null;
   lot: string;
   product: string | null;
   quantity: number | null;

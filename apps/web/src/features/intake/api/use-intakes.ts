@@ -1,4 +1,12 @@
-import type { IntakeListItem, IntakeState, IntakeView } from '@app/contracts';
+import type {
+  ConfirmIntakeRequest,
+  IntakeListItem,
+  IntakeState,
+  IntakeView,
+  ReadAgainRequest,
+  WithdrawIntakeRequest,
+  WorkbookAnswers,
+} from '@app/contracts';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { apiGet, apiList, apiSend } from '../../../shared/api/client';
 
@@ -32,7 +40,26 @@ export function useIntake(intakeId: number) {
 export function useConfirmIntake(intakeId: number) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: () => apiSend<unknown>('POST', `/intakes/${intakeId}/confirm`),
+    mutationFn: (request: ConfirmIntakeRequest) => apiSend<unknown>('POST', `/intakes/${intakeId}/confirm`, request),
     onSettled: () => client.invalidateQueries({ queryKey: intakeKeys.one(intakeId) }),
+  });
+}
+
+/** Has the workbook read again by other answers. */
+export function useReadAgain(intakeId: number) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (answers: WorkbookAnswers) =>
+      apiSend<IntakeView>('POST', `/intakes/${intakeId}/reading`, { answers } satisfies ReadAgainRequest),
+    onSuccess: (intake) => client.setQueryData(intakeKeys.one(intakeId), intake),
+    onError: () => client.invalidateQueries({ queryKey: intakeKeys.one(intakeId) }),
+  });
+}
+
+export function useWithdrawIntake(intakeId: number) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (request: WithdrawIntakeRequest) => apiSend<unknown>('POST', `/intakes/${intakeId}/withdraw`, request),
+    onSuccess: () => client.invalidateQueries(),
   });
 }

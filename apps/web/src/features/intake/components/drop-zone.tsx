@@ -54,7 +54,7 @@ export function DropZone({ lineId, lineName }: DropZoneProps) {
           id={inputId}
           className="visually-hidden drop-zone__input"
           type="file"
-          accept=".xlsx,.xlsm,application/vnd.openxmlformats-officedocument.spreadsheetml.sheet"
+          accept=".xlsx,.xlsm,.csv,.txt,.tsv,application/vnd.openxmlformats-officedocument.spreadsheetml.sheet,text/csv,text/plain"
           disabled={sending !== null}
           onChange={(event) => {
             const file = event.currentTarget.files?.[0];
@@ -67,7 +67,9 @@ export function DropZone({ lineId, lineName }: DropZoneProps) {
             <span>
               Drop a workbook of {lineName} here, or <span className="drop-zone__choose">choose a file</span>.
             </span>
-            <span className="soft">Excel (.xlsx), a row a reading or a column a channel, up to 30 MB.</span>
+            <span className="soft">
+              Excel (.xlsx, .xlsm) or text (.csv, .txt), as your plant writes it, up to 30 MB.
+            </span>
           </label>
         ) : (
           <Sending name={sending.name} share={sending.share} />

@@ -1,5 +1,5 @@
 import type { IntakeProblem, IntakeView } from '@app/contracts';
-import { accountingWords, cellName, counted, groupProblems, roleWords, sizeWords } from './intake-words';
+import { accountingWords, cellName, counted, groupProblems, sizeWords } from './intake-words';
 
 const problem = (code: string, severity: IntakeProblem['severity'], row: number | null = 1): IntakeProblem => ({
   sheet: 'Readings',
@@ -47,14 +47,6 @@ describe('counted', () => {
   });
 });
 
-describe('roleWords', () => {
-  it('says what a column is read as', () => {
-    expect(roleWords('ignored')).toBe('not used');
-    expect(roleWords('lot')).toBe('lot');
-    expect(roleWords('some_new_role')).toBe('some new role');
-  });
-});
-
 describe('sizeWords', () => {
   it('uses bytes, kB and MB', () => {
     expect(sizeWords(999)).toBe('999 bytes');
@@ -64,7 +56,14 @@ describe('sizeWords', () => {
 });
 
 describe('the accounting of rows', () => {
-  const rows = { rowsRead: 2240, rowsUsed: 2196, rowsAlreadyThere: 32, rowsNotUsed: 12 } as IntakeView;
+  const rows = {
+    rowsRead: 2240,
+    rowsUsed: 2196,
+    rowsAlreadyThere: 32,
+    rowsSuperseding: 0,
+    rowsNotUsed: 12,
+    comparison: null,
+  } as IntakeView;
 
   it('adds up before and after the readings are stored', () => {
     expect(accountingWords({ ...rows, state: 'scored' })).toBe(
@@ -72,6 +71,15 @@ describe('the accounting of rows', () => {
     );
     expect(accountingWords({ ...rows, state: 'needs_attention', rowsUsed: 0, rowsAlreadyThere: 0 })).toBe(
       '2,240 rows read = 2,228 to be stored or there already + 12 not used',
+    );
+  });
+  it('names the rows whose readings supersede stored ones, and before storing those that differ', () => {
+    expect(accountingWords({ ...rows, state: 'scored', rowsUsed: 2_190, rowsSuperseding: 6 })).toBe(
+      '2,240 rows read = 2,190 used + 6 superseding + 32 already there + 12 not used',
+    );
+    const comparison = { rowsNew: 2_190, rowsDiffering: 6, rowsAlreadyThere: 30, rowsNotUsed: 14 };
+    expect(accountingWords({ ...rows, state: 'needs_attention', comparison } as IntakeView)).toBe(
+      '2,240 rows read = 2,190 new + 6 with another value than stored + 30 already there + 14 not used',
     );
   });
 });

@@ -10,17 +10,6 @@ export const STATE_WORDS: Record<IntakeState, string> = {
   withdrawn: 'withdrawn',
 };
 
-/** What a column is read as, in words. A role that is not known here is shown as it came. */
-export function roleWords(role: string): string {
-  return ROLE_WORDS[role] ?? role.replaceAll('_', ' ');
-}
-const ROLE_WORDS: Record<string, string> = {
-  time: 'date and time',
-  time_of_day: 'time of day',
-  channel_values: 'readings of',
-  ignored: 'not used',
-};
-
 export const SEVERITY_WORDS: Record<IntakeProblem['severity'], string> = {
   blocking: 'must be mended first',
   row_not_used: 'rows not used',
@@ -70,14 +59,28 @@ export function sizeWords(bytes: number): string {
 }
 
 /**
- * Each row is accounted for. Once the readings are stored: "2,240 rows read = 2,196 used + 32 already there + 12 not used"; before that
- * nobody knows yet what is there: "2,240 rows read = 2,228 to be stored or there already + 12 not used".
+ * Each row is accounted for. Once the readings are stored: "2,240 rows read = 2,196 used + 32 already there + 12 not used", with those whose readings
+ * supersede stored ones; before that, by what was stored when the workbook was read.
  */
-export function accountingWords({ state, rowsRead, rowsUsed, rowsAlreadyThere, rowsNotUsed }: IntakeView): string {
+export function accountingWords(intake: IntakeView): string {
+  const { state, rowsRead, rowsUsed, rowsAlreadyThere, rowsSuperseding, rowsNotUsed, comparison } = intake;
   const number = (count: number) => count.toLocaleString('en-GB');
-  const isStored = state === 'working' || state === 'scored';
-  const usable = isStored
-    ? `${number(rowsUsed)} used + ${number(rowsAlreadyThere)} already there`
-    : `${number(rowsRead - rowsNotUsed)} to be stored or there already`;
-  return `${counted(rowsRead, 'row')} read = ${usable} + ${number(rowsNotUsed)} not used`;
+  const isStored = state === 'working' || state === 'scored' || state === 'withdrawn';
+  const parts = isStored
+    ? [
+        `${number(rowsUsed)} used`,
+        ...(rowsSuperseding > 0 ? [`${number(rowsSuperseding)} superseding`] : []),
+        `${number(rowsAlreadyThere)} already there`,
+      ]
+    : comparison === null
+      ? [`${number(rowsRead - rowsNotUsed)} to be stored or there already`]
+      : [
+          `${number(comparison.rowsNew)} new`,
+          ...(comparison.rowsDiffering > 0
+            ? [`${number(comparison.rowsDiffering)} with another value than stored`]
+            : []),
+          `${number(comparison.rowsAlreadyThere)} already there`,
+        ];
+  const notUsed = isStored || comparison === null ? rowsNotUsed : comparison.rowsNotUsed;
+  return `${counted(rowsRead, 'row')} read = ${[...parts, `${number(notUsed)} not used`].join(' + ')}`;
 }

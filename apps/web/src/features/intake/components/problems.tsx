@@ -4,9 +4,10 @@ import { cellName, counted, groupProblems, SEVERITIES, SEVERITY_WORDS, type Prob
 
 const SHOWN = 25;
 
-/** Every problem with its sheet and cell, grouped; the gravest first and open. */
+/** Every problem with its sheet and cell, grouped; the gravest first and open. What is asked stands with the questions. */
 export function Problems({ intake }: { intake: IntakeView }) {
-  const groups = groupProblems(intake);
+  const asked = new Set(intake.questions.map(({ code }) => code));
+  const groups = groupProblems(intake).filter(({ code, severity }) => !(severity === 'blocking' && asked.has(code)));
   if (groups.length === 0) return <EmptyNote>Nothing in the workbook was in doubt.</EmptyNote>;
   return (
     <>

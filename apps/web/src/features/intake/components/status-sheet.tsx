@@ -1,18 +1,24 @@
 import type { IntakeView } from '@app/contracts';
 import { urls } from '../../../app/urls';
 import { useSession } from '../../../shared/session/session';
-import { Action, ActionLink } from '../../../shared/ui/action';
-import { ProblemNotice } from '../../../shared/ui/problem-notice';
+import { ActionLink } from '../../../shared/ui/action';
 import { Sheet } from '../../../shared/ui/sheet';
-import { useConfirmIntake, isMoving } from '../api/use-intakes';
+import { When } from '../../../shared/ui/when';
+import { isMoving } from '../api/use-intakes';
 import { useIntakeProgress } from '../api/use-intake-progress';
+import { Questions } from '../corrections/questions';
+import { ReadingBar } from '../corrections/reading-bar';
+import type { Draft } from '../corrections/use-draft';
+import { Confirm } from './confirm';
 import { accountingWords, counted } from './intake-words';
 import { IntakeMargin } from './intake-margin';
 import { Outcome } from './outcome';
 import { ProgressLine } from './progress-line';
+import { Withdraw } from './withdraw';
 
 /** How the intake stands, and the one thing to do about it. */
-export function StatusSheet({ intake }: { intake: IntakeView }) {
+export function StatusSheet({ intake, draft }: { intake: IntakeView; draft: Draft }) {
+  const { can } = useSession();
   const progress = useIntakeProgress(intake.id, isMoving(intake.state));
   return (
     <Sheet title={TITLES[intake.state]} margin={<IntakeMargin intake={intake} />}>
@@ -23,9 +29,15 @@ export function StatusSheet({ intake }: { intake: IntakeView }) {
       )}
       {isMoving(intake.state) && intake.failure === null && <ProgressLine state={intake.state} progress={progress} />}
       {intake.state === 'refused' && <Refused intake={intake} />}
-      {intake.state === 'needs_attention' && <Attention intake={intake} />}
+      {intake.state === 'needs_attention' && <Attention intake={intake} draft={draft} />}
       {intake.state === 'scored' && <Outcome intake={intake} />}
+      {intake.withdrawal !== null && (
+        <p>
+          Withdrawn by {intake.withdrawal.by} on <When at={intake.withdrawal.at} />: {intake.withdrawal.reason}
+        </p>
+      )}
       {intake.rowsRead > 0 && <p className="accounting">{accountingWords(intake)}.</p>}
+      {intake.isWithdrawable && can('upload_intake') && <Withdraw intake={intake} />}
     </Sheet>
   );
 }
@@ -51,45 +63,42 @@ function Refused({ intake }: { intake: IntakeView }) {
   );
 }
 
-function Attention({ intake }: { intake: IntakeView }) {
+function Attention({ intake, draft }: { intake: IntakeView; draft: Draft }) {
   const { can } = useSession();
-  const confirm = useConfirmIntake(intake.id);
-  const lots = counted(intake.lots.length, 'lot');
+  const mayAnswer = can('upload_intake');
+  const asked = new Set(intake.questions.map(({ code }) => code));
   const blocking = intake.problemCounts
-    .filter((item) => item.severity === 'blocking')
+    .filter((item) => item.severity === 'blocking' && !asked.has(item.code))
     .reduce((sum, item) => sum + item.count, 0);
-  if (!intake.isConfirmable) {
-    return (
-      <>
-        <p>
-          {blocking > 0
-            ? `${counted(blocking, 'problem')} below must be mended first. Correct the workbook and upload it again; the marked copy shows the cells.`
-            : 'It cannot be confirmed as it stands.'}
-        </p>
-        <p className="intake-actions">
-          <ActionLink kind="quiet" to={urls.intakes(intake.line.id)}>
-            Upload the corrected workbook
-          </ActionLink>
-        </p>
-      </>
-    );
-  }
   return (
     <>
-      <p>
-        Its readings will be stored and {lots} scored; lots that do not fit are held and the line is told by mail.
-        Nothing is stored before you confirm.
-      </p>
-      {can('upload_intake') ? (
-        <p className="intake-actions">
-          <Action isBusy={confirm.isPending || confirm.isSuccess} onPress={() => confirm.mutate()}>
-            Confirm and score {lots}
-          </Action>
-        </p>
-      ) : (
-        <p className="soft">An engineer or the quality manager confirms it.</p>
+      {intake.questions.length > 0 && (
+        <>
+          <p>
+            {counted(intake.questions.length, 'question')} only a person can answer. The answer is remembered for
+            workbooks with the same header on {intake.line.name}.
+          </p>
+          <Questions intake={intake} draft={draft} isOpen={mayAnswer} />
+        </>
       )}
-      {confirm.isError && <ProblemNotice problem={confirm.error} what="The intake was not confirmed." />}
+      {blocking > 0 && (
+        <p>
+          {counted(blocking, 'problem')} below must be put right first: say on the sheet below how it is to be read, or
+          mend the workbook and upload it again; the marked copy shows the cells.
+        </p>
+      )}
+      {!intake.isConfirmable && blocking === 0 && intake.questions.length === 0 && (
+        <p>It cannot be confirmed as it stands: there is no reading in it.</p>
+      )}
+      {intake.isConfirmable && draft.changes === 0 && <Confirm intake={intake} />}
+      {!intake.isConfirmable && (
+        <p className="intake-actions">
+          <ActionLink kind="quiet" to={urls.intakes(intake.line.id)}>
+            Upload a corrected workbook
+          </ActionLink>
+        </p>
+      )}
+      <ReadingBar draft={draft} />
     </>
   );
 }

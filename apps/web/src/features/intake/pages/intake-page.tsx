@@ -3,6 +3,7 @@ import { useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import { urls } from '../../../app/urls';
 import { download } from '../../../shared/api/download';
+import { useSession } from '../../../shared/session/session';
 import { useShowsLine } from '../../../shared/line-context/line-context';
 import { Action } from '../../../shared/ui/action';
 import { Loaded } from '../../../shared/ui/loaded';
@@ -12,11 +13,15 @@ import { Skeleton } from '../../../shared/ui/skeleton';
 import { useToast } from '../../../shared/ui/toast';
 import { When } from '../../../shared/ui/when';
 import { useIntake } from '../api/use-intakes';
+import { useLineChannels } from '../api/use-line-channels';
+import { FirstRows } from '../components/first-rows';
 import { FoundLots } from '../components/found-lots';
 import { STATE_WORDS } from '../components/intake-words';
 import { Problems } from '../components/problems';
-import { Recognised } from '../components/recognised';
 import { StatusSheet } from '../components/status-sheet';
+import { FileGrid } from '../corrections/file-grid';
+import { ReadingBar } from '../corrections/reading-bar';
+import { useDraft } from '../corrections/use-draft';
 import '../components/intake.css';
 
 /** One workbook: what was recognised, every problem, what will happen or came of it. */
@@ -43,7 +48,11 @@ export function IntakePage() {
 }
 
 function Intake({ intake }: { intake: IntakeView }) {
-  const isRead = intake.layout !== null;
+  const draft = useDraft(intake);
+  const channels = useLineChannels(intake.line.id);
+  const { can } = useSession();
+  const isRead = intake.grids.length > 0 || intake.layout !== null;
+  const isOpen = intake.state === 'needs_attention' && can('upload_intake');
   return (
     <>
       <PageHeading
@@ -56,7 +65,7 @@ function Intake({ intake }: { intake: IntakeView }) {
         }
         tools={isRead && <MarkedWorkbook intake={intake} />}
       />
-      <StatusSheet intake={intake} />
+      <StatusSheet intake={intake} draft={draft} />
       {intake.problemCounts.length > 0 && (
         <Sheet title="Problems">
           <Problems intake={intake} />
@@ -64,8 +73,16 @@ function Intake({ intake }: { intake: IntakeView }) {
       )}
       {isRead && (
         <>
-          <Sheet title={`What was recognised: ${LAYOUTS[intake.layout ?? 'long']}`} isFlush>
-            <Recognised intake={intake} />
+          {intake.grids.length > 0 && (
+            <Sheet title={GRID_TITLES[isOpen ? 'open' : 'closed']} isFlush margin={<ReadingMargin intake={intake} />}>
+              {intake.grids.map((grid) => (
+                <FileGrid key={grid.sheet} grid={grid} draft={draft} channels={channels} isOpen={isOpen} />
+              ))}
+              <ReadingBar draft={draft} />
+            </Sheet>
+          )}
+          <Sheet title="The first readings, as Ebbline reads them" isFlush>
+            <FirstRows readings={intake.firstRows} />
           </Sheet>
           <Sheet title="Lots found" isFlush>
             <FoundLots lots={intake.lots} />
@@ -76,7 +93,24 @@ function Intake({ intake }: { intake: IntakeView }) {
   );
 }
 
-const LAYOUTS = { long: 'a row a reading', wide: 'a column a channel' };
+const GRID_TITLES = { open: 'How it is read: correct it here', closed: 'How it was read' };
+
+/** What holds for the whole file. */
+function ReadingMargin({ intake: { text } }: { intake: IntakeView }) {
+  return (
+    <>
+      <p>These are the sheet’s own first rows. Above each column stands what it is read as.</p>
+      {text !== null && (
+        <p>
+          A text file: {text.encoding}, columns separated by {SEPARATORS[text.separator] ?? `“${text.separator}”`}
+          {text.decimalSign !== null && `, decimal ${text.decimalSign === ',' ? 'comma' : 'point'}`}.
+        </p>
+      )}
+    </>
+  );
+}
+
+const SEPARATORS: Record<string, string> = { ',': 'commas', ';': 'semicolons', '\t': 'tabs', '|': 'bars' };
 
 /** The workbook with the problem cells marked, to be mended and sent again. */
 function MarkedWorkbook({ intake }: { intake: IntakeView }) {

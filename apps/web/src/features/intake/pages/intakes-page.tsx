@@ -3,7 +3,9 @@ import { useLine } from '../../../shared/line-context/line-context';
 import { useSession } from '../../../shared/session/session';
 import { PageHeading } from '../../../shared/ui/page-heading';
 import { Sheet } from '../../../shared/ui/sheet';
+import { BlankWorkbook } from '../components/blank-workbook';
 import { DropZone } from '../components/drop-zone';
+import { KnownLayouts } from '../components/known-layouts';
 import { RecentIntakes } from '../components/recent-intakes';
 import '../components/intake.css';
 
@@ -17,13 +19,14 @@ export function IntakesPage() {
     <>
       <PageHeading title={`Intake, ${lineName}`} />
       {can('upload_intake') && (
-        <Sheet>
+        <Sheet margin={<BlankWorkbook lineId={lineId} lineName={lineName} />}>
           <DropZone key={lineId} lineId={lineId} lineName={lineName} />
         </Sheet>
       )}
       <Sheet title="Recent workbooks" isFlush>
         <RecentIntakes lineId={lineId} lineName={lineName} />
       </Sheet>
+      <KnownLayouts lineId={lineId} lineName={lineName} />
     </>
   );
 }
