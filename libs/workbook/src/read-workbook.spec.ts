@@ -162,17 +162,17 @@ describe('the wide layout', () => {
       at: Date.parse('2026-01-05T06:10:00+01:00'),
     });
   });
-  it('stops at a unit that differs from the channel’s, and names both', async () => {
+  it('converts from the unit that the header states, and says so', async () => {
     const result = await readRows([
       ['Time', 'Lot', 'Product', 'Coat weight [g/m2]', 'Web thickness [mil]'],
       [at('6:00'), 'A', 'SEP-12', 12, 0.6],
     ]);
-    expect(result.report.isBlocked).toBe(true);
-    expect(problemList(result)).toEqual(['blocking unit-differs E1']);
-    expect(result.report.problems[0].detail).toMatch(
-      /"Web thickness" in mil, but the channel "Web thickness" is in µm/,
-    );
-    expect(values(result.readings)).toEqual([[11, 12]]);
+    expect(problemList(result)).toEqual(['notice unit-converted E']);
+    // 1 mil is 25.4 µm.
+    expect(values(result.readings)).toEqual([
+      [11, 12],
+      [12, 15.24],
+    ]);
   });
   it('stops at one channel in two columns', async () => {
     const result = await readRows([
@@ -187,7 +187,7 @@ describe('the wide layout', () => {
       [null, null, null, 'g/m²', '[mil]'],
       [at('6:00'), 'A', 'SEP-12', 12, 0.6],
     ]);
-    expect(problemList(result)).toEqual(['blocking unit-differs E1']);
+    expect(problemList(result)).toEqual(['notice unit-converted E']);
     expect(result.report.rowsRead).toBe(1);
   });
 });

@@ -46,7 +46,10 @@ export class Table {
 
   /** Looks how dates and numbers are written in the first rows, before they are read. */
   learn(rows: readonly SheetRow[]): void {
-    for (const { cells } of this.blocks) cells.learn(rows);
+    for (const { stamps, cells } of this.blocks) {
+      stamps.learn(rows);
+      cells.learn(rows);
+    }
   }
 
   /** @returns why the row is not used, or undefined when it gave a reading */
