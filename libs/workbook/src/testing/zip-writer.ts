@@ -48,7 +48,7 @@ export function writeZip(parts: readonly ZipPart[]): Buffer {
   return Buffer.concat([...pieces, central, end]);
 }
 
-function pack(data: Buffer | string): PackedData {
+export function pack(data: Buffer | string): PackedData {
   const raw = Buffer.isBuffer(data) ? data : Buffer.from(data);
   return { packed: deflateRawSync(raw), size: raw.length, sum: crc32(raw) };
 }
