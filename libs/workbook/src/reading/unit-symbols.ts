@@ -104,7 +104,9 @@ function parse(folded: string): string | null {
       .map(parseFactor);
     return factors.includes(null) ? null : factors.join(' ');
   });
-  return sides.includes(null) ? null : sides.map((side) => (side === '1' ? '1' : `(${side})`)).join(' / ');
+  if (sides.includes(null)) return null;
+  const isPlainNumber = sides.every((side) => /^[1 ]+$/.test(side!));
+  return isPlainNumber ? 'ratioOfOne' : sides.map((side) => (side === '1' ? '1' : `(${side})`)).join(' / ');
 }
 
 function parseFactor(factor: string): string | null {

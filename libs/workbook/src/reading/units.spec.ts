@@ -36,6 +36,7 @@ describe('relateUnits', () => {
     [-40, '°C', '°F', -40],
     [25, '°C', 'K', 298.15],
     [2, '%', 'ppm', 20000],
+    [0.02, '1', '%', 2],
     [60, 'rpm', 'Hz', 1],
     [1, 'cSt', 'mm²/s', 1],
     [6, 'm/min', 'mm/s', 100],
@@ -56,6 +57,10 @@ describe('relateUnits', () => {
     [1, 'lb/ft³', 'kg/m³', 16.01846],
   ])('reads %p %s as %s to the digits that NIST prints', (value, from, to, printed) => {
     expect(Number(convert(value, from, to).toPrecision(7))).toBe(printed);
+  });
+  it.each(['1', '1/1', '1·1'])('takes "%s" for a plain number, of no unit', (unit) => {
+    expect(relateUnits(unit, 'µm').kind).toBe('other-quantity');
+    expect(relateUnits(unit, '').kind).toBe('unknown');
   });
   it('takes the pound-force per square inch from its definition', () => {
     // 0.45359237 kg · 9.80665 m/s² / (0.0254 m)², by hand in integers: 4.4482216152605 / 0.00064516.
