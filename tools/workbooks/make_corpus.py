@@ -9,6 +9,7 @@ import os
 import containers  # noqa: F401  (each module registers its files)
 import layouts  # noqa: F401
 import layouts_decorated  # noqa: F401
+import layouts_messiest  # noqa: F401
 import layouts_sheets  # noqa: F401
 import layouts_wide  # noqa: F401
 import lots  # noqa: F401
