@@ -1,4 +1,4 @@
-import type { PersonView, Role } from '@app/contracts';
+import type { ApiTokenView, NewApiToken, PersonView, Role } from '@app/contracts';
 import { startTestApp, type TestApp } from '../support/app';
 import { expectProblem } from '../support/expect-problem';
 import { insertPerson, PASSWORD, signIn } from '../support/factories/people';
@@ -222,6 +222,31 @@ describe('the people of a plant', () => {
     await signIn(app, lead.email);
     expect((await audit('disable-person')).map(({ sentence }) => sentence as string)).toEqual(['admin disabled lead.']);
     expect(await audit('enable-person')).toHaveLength(1);
+  });
+
+  it('lose their API tokens for good when they are disabled or taken out of the plant', async () => {
+    const { manager, engineer } = plant.people;
+    const look = (headers: Headers) => app.http.get(`/api/lines/${plant.lines[0].id}/intakes`).set(headers);
+    const make = async (email: string): Promise<Headers> => {
+      const made = await app.http
+        .post(`/api/plants/${plant.id}/api-tokens`)
+        .set(await signIn(app, email))
+        .send({ name: 'Line computer' })
+        .expect(201);
+      return { authorization: `Bearer ${(made.body as NewApiToken).token}` };
+    };
+    const [theirs, other] = [await make(manager.email), await make(engineer.email)];
+    await look(theirs).expect(200);
+    await act(manager.id, 'disable').expect(200);
+    expectProblem(await look(theirs), 401, 'token-not-in-force');
+    await act(manager.id, 'enable').expect(200);
+    expectProblem(await look(theirs), 401, 'token-not-in-force');
+    const listed = await app.http.get(`/api/plants/${plant.id}/api-tokens`).set(await signIn(app, manager.email));
+    expect((listed.body as ApiTokenView[]).map(({ revokedAt }) => revokedAt)).toEqual([app.clock.now().toISOString()]);
+    await look(other).expect(200);
+    await change(engineer.id, []).expect(200);
+    await invite({ ...wenna, email: engineer.email }).expect(201);
+    expectProblem(await look(other), 401, 'token-not-in-force');
   });
 
   it('are not disabled over the head of another plant’s administrator, nor by themselves', async () => {

@@ -12,6 +12,7 @@ import {
   type PlantPerson,
   replaceRoles,
   type Transaction,
+  updateApiTokensRevoked,
   updatePersonDisabled,
   updatePersonTokensRevoked,
   updateSessionsRevoked,
@@ -61,6 +62,7 @@ export class PeopleService {
     const after = { roles, lineIds: lines.map((line) => line.id) };
     await replaceRoles(tx, plantId, personId, after);
     if (roles.length === 0 && !before.hasPassword) await updatePersonTokensRevoked(tx, personId, ['invitation'], at);
+    if (roles.length === 0) await updateApiTokensRevoked(tx, personId, at, plantId);
     const what =
       roles.length === 0
         ? `took ${before.name} out of the plant`
@@ -79,7 +81,7 @@ export class PeopleService {
     return (await findPlantPerson(tx, plantId, personId)) ?? { ...before, ...after };
   }
 
-  /** Ends every session and every link; the person's entries stay. */
+  /** Ends every session, every link and every API token; the person's entries stay. */
   disable(administrator: Person, plantId: number, personId: number): Promise<PersonView> {
     return this.setDisabled(administrator, plantId, personId, async (tx, person, plantIds, at) => {
       if (person.id === administrator.id)
@@ -89,6 +91,7 @@ export class PeopleService {
       await updatePersonDisabled(tx, personId, at);
       await updateSessionsRevoked(tx, personId, at);
       await updatePersonTokensRevoked(tx, personId, LINK_PURPOSES, at);
+      await updateApiTokensRevoked(tx, personId, at);
       return { action: 'disable-person', word: 'disabled' };
     });
   }
