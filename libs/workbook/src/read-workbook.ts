@@ -5,6 +5,7 @@ import { DEFAULT_LIMITS, type ReadLimits } from './limits';
 import { ChannelNames } from './reading/channel-names';
 import { Findings } from './reading/findings';
 import { LotBook } from './reading/lot-book';
+import { askAboutSpellings } from './reading/lot-spellings';
 import { ProductNames } from './reading/product-names';
 import { Questions } from './reading/questions';
 import { sayOfWorkbook } from './reading/say-of-workbook';
@@ -94,7 +95,9 @@ export async function readWorkbook(
     if (reader.isLeftOut) leftOut.add(sheet.name);
   }
   await flush();
-  return finishReport(report, parts, leftOut);
+  askAboutSpellings(parts.lots, context.lots ?? [], parts.questions);
+  sayOfWorkbook(report, leftOut, parts);
+  return finishReport(report, parts);
 }
 
 const emptyReport = (dateSystem: 1900 | 1904, text: WorkbookReport['text']): WorkbookReport => ({
@@ -116,9 +119,7 @@ const emptyReport = (dateSystem: 1900 | 1904, text: WorkbookReport['text']): Wor
   text,
 });
 
-function finishReport(report: WorkbookReport, parts: ReadingParts, leftOut: ReadonlySet<string>): WorkbookReport {
-  sayOfWorkbook(report, leftOut, parts);
-  const { findings, questions, lots } = parts;
+function finishReport(report: WorkbookReport, { findings, questions, lots }: ReadingParts): WorkbookReport {
   return {
     ...report,
     readingsParsed: lots.readings,

@@ -12,14 +12,23 @@ export class Questions {
   constructor(private readonly findings: Findings) {}
 
   /**
+   * Asks, unless the same choices were offered for the same column before; then its rows are added to that question.
+   *
    * @param place the sheet, and the column it is about; with a row, the first row it is about
    * @param text what follows the place: a verb phrase that ends in the question
    * @param rows how many rows it is about
    */
   ask(code: string, place: Place, text: string, rows: number, choices: Choice[]): void {
+    const column = place.column === undefined ? null : columnLetters(place.column);
+    const same = this.asked.find(
+      (one) => one.code === code && one.sheet === place.sheet && one.column === column && isAlike(one.choices, choices),
+    );
+    if (same) {
+      same.rows += rows;
+      return;
+    }
     this.findings.add('blocking', code, place, () => text);
     if (this.asked.length >= MAX_QUESTIONS) return;
-    const column = place.column === undefined ? null : columnLetters(place.column);
     this.asked.push({
       code,
       sheet: place.sheet,
@@ -30,3 +39,6 @@ export class Questions {
     });
   }
 }
+
+const isAlike = (one: readonly Choice[], other: readonly Choice[]): boolean =>
+  JSON.stringify(one.map(({ answers }) => answers)) === JSON.stringify(other.map(({ answers }) => answers));
