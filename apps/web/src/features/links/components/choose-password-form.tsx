@@ -3,6 +3,7 @@ import { useForm } from 'react-hook-form';
 import { useNavigate } from 'react-router-dom';
 import { urls } from '../../../app/urls';
 import { Field } from '../../../shared/forms/field';
+import { NewPasswordInput } from '../../../shared/forms/new-password-input';
 import { showProblem } from '../../../shared/forms/problem-fields';
 import { useAuth } from '../../../shared/session/auth';
 import { Action } from '../../../shared/ui/action';
@@ -50,13 +51,7 @@ export function ChoosePasswordForm({ token, link }: { token: string; link: LinkV
         error={errors.password?.message}
       >
         {(control) => (
-          <input
-            {...control}
-            className="input"
-            type="password"
-            autoComplete="new-password"
-            {...form.register('password', { required: 'Choose a password.' })}
-          />
+          <NewPasswordInput {...control} {...form.register('password', { required: 'Choose a password.' })} />
         )}
       </Field>
       {errors.root?.message !== undefined && (

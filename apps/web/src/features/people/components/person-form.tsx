@@ -1,5 +1,5 @@
 import type { LineView, PersonView } from '@app/contracts';
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { useForm } from 'react-hook-form';
 import { showProblem } from '../../../shared/forms/problem-fields';
 import { Action } from '../../../shared/ui/action';
@@ -21,6 +21,9 @@ export function PersonForm({ plantId, person, lines, isYourself, onClose }: Pers
   const act = usePersonAction(plantId, person.id);
   const { done, failed } = useToast();
   const [isLeaving, setIsLeaving] = useState(false);
+  const element = useRef<HTMLFormElement>(null);
+  // The form opens below the table: whoever opened it by keyboard goes on in it.
+  useEffect(() => element.current?.querySelector('input')?.focus(), []);
   const form = useForm<RolesValues>({
     defaultValues: { roles: person.roles, lineIds: person.lineIds.map(String) },
   });
@@ -47,7 +50,7 @@ export function PersonForm({ plantId, person, lines, isYourself, onClose }: Pers
     }
   };
   return (
-    <form className="form" onSubmit={(event) => void send(event)} noValidate>
+    <form ref={element} className="form" onSubmit={(event) => void send(event)} noValidate>
       <RolesFields form={form} lines={lines} />
       {isLeaving && (
         <p role="status">

@@ -1,5 +1,5 @@
 import type { LineView, PersonView } from '@app/contracts';
-import { useEffect, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { useParams } from 'react-router-dom';
 import { useSession } from '../../../shared/session/session';
 import { useNow } from '../../../shared/time/use-now';
@@ -66,6 +66,15 @@ function PeopleTable({ plantId, people, lines }: PeopleTableProps) {
   const now = useNow();
   const [chosenId, setChosenId] = useState<number | null>(null);
   const chosen = people.find((person) => person.id === chosenId);
+  const opener = useRef<HTMLElement | null>(null);
+  const open = (person: PersonView) => {
+    opener.current = document.activeElement as HTMLElement | null;
+    setChosenId(person.id);
+  };
+  const close = () => {
+    setChosenId(null);
+    opener.current?.focus();
+  };
   return (
     <>
       <Sheet isFlush>
@@ -82,7 +91,7 @@ function PeopleTable({ plantId, people, lines }: PeopleTableProps) {
             {
               name: 'Change',
               cell: (person) => (
-                <Action kind="plain" label={`Change ${person.name}`} onPress={() => setChosenId(person.id)}>
+                <Action kind="plain" label={`Change ${person.name}`} onPress={() => open(person)}>
                   Change
                 </Action>
               ),
@@ -106,7 +115,7 @@ function PeopleTable({ plantId, people, lines }: PeopleTableProps) {
             person={chosen}
             lines={lines}
             isYourself={chosen.id === me.id}
-            onClose={() => setChosenId(null)}
+            onClose={close}
           />
         </Sheet>
       )}

@@ -1,6 +1,7 @@
 import { PASSWORD_MINIMUM } from '@app/contracts';
 import { useForm } from 'react-hook-form';
 import { Field } from '../../../shared/forms/field';
+import { NewPasswordInput } from '../../../shared/forms/new-password-input';
 import { showProblem } from '../../../shared/forms/problem-fields';
 import { useAuth } from '../../../shared/session/auth';
 import { Action } from '../../../shared/ui/action';
@@ -47,15 +48,7 @@ export function PasswordForm() {
         hint={`At least ${PASSWORD_MINIMUM} characters; a few words that only you would put together do.`}
         error={errors.next?.message}
       >
-        {(control) => (
-          <input
-            {...control}
-            className="input"
-            type="password"
-            autoComplete="new-password"
-            {...form.register('next', { required: 'Choose a password.' })}
-          />
-        )}
+        {(control) => <NewPasswordInput {...control} {...form.register('next', { required: 'Choose a password.' })} />}
       </Field>
       {errors.root?.message !== undefined && (
         <p className="form__error" role="alert">
