@@ -1,6 +1,7 @@
 import { useSession } from '../../../shared/session/session';
 import { PageHeading } from '../../../shared/ui/page-heading';
 import { Sheet } from '../../../shared/ui/sheet';
+import { ApiTokens } from '../components/api-tokens';
 import { MailChoices } from '../components/mail-choices';
 import { NameForm } from '../components/name-form';
 import { PasswordForm } from '../components/password-form';
@@ -28,6 +29,11 @@ export function ProfilePage() {
       >
         <PasswordForm />
       </Sheet>
+      {me.memberships
+        .filter(({ permissions }) => permissions.includes('upload_intake'))
+        .map(({ plant }) => (
+          <ApiTokens key={plant.id} plant={plant} />
+        ))}
     </>
   );
 }
