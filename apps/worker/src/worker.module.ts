@@ -1,7 +1,10 @@
 import { type DynamicModule, Module } from '@nestjs/common';
 import { ReadIntakeHandler } from './intake/read-intake.handler';
+import { RejudgeWithdrawnHandler } from './intake/rejudge-withdrawn.handler';
+import { CompareSettledHandler } from './judging/compare-settled.handler';
 import { HeldLotsMailService } from './judging/held-lots-mail.service';
 import { JudgingService } from './judging/judging.service';
+import { RejudgeSettledHandler } from './judging/rejudge-settled.handler';
 import { ScoreChannelsHandler } from './judging/score-channels.handler';
 import { ScoreIntakeHandler } from './judging/score-intake.handler';
 import { MailProcessor } from './mail/mail.processor';
@@ -22,6 +25,9 @@ const HANDLERS = [
   ReadIntakeHandler,
   ScoreIntakeHandler,
   ScoreChannelsHandler,
+  RejudgeWithdrawnHandler,
+  CompareSettledHandler,
+  RejudgeSettledHandler,
   ProposePlanHandler,
   WeeklySummaryHandler,
 ];

@@ -5,6 +5,7 @@ export * from './states';
 export * from './jobs';
 export * from './format';
 export * from './wording';
+export * from './verdict-wording';
 export * from './reminder-wording';
 export * from './audit-changes';
 export * from './api/common';

@@ -12,6 +12,12 @@ export const JOBS = {
   scoreIntake: 'score-intake',
   /** Judge channels again after a break, an approval, a decision or an exclusion. */
   scoreChannels: 'score-channels',
+  /** Judge channels again without an intake that was withdrawn. */
+  rejudgeWithdrawn: 'rejudge-withdrawn',
+  /** Find the settled verdicts that would be another one by an intake's readings. */
+  compareSettled: 'compare-settled',
+  /** Judge these again, as a person asked. */
+  rejudgeSettled: 'rejudge-settled',
   /** Work out the default plan of a channel from its readings and propose it. */
   proposePlan: 'propose-plan',
   /** Freeze a plant's week as a summary and mail it. */
@@ -30,6 +36,9 @@ export interface OwedJobSubject {
   'score-intake': { intakeId: number };
   /** `rejudgeFrom` (ISO): settled verdicts of lots that end later are looked at again too. */
   'score-channels': { channelIds: number[]; reason: string; rejudgeFrom: string | null };
+  'rejudge-withdrawn': { intakeId: number };
+  'compare-settled': { intakeId: number };
+  'rejudge-settled': { intakeId: number };
   'propose-plan': { planId: number };
   /** `askedBy`: the person who wants a new version; null when it is due and made unless the week has one. */
   'weekly-summary': { plantId: number; weekStartsOn: string; isSent: boolean; askedBy: number | null };

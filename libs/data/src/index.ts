@@ -60,4 +60,7 @@ export * from './layouts';
 export * from './api-tokens';
 export * from './confirm-intake';
 export * from './compare-intake';
+export * from './withdraw-intake';
+export * from './withdraw-holds';
+export * from './settled-changes';
 export * from './shift-names';

@@ -9,6 +9,7 @@ export { heldLotsMail, type HeldCause, type HeldLotFacts, type HeldLotsFacts } f
 export { holdReminderMail, type HoldReminderFacts, type OldHoldFacts } from './messages/hold-reminder';
 export { invitationMail, type InvitationFacts } from './messages/invitation';
 export { passwordResetMail, type PasswordResetFacts } from './messages/password-reset';
+export { withdrawnIntakeMail, type WithdrawnIntakeFacts } from './messages/withdrawn-intake';
 export type { Mail } from './messages/layout';
 export { zonedText } from './messages/zoned-text';
 export { renderPng } from './chart/render-png';

@@ -53,6 +53,12 @@ export class JudgingService {
     }
   }
 
+  /** A channel as it would be judged now; nothing is recorded. */
+  onTrial(channelId: number, rejudgeFrom: number | null): Promise<JudgedChannel> {
+    const task: JudgeChannelTask = { databaseUrl: this.config.databaseUrl, channelId, rejudgeFrom };
+    return this.threads.run<JudgedChannel>('judge-channel.thread', task);
+  }
+
   private async judgeChannels(
     channelIds: number[],
     judged: Map<number, JudgedChannel>,
@@ -61,12 +67,7 @@ export class JudgingService {
     for (const id of channelIds) judged.delete(id);
     await Promise.all(
       channelIds.map(async (channelId) => {
-        const task: JudgeChannelTask = {
-          databaseUrl: this.config.databaseUrl,
-          channelId,
-          rejudgeFrom: request.rejudgeFrom,
-        };
-        const channel = await this.threads.run<JudgedChannel>('judge-channel.thread', task);
+        const channel = await this.onTrial(channelId, request.rejudgeFrom);
         for (const segment of channel.segments) segment.inputHash = Buffer.from(segment.inputHash);
         judged.set(channelId, channel);
         request.onScored?.(judged.size, request.channelIds.length);

@@ -5,7 +5,9 @@ import {
   findIntake,
   findSupersedable,
   insertAuditEntry,
+  insertOwedJob,
   type IntakeRow,
+  listAffectedChannels,
   lockIntake,
   lockOwedJob,
   notifyProgress,
@@ -21,10 +23,13 @@ import {
 import { CLOCK, type Clock, DATABASE, Dispatcher } from '@app/platform';
 import { type HandlerOutcome, NoLongerOwedError, type OwedJobHandler } from '../owed/owed-job-handler';
 import { auditHolds } from './audit-holds';
+import { auditSuperseded } from './audit-superseded';
 import { HeldLotsMailService } from './held-lots-mail.service';
 import { JudgingService } from './judging.service';
 
 type Job = OwedJob & { subject: { intakeId: number } };
+/** What is to be sent and done once its outcome is committed. */
+type Owed = { mailIds: number[]; owedJobIds: number[] };
 
 /**
  * Takes a confirmed intake to its end: readings stored in one transaction, then verdicts, holds, audit and mails in another.
@@ -49,7 +54,7 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
       return { done: false, reason: 'the intake is not waiting to be scored' };
     }
     const channelIds = intake.channelIds ?? [];
-    const mailIds = await this.judging.judge({
+    const { mailIds, owedJobIds } = await this.judging.judge({
       channelIds,
       intakeId: intake.id,
       rejudgeFrom: null,
@@ -58,6 +63,7 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
       finish: (tx, recorded) => this.finish(tx, job, intake, recorded),
     });
     await this.dispatcher.mails(mailIds);
+    await this.dispatcher.owedJobs(owedJobIds);
     return { done: true };
   }
 
@@ -95,16 +101,17 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
         action: 'store',
         thingKind: 'intake',
         thingId: intake.id,
-        sentence: `Ebbline stored ${stored.readingsStored} readings of ${intake.fileName}; ${stored.readingsAlreadyThere} were there already.`,
+        sentence: `Ebbline stored ${stored.readingsStored} readings of ${intake.fileName}${stored.readingsSuperseding > 0 ? `, ${stored.readingsSuperseding} of them in the place of others` : ''}; ${stored.readingsAlreadyThere} were there already.`,
         before: { state: 'queued' },
         after: { state: 'working' },
       });
+      await auditSuperseded(tx, intake, stored.superseded, this.clock.now());
     });
     const intake = await findIntake(this.database, intakeId);
     return intake?.state === 'working' ? intake : undefined;
   }
 
-  private async finish(tx: Transaction, job: Job, intake: IntakeRow, recorded: Recorded): Promise<number[]> {
+  private async finish(tx: Transaction, job: Job, intake: IntakeRow, recorded: Recorded): Promise<Owed> {
     if (!(await lockOwedJob(tx, job.id))) throw new NoLongerOwedError(job.id);
     const at = this.clock.now();
     await updateIntakeScored(tx, intake.id, at);
@@ -127,6 +134,7 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
       `the intake of ${intake.fileName}`,
       at,
     );
+    const owedJobIds = await oweComparison(tx, intake, at);
     await updateOwedJobEnded(tx, job.id, 'done', at);
     await notifyProgress(
       tx,
@@ -138,7 +146,7 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
         doneSentence(recorded),
       ),
     );
-    return mailIds;
+    return { mailIds, owedJobIds };
   }
 
   private async tellStoring(intake: IntakeRow): Promise<void> {
@@ -174,6 +182,12 @@ export class ScoreIntakeHandler implements OwedJobHandler<'score-intake'> {
       sentence,
     };
   }
+}
+
+/** Where its readings came late, settled verdicts of other lots may change: they are looked at on trial. */
+async function oweComparison(tx: Transaction, { id, plantId }: IntakeRow, at: Date): Promise<number[]> {
+  if ((await listAffectedChannels(tx, id)).length === 0) return [];
+  return [await insertOwedJob(tx, { plantId, name: JOBS.compareSettled, subject: { intakeId: id }, at })];
 }
 
 function doneSentence(recorded: Recorded): string {

@@ -7,9 +7,12 @@ import { openPlantDatabase, type PlantDatabase } from '../../../../libs/data/src
 import { SettableClock } from '../../../../test/support/clock';
 import { ReadIntakeHandler } from '../intake/read-intake.handler';
 import readIntake from '../intake/read-intake.thread';
+import { RejudgeWithdrawnHandler } from '../intake/rejudge-withdrawn.handler';
+import { CompareSettledHandler } from '../judging/compare-settled.handler';
 import { HeldLotsMailService } from '../judging/held-lots-mail.service';
 import { judgeFrom, type JudgeChannelTask } from '../judging/judge-channel.thread';
 import { JudgingService } from '../judging/judging.service';
+import { RejudgeSettledHandler } from '../judging/rejudge-settled.handler';
 import { ScoreChannelsHandler } from '../judging/score-channels.handler';
 import { ScoreIntakeHandler } from '../judging/score-intake.handler';
 import type { OwedJobHandler } from '../owed/owed-job-handler';
@@ -50,6 +53,9 @@ export class WorkerBench {
       new ReadIntakeHandler(this.db, config, this.clock, pools, dispatcher),
       new ScoreIntakeHandler(this.db, this.clock, judging, mails, dispatcher),
       new ScoreChannelsHandler(this.clock, judging, mails, dispatcher),
+      new RejudgeWithdrawnHandler(this.db, config, this.clock, judging, mails, dispatcher),
+      new CompareSettledHandler(this.db, this.clock, judging),
+      new RejudgeSettledHandler(this.db, this.clock, judging, mails, dispatcher),
       new ProposePlanHandler(this.db, config, this.clock, pools),
       new WeeklySummaryHandler(this.db, this.clock, new SummaryMailService(config), dispatcher),
     ];
