@@ -103,6 +103,11 @@ export class RowReader {
     }
     const code = products.find(text);
     if (code !== undefined) return code;
+    if (row.cells[column]?.kind === 'number' && row.cells[column].format.isDate) {
+      const spoilt =
+        'has a date as its product; Excel may have changed a typed code into it, so write the code as text';
+      return new RowNotUsed('product-is-a-date', spoilt, column);
+    }
     const why = `names the product "${text.slice(0, 60)}", which is not known here (${products.list()})`;
     return new RowNotUsed('unknown-product', why, column);
   }
