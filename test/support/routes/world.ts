@@ -25,6 +25,8 @@ export interface World {
   holdId: number;
   proposedPlanId: number;
   summaryId: number;
+  /** Read and not confirmed: nothing came of it. */
+  unconfirmedIntakeId: number;
   /** Of coat weight's next specification, by the engineer. */
   proposalId: number;
   /** Serves nowhere. */
@@ -64,6 +66,7 @@ export async function openWorld(): Promise<World> {
     other,
     holdId: await openHold(app, shift),
     proposedPlanId,
+    unconfirmedIntakeId: await insertIntake(db, plant, { state: 'needs_attention' }),
     summaryId: await insertRow(db, 'summaries', {
       plant_id: plant.id,
       week_starts_on: '2026-02-23',

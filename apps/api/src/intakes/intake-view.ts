@@ -12,6 +12,7 @@ interface Parts {
   channels: Map<number, { name: string; unit: string }>;
   /** Of the first rows, in their order. */
   shifts: (string | null)[];
+  isWithdrawable: boolean;
   outcome:
     (IntakeNotes & { lotsScored: number; held: { holdId: number; lotNumber: string; sentences: string[] }[] }) | null;
 }
@@ -27,7 +28,15 @@ function isReady({ isBlocked, questions = [], readingsParsed }: StoredReport): b
   return !isBlocked && questions.length === 0 && readingsParsed > 0;
 }
 
-export function intakeView({ intake, sameFile, problems, channels, shifts, outcome }: Parts): IntakeView {
+export function intakeView({
+  intake,
+  sameFile,
+  problems,
+  channels,
+  shifts,
+  isWithdrawable,
+  outcome,
+}: Parts): IntakeView {
   const report = intake.report as StoredReport | null;
   const nameOf = (channelId: number | null) => (channelId === null ? undefined : channels.get(channelId)?.name);
   return {
@@ -88,8 +97,8 @@ export function intakeView({ intake, sameFile, problems, channels, shifts, outco
     answers: intake.answers,
     comparison: null,
     rowsSuperseding: 0,
-    withdrawal: null,
-    isWithdrawable: false,
+    withdrawal: withdrawalOf(intake),
+    isWithdrawable,
     isConfirmable: isConfirmable(intake),
     outcome: outcome && {
       lotsScored: outcome.lotsScored,
@@ -107,6 +116,11 @@ export function intakeView({ intake, sameFile, problems, channels, shifts, outco
       beforeFirstPlan: outcome.beforeFirstPlan,
     },
   };
+}
+
+function withdrawalOf({ withdrawnAt, withdrawnByName, withdrawalReason }: IntakeRow): IntakeView['withdrawal'] {
+  if (withdrawnAt === null) return null;
+  return { at: withdrawnAt.toISOString(), by: withdrawnByName ?? '', reason: withdrawalReason ?? '' };
 }
 
 export function intakeListItem(intake: IntakeRow): IntakeListItem {

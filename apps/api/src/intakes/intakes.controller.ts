@@ -12,17 +12,18 @@ import {
   UploadedFile,
 } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
-import type { IntakeListItem, IntakeView, Page } from '@app/contracts';
+import type { IntakeListItem, IntakeView, Page, SettledChange } from '@app/contracts';
 import type { Observable } from 'rxjs';
 import { Permit } from '../access/permit';
 import { CurrentPerson, type Person } from '../auth/current-person';
 import { ForMachines } from '../auth/machine';
 import { IdPipe } from '../platform/id.pipe';
 import { checkAnswers } from './check-answers';
-import { ConfirmIntakeDto, ReadAgainDto, ReceiveQueryDto } from './dto/intake.dto';
+import { ConfirmIntakeDto, ReadAgainDto, ReceiveQueryDto, WithdrawIntakeDto } from './dto/intake.dto';
 import { IntakeListQueryDto } from './dto/intake-list-query.dto';
 import { IntakeEventsService } from './intake-events.service';
 import { IntakesService } from './intakes.service';
+import { WithdrawalsService } from './withdrawals.service';
 import { uploadedFile, WorkbookUpload } from './workbook-upload';
 
 const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
@@ -32,6 +33,7 @@ const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet'
 export class IntakesController {
   constructor(
     private readonly intakes: IntakesService,
+    private readonly withdrawals: WithdrawalsService,
     private readonly events: IntakeEventsService,
   ) {}
 
@@ -86,6 +88,30 @@ export class IntakesController {
     @Body() { answers }: ReadAgainDto,
   ): Promise<IntakeView> {
     return this.intakes.readAgain(person, id, checkAnswers(answers));
+  }
+
+  @Post('intakes/:id/withdraw')
+  @Permit('upload_intake')
+  @HttpCode(200)
+  withdraw(
+    @CurrentPerson() person: Person,
+    @Param('id', IdPipe) id: number,
+    @Body() { reason }: WithdrawIntakeDto,
+  ): Promise<IntakeView> {
+    return this.withdrawals.withdraw(person, id, reason);
+  }
+
+  @Get('intakes/:id/settled')
+  @Permit('read')
+  settled(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<SettledChange[]> {
+    return this.withdrawals.settled(person, id);
+  }
+
+  @Post('intakes/:id/settled')
+  @Permit('upload_intake')
+  @HttpCode(200)
+  rejudgeSettled(@CurrentPerson() person: Person, @Param('id', IdPipe) id: number): Promise<SettledChange[]> {
+    return this.withdrawals.rejudgeSettled(person, id);
   }
 
   @Sse('intakes/:id/events')

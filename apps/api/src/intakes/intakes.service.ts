@@ -16,6 +16,7 @@ import {
   findIntake,
   findLine,
   findSameFile,
+  findWithdrawalObstacle,
   getIntakeBytes,
   getIntakeNotes,
   getIntakeOutcome,
@@ -180,15 +181,24 @@ export class IntakesService {
   private async view(intake: IntakeRow): Promise<IntakeView> {
     const firstRows = (intake.report as StoredReport | null)?.firstRows ?? [];
     const instants = firstRows.map(({ at }) => new Date(at));
-    const [sameFile, problems, context, shifts, outcome] = await Promise.all([
+    const [sameFile, problems, context, shifts, obstacle, outcome] = await Promise.all([
       findSameFile(this.database, intake),
       listIntakeProblems(this.database, intake.id, SHOWN_PROBLEMS),
       getLineContext(this.database, intake.lineId, { isWithRetired: true }),
       listShiftNames(this.database, intake.plantId, instants),
+      findWithdrawalObstacle(this.database, intake),
       intake.state === 'scored' ? this.outcome(intake.id) : null,
     ]);
     const channels = new Map(context.channels.map((channel) => [channel.id, channel]));
-    return intakeView({ intake, sameFile, problems, channels, shifts, outcome });
+    return intakeView({
+      intake,
+      sameFile,
+      problems,
+      channels,
+      shifts,
+      isWithdrawable: obstacle === undefined,
+      outcome,
+    });
   }
 
   private async outcome(intakeId: number) {

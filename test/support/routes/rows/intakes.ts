@@ -1,6 +1,6 @@
 import { insertRow } from '../../factories/insert';
 import { insertIntake } from '../../factories/lots';
-import { ofIntake, ofPlant, type Rows, sending } from '../row';
+import { ofIntake, ofPlant, reading, type Rows, sending } from '../row';
 import type { World } from '../world';
 
 const who = { who: 'upload and confirm an intake, withdraw one', permission: 'upload_intake' } as const;
@@ -23,6 +23,30 @@ export const INTAKE_ROWS: Rows = {
         kind: 'intake',
         thing: (_, { asked }) => asked.at?.id as number,
       },
+    },
+  },
+  'POST /api/intakes/{id}/withdraw': {
+    ...who,
+    asked: (world) => ({ at: { id: world.unconfirmedIntakeId }, body: { reason: 'The wrong shift.' } }),
+    write: {
+      by: 'engineer',
+      prepare: async ({ app, plant }) => ({
+        at: { id: await insertIntake(app.database, plant, { state: 'needs_attention' }) },
+        body: { reason: 'The wrong shift.' },
+      }),
+      entry: {
+        sentence: /engineer withdrew .*coater-2-early\.xlsx/,
+        kind: 'intake',
+        thing: (_, { asked }) => asked.at?.id as number,
+      },
+    },
+  },
+  'GET /api/intakes/{id}/settled': { ...reading, ...ofIntake },
+  'POST /api/intakes/{id}/settled': {
+    ...who,
+    ...ofIntake,
+    write: {
+      exempt: 'Where no settled verdict would change, as here, nothing is done; its entry is tested where some do.',
     },
   },
   'DELETE /api/lines/{id}/layouts/{layoutId}': {

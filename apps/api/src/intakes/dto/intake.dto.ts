@@ -1,5 +1,6 @@
 import { ApiProperty, ApiPropertyOptional } from '@nestjs/swagger';
-import { IsIn, IsObject, IsOptional } from 'class-validator';
+import { Transform } from 'class-transformer';
+import { IsIn, IsNotEmpty, IsObject, IsOptional, IsString, MaxLength } from 'class-validator';
 
 export class ReceiveQueryDto {
   @ApiPropertyOptional({
@@ -20,10 +21,27 @@ export class ConfirmIntakeDto {
   @IsOptional()
   @IsIn(['keep', 'supersede'], { message: 'Say whether stored readings stand or are superseded.' })
   differing?: 'keep' | 'supersede';
+
+  @ApiPropertyOptional({
+    enum: ['list', 'rejudge'],
+    description: 'Settled verdicts of other lots that would change: listed (the default), or judged again at once.',
+  })
+  @IsOptional()
+  @IsIn(['list', 'rejudge'], { message: 'Say whether settled verdicts are listed or judged again.' })
+  settled?: 'list' | 'rejudge';
 }
 
 export class ReadAgainDto {
   @ApiProperty({ type: 'object', additionalProperties: true, description: 'What is said about how it is to be read.' })
   @IsObject({ message: 'Give the answers as an object.' })
   answers!: object;
+}
+
+export class WithdrawIntakeDto {
+  @ApiProperty()
+  @Transform(({ value }: { value: unknown }) => (typeof value === 'string' ? value.trim() : value))
+  @IsString()
+  @IsNotEmpty({ message: 'Say why: the reason stands on the record.' })
+  @MaxLength(500)
+  reason!: string;
 }

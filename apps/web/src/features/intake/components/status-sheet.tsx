@@ -14,6 +14,7 @@ import { accountingWords, counted } from './intake-words';
 import { IntakeMargin } from './intake-margin';
 import { Outcome } from './outcome';
 import { ProgressLine } from './progress-line';
+import { SettledChanges } from './settled-changes';
 import { Withdraw } from './withdraw';
 
 /** How the intake stands, and the one thing to do about it. */
@@ -31,6 +32,7 @@ export function StatusSheet({ intake, draft }: { intake: IntakeView; draft: Draf
       {intake.state === 'refused' && <Refused intake={intake} />}
       {intake.state === 'needs_attention' && <Attention intake={intake} draft={draft} />}
       {intake.state === 'scored' && <Outcome intake={intake} />}
+      {intake.state === 'scored' && <SettledChanges intake={intake} />}
       {intake.withdrawal !== null && (
         <p>
           Withdrawn by {intake.withdrawal.by} on <When at={intake.withdrawal.at} />: {intake.withdrawal.reason}
