@@ -10,6 +10,8 @@ import type { Separator } from './text-facts';
 
 /** Of one row, in units of the longest cell. */
 const LONGEST_ROW = 8;
+/** More rows than a piece can have: the parser never waits for them to be taken. */
+const MANY = 1_000_000;
 /** `="00123"`, by which some programs keep spreadsheets from dropping zeros. */
 const KEPT_TEXT = /^="([^"]*)"$/;
 /** The mark with which old programs end a text file. */
@@ -32,49 +34,49 @@ export async function* readTextRows(
   limits: ReadLimits,
 ): AsyncGenerator<SheetRow[]> {
   const count: CellCount = { cells: 0 };
-  let rows: SheetRow[] = [];
-  let number = 0;
-  let failure: unknown;
-  const take = (record: string[]): null => {
-    number += 1;
-    if (failure !== undefined || (number === 1 && isFirstLeftOut)) return null;
-    try {
-      const row = toRow(number, record, limits, count);
-      if (row.cells.length > 0) rows.push(row);
-    } catch (error) {
-      failure = error;
-    }
-    return null;
-  };
-  const parser = parse({
+  const options = {
     ...SPLITTING,
     delimiter: separator,
     max_record_size: LONGEST_ROW * limits.maxStringLength,
-    on_record: take,
-  });
-  const isDone = (error: unknown): void => {
-    failure ??= error ? refusalOf(error as CsvError, number + 1) : undefined;
-    if (failure !== undefined) throw failure as Error;
+    readableHighWaterMark: MANY,
   };
-  parser.on('error', () => undefined); // told by the callbacks too
+  const parser = parse(options);
+  parser.on('error', () => undefined); // what went wrong is told by `write` and `end`
+  let number = 0;
+  const takeRows = (): SheetRow[] => {
+    const rows: SheetRow[] = [];
+    for (let record = next(parser); record !== null; record = next(parser)) {
+      number += 1;
+      if (number === 1 && isFirstLeftOut) continue;
+      const row = toRow(number, record, limits, count);
+      if (row.cells.length > 0) rows.push(row);
+    }
+    return rows;
+  };
   try {
     for (const piece of pieces) {
-      isDone(await write(parser, piece));
-      if (rows.length > 0) yield rows;
-      rows = [];
+      const error = await write(parser, piece);
+      if (error) throw refusalOf(error, parser.info.records + 1);
+      yield takeRows();
     }
-    isDone(await end(parser));
-    if (rows.length > 0) yield rows;
+    const error = await end(parser);
+    if (error) throw refusalOf(error, parser.info.records + 1);
+    yield takeRows();
   } finally {
     parser.destroy();
   }
 }
 
-const write = (parser: Parser, piece: string): Promise<unknown> =>
-  new Promise((resolve) => parser.write(piece, (error) => resolve(error)));
+const next = (parser: Parser): string[] | null => parser.read() as string[] | null;
+
+type Failure = CsvError | undefined;
+
+/** Resolves when the piece is split, with what went wrong, if anything. */
+const write = (parser: Parser, piece: string): Promise<Failure> =>
+  new Promise((resolve) => parser.write(piece, (error) => resolve((error ?? undefined) as Failure)));
 
 /** Ends the parser's input; resolves with what went wrong, if anything. */
-const end = (parser: Parser): Promise<unknown> =>
+const end = (parser: Parser): Promise<Failure> =>
   new Promise((resolve) => {
     parser.once('error', resolve);
     parser.once('finish', () => resolve(undefined));
