@@ -151,6 +151,22 @@ describe('what is remembered of a layout', () => {
     ]);
     expect(lower.report.grids[0].inForce.headerRow).toBe(3);
   });
+  it('does not give the channel of one gauge to the sheet of another with the same header', async () => {
+    const rows: CellSpec[][] = [
+      ['Time', 'Lot', 'Product', 'Value'],
+      [at('6:00'), 'A', 'SEP-12', 16],
+    ];
+    const remembered = [await remember({ columns: { D: { role: 'channel_values', channelId: 11 } } }, rows)];
+    const sheets = ['Sheet1', 'LS-305', 'BG-201'].map((name) => ({ name, rows }));
+    const result = await readSheets(sheets, undefined, remembered);
+    expect(values(result)).toEqual([
+      ['D2', 11, 16],
+      ['D2', 12, 16],
+      ['D2', 11, 16],
+    ]);
+    expect(problemList(result)).toEqual(['notice remembered-channel-not-used 1']);
+    expect(result.report.problems[0].sheet).toBe('LS-305');
+  });
   it('gives way to what is said, column by column', async () => {
     const remembered = [await remember(ANSWER)];
     const result = await readRows(ROWS, { columns: { E: { role: 'ignored' } } }, remembered);

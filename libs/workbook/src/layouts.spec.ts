@@ -123,6 +123,20 @@ describe('spacer columns', () => {
   });
 });
 
+describe('hidden columns', () => {
+  it('are read, and those that are used are said', async () => {
+    const rows: CellSpec[][] = [
+      ['Time', 'Lot', 'Product', 'CW', 'Operator'],
+      [at('6:00'), 'A', 'SEP-12', 12.1, 'M. K.'],
+    ];
+    const result = await readBook({ sheets: [{ name: 'S', rows, hiddenColumns: [2, 4, 5] }] });
+    expect(read(result)).toEqual([['D', 11, null, 12.1]]);
+    expect(result.report.problems.map((one) => one.detail)).toEqual([
+      'Sheet "S" has hidden columns that are read like the others (B, D).',
+    ]);
+  });
+});
+
 describe('shapes that are not read', () => {
   const good: CellSpec[][] = [
     ['Time', 'Lot', 'Product', 'CW'],

@@ -1,6 +1,6 @@
 import type { WorkbookAnswers } from './answers';
 import { openSource } from './container/open-source';
-import type { SheetFacts } from './container/sheet-rows';
+import { noFacts } from './container/sheet-rows';
 import { DEFAULT_LIMITS, type ReadLimits } from './limits';
 import { ChannelNames } from './reading/channel-names';
 import { Findings } from './reading/findings';
@@ -28,9 +28,15 @@ export interface ReadOptions {
  * Reads a workbook's bytes into readings, in one pass and in memory that does not grow with the rows.
  *
  * Long layout: a row a reading (time, lot, product, channel, value, and serial, position, quantity where there are any).
- * Wide layout: time, lot, product and a column a channel. The header is looked for in the first 40 rows of each sheet.
- * Times without an offset are the plant's. Every non-empty row below a header counts in `rowsRead`; it either gives a
- * reading or counts in `rowsNotUsed` and has exactly one problem of the severity `row_not_used`.
+ * Wide layout: time, lot, product and a column a channel, or a column a position of a channel that another header row, a
+ * title or the sheet's name gives. The header, of one row or two and one of units, is looked for in the first 40 rows of
+ * each sheet; another one further down, or beside it after an empty column, begins another table. Titles above a header
+ * give lot, product, channel, unit and day for the rows without their own.
+ *
+ * `options.answers` go before what is remembered for a header's fingerprint, and that before what is recognised. What
+ * only a person can say is asked in `questions`, each of which blocks the workbook. Times without an offset are the
+ * plant's unless answered otherwise. Every non-empty row below a sheet's first header counts in `rowsRead`; it either
+ * gives a reading or counts in `rowsNotUsed` and has exactly one problem of the severity `row_not_used`.
  *
  * @param bytes the file as it came
  * @param context the line's channels and products, the plant's zone, and the time
@@ -77,7 +83,7 @@ export async function readWorkbook(
   };
   for (const sheet of source.sheets) {
     const reader = new SheetReader(sheet.name, sheet.isHidden, parts);
-    const facts: SheetFacts = { mergedUntil: [] };
+    const facts = noFacts();
     for await (const rows of source.rows(sheet, facts)) {
       for (const row of rows) {
         reader.take(row, batch);

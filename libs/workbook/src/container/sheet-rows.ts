@@ -44,7 +44,11 @@ export function assertRoomForCell(count: CellCount, { maxCells }: ReadLimits): v
 export interface SheetFacts {
   /** Last row of each merged area. */
   mergedUntil: number[];
+  /** Runs of hidden columns, by number from 1. */
+  hiddenColumns: { from: number; to: number }[];
 }
+
+export const noFacts = (): SheetFacts => ({ mergedUntil: [], hiddenColumns: [] });
 
 /**
  * The rows of one sheet in the order of the file, in groups as they are inflated; empty rows are left out.
@@ -57,7 +61,7 @@ export async function* readSheetRows(
   sheet: SheetPart,
   limits: ReadLimits,
   count: CellCount,
-  facts: SheetFacts = { mergedUntil: [] },
+  facts: SheetFacts = noFacts(),
 ): AsyncGenerator<SheetRow[]> {
   const parser = new SheetParser(book, limits, count, facts);
   for await (const _ of parseXml(book.archive.read(sheet.part), parser)) {
@@ -110,6 +114,11 @@ class SheetParser {
         break;
       case 'row':
         this.openRow(attributes);
+        break;
+      case 'col':
+        if (isTrue(attributes.hidden) && this.facts.hiddenColumns.length < MAX_COLUMN) {
+          this.facts.hiddenColumns.push({ from: Number(attributes.min), to: Number(attributes.max) });
+        }
         break;
       case 'mergeCell':
         this.facts.mergedUntil.push(Number(/\d+$/.exec(attributes.ref ?? '')?.[0] ?? 0));

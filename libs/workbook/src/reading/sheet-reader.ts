@@ -15,7 +15,9 @@ import type { LotBook } from './lot-book';
 import type { ProductNames } from './product-names';
 import type { Questions } from './questions';
 import { RowNotUsed } from './row-not-used';
+import { sayOfSheet } from './say-of-sheet';
 import { Table } from './table';
+import { trustRemembered } from './trust-remembered';
 import { readTitles, sayTitles, type Titles } from './titles';
 import { isBlank } from './values';
 import type { ZoneClock } from './zone-clock';
@@ -111,12 +113,13 @@ export class SheetReader {
   }
 
   /** Says what only the whole sheet shows. */
-  finish({ mergedUntil }: SheetFacts, into: ParsedReading[]): { columns: RecognisedColumn[]; grid: SheetGrid } {
+  finish(facts: SheetFacts, into: ParsedReading[]): { columns: RecognisedColumn[]; grid: SheetGrid } {
     while (this.waiting !== null) this.startTable(into);
     for (const table of this.tables) table.finish();
-    this.sayOfSheet(mergedUntil);
-    const { chosen, tables } = this;
-    const columns = tables.flatMap(({ header }) => header.columns.map((column) => toRecognised(this.name, column)));
+    const { chosen, tables, name, isHidden, headerRow, hiddenRows } = this;
+    const all = tables.flatMap(({ header }) => header.columns);
+    sayOfSheet({ sheet: name, isHidden, headerRow, columns: all, hiddenRows }, facts, this.parts.findings);
+    const columns = all.map((column) => toRecognised(name, column));
     const fingerprint = chosen?.header?.fingerprint ?? null;
     const grid: SheetGrid = {
       sheet: this.name,
@@ -129,25 +132,6 @@ export class SheetReader {
       inForce: inForceOf(tables[0]?.header ?? null, chosen?.answers ?? {}),
     };
     return { columns, grid };
-  }
-
-  private sayOfSheet(mergedUntil: readonly number[]): void {
-    const { findings } = this.parts;
-    const place = { sheet: this.name };
-    const merged = mergedUntil.filter((row) => row > (this.headerRow ?? Infinity)).length;
-    if (merged > 0) {
-      const say = (): string =>
-        `has merged cells below its header (${merged}); only the first cell of each area holds its content, the others are read as blank`;
-      findings.add('notice', 'merged-cells', place, say);
-    }
-    if (this.headerRow === null) return;
-    if (this.hiddenRows > 0) {
-      const say = (): string => `has hidden or filtered rows (${this.hiddenRows}); they were read like the others`;
-      findings.add('notice', 'hidden-rows-read', place, say);
-    }
-    if (this.isHidden) {
-      findings.add('notice', 'hidden-sheet-read', place, () => 'is hidden; it was read like the others');
-    }
   }
 
   private changedLayout(): RememberedLayout | null {
@@ -212,7 +196,14 @@ export class SheetReader {
 
   private open(header: Header, titles: Titles, answers: LayoutAnswers, hasCells: (column: number) => boolean): void {
     const { findings, channels } = this.parts;
-    const misfits = applyColumns(header.columns, answers.columns ?? {}, channels, hasCells);
+    const said = this.parts.answers.sheets?.[this.name]?.columns ?? {};
+    const { columns, dropped } = trustRemembered(this.name, header, titles, answers.columns ?? {}, said, channels);
+    if (dropped.length > 0) {
+      const say = (): string =>
+        `has the header of a sheet for which another channel is remembered (column ${dropped.join(', ')}); the channel that this sheet names counts`;
+      findings.add('notice', 'remembered-channel-not-used', { sheet: this.name, row: header.row }, say);
+    }
+    const misfits = applyColumns(header.columns, columns, channels, hasCells);
     for (const misfit of misfits) {
       const say = (): string => `${misfit}; correct it on the sheet`;
       findings.add('blocking', 'answers-do-not-fit', { sheet: this.name, row: header.row }, say);

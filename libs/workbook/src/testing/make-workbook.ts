@@ -18,6 +18,8 @@ export interface SheetSpec {
   rows: CellSpec[][];
   state?: 'hidden' | 'veryHidden';
   hiddenRows?: number[];
+  /** Numbers from 1. */
+  hiddenColumns?: number[];
   merged?: string[];
   /** Leaves the `r` attributes out, as some programs do. */
   isWithoutNames?: boolean;
@@ -48,16 +50,20 @@ function cellXml(spec: CellSpec, name: string): string {
   return `<c${name} s="${['general', 'date', 'day', 'clock', 'percent'].indexOf(kind)}"><v>${number}</v></c>`;
 }
 
-function sheetXml({ rows, hiddenRows = [], merged = [], isWithoutNames }: SheetSpec): string {
+function sheetXml({ rows, hiddenRows = [], hiddenColumns = [], merged = [], isWithoutNames }: SheetSpec): string {
   const body = rows.map((row, index) => {
     const number = index + 1;
     const cells = row.map((cell, at) => cellXml(cell, isWithoutNames ? '' : ` r="${columnLetters(at + 1)}${number}"`));
     const hidden = hiddenRows.includes(number) ? ' hidden="1"' : '';
     return `<row${isWithoutNames ? '' : ` r="${number}"`}${hidden}>${cells.join('')}</row>`;
   });
+  const columns =
+    hiddenColumns.length > 0
+      ? `<cols>${hiddenColumns.map((one) => `<col min="${one}" max="${one}" width="9" hidden="1"/>`).join('')}</cols>`
+      : '';
   const merges =
     merged.length > 0 ? `<mergeCells>${merged.map((ref) => `<mergeCell ref="${ref}"/>`).join('')}</mergeCells>` : '';
-  return `<worksheet xmlns="${NS}/spreadsheetml/2006/main"><sheetData>${body.join('')}</sheetData>${merges}</worksheet>`;
+  return `<worksheet xmlns="${NS}/spreadsheetml/2006/main">${columns}<sheetData>${body.join('')}</sheetData>${merges}</worksheet>`;
 }
 
 /** The parts of a workbook around sheets whose XML is given. */
