@@ -58,8 +58,12 @@ export interface SettledVerdict {
   specificationState: string;
 }
 
-/** The channel's settled verdicts on lots that end from an instant on; not those that are looked at again anyway. */
-export function listSettledVerdicts(db: Queryable, channelId: number, from: number): Promise<SettledVerdict[]> {
+/** The channel's settled verdicts on other lots than an intake's that end from an instant on; not those that are looked at again anyway. */
+export function listSettledVerdicts(
+  db: Queryable,
+  { channelId, from }: AffectedChannel,
+  intakeId: number,
+): Promise<SettledVerdict[]> {
   return rows<SettledVerdict>(
     db,
     `select v.id, v.lot_id as "lotId", v.control_state as "controlState", v.not_scored_reason as "notScoredReason", v.score,
@@ -68,8 +72,9 @@ export function listSettledVerdicts(db: Queryable, channelId: number, from: numb
      where v.channel_id = :channelId and v.is_current and not v.is_provisional and v.reading_count = lc.count
        and v.not_scored_reason is distinct from 'no_plan_in_force' and lc.last_at >= to_timestamp(:from)
        and not exists (select 1 from lots_to_rejudge j where j.channel_id = v.channel_id and j.lot_id = v.lot_id)
+       and not exists (select 1 from intake_lots b where b.channel_id = v.channel_id and b.lot_id = v.lot_id and b.intake_id = :intakeId)
      order by lc.last_at, lc.lot_id`,
-    { channelId, from },
+    { channelId, from, intakeId },
   );
 }
 

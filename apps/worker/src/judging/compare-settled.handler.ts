@@ -34,7 +34,7 @@ export class CompareSettledHandler implements OwedJobHandler<'compare-settled'> 
     const { intakeId } = job.subject;
     const changes: FoundChange[] = [];
     for (const channel of await listAffectedChannels(this.database, intakeId))
-      changes.push(...(await this.changesOf(channel)));
+      changes.push(...(await this.changesOf(channel, intakeId)));
     await this.database.transaction(async (tx) => {
       if (!(await lockOwedJob(tx, job.id))) throw new NoLongerOwedError(job.id);
       await updateSettledChanges(tx, intakeId, changes);
@@ -56,8 +56,9 @@ export class CompareSettledHandler implements OwedJobHandler<'compare-settled'> 
     });
   }
 
-  private async changesOf({ channelId, from }: AffectedChannel): Promise<FoundChange[]> {
-    const settled = await listSettledVerdicts(this.database, channelId, from);
+  private async changesOf(channel: AffectedChannel, intakeId: number): Promise<FoundChange[]> {
+    const { channelId, from } = channel;
+    const settled = await listSettledVerdicts(this.database, channel, intakeId);
     const judged = await this.judging.onTrial(channelId, from);
     const wouldBe = new Map(
       judged.segments.flatMap(({ judgement }) => judgement.lots.map((lot) => [lot.lotId, lot] as const)),

@@ -70,7 +70,7 @@ export async function left(bench: WorkerBench): Promise<Record<string, unknown[]
     readings: `select l.number, r.channel_id, r.measured_at, r.value, r.censoring, r.occurrence, r.serial, r.position
       from readings r join lots l on l.id = r.lot_id where r.superseded_by is null and r.withdrawn_at is null order by 1, 2, 3, 6, 7, 8`,
     lots: `select number, product_id, quantity, quantity_unit, starts_at, ends_at from lots where withdrawn_at is null order by 1`,
-    sums: `select l.number, to_jsonb(lc) - 'lot_id' as sums from lot_channels lc join lots l on l.id = lc.lot_id
+    sums: `select l.number, to_jsonb(lc) - array['lot_id', 'line_id'] as sums from lot_channels lc join lots l on l.id = lc.lot_id
       where lc.first_at is not null order by 1, lc.channel_id`,
     verdicts: `select l.number, to_jsonb(v) - array['id', 'lot_id', 'fit_id', 'judged_at'] as verdict,
         (select jsonb_agg(to_jsonb(s) - 'verdict_id' order by s.signal) from verdict_signals s where s.verdict_id = v.id) as signals
