@@ -90,7 +90,7 @@ describe('links that are mailed', () => {
     };
     const { mail, token } = await fresh();
     expect(mail).toMatchObject({ recipient: 'lead@marrowby.example', plant_id: null });
-    expect(mail.plain_text).toMatch(/until 11 Mar 2026, 13:00 UTC\./);
+    expect(mail.plain_text).toMatch(/until 11 Mar 2026, 13:00 \(UTC\)\./);
     const admin = await signIn(app, 'admin@marrowby.example');
     const listed = await app.http.get(`/api/plants/${plant.id}/mails?kind=password-reset`).set(admin).expect(200);
     expect(listed.body.items.map(({ id }: { id: number }) => id)).not.toContain(mail.id);

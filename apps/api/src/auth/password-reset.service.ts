@@ -37,7 +37,8 @@ export class PasswordResetService {
     return this.database.transaction(async (tx) => {
       const { publicUrl } = this.config;
       const link = await issueLink(tx, { personId: person.id, purpose: 'password_reset', at, publicUrl });
-      const until = plant ? zonedText(link.expiresAt, plant.timeZone) : `${zonedText(link.expiresAt, 'UTC')} UTC`;
+      const timeZone = plant?.timeZone ?? 'UTC';
+      const until = `${zonedText(link.expiresAt, timeZone)} (${timeZone})`;
       const mail = passwordResetMail({ name: person.name, url: link.url, until });
       await insertAccountEntry(tx, person.id, {
         at,

@@ -114,7 +114,7 @@ export class InvitationsService {
       roles: rolesText(person.roles),
       lines: lines.map((line) => line.name),
       url: link?.url ?? `${publicUrl}/`,
-      until: link && zonedText(link.expiresAt, plant.timeZone),
+      until: link && `${zonedText(link.expiresAt, plant.timeZone)} (${plant.timeZone})`,
     });
     await insertAuditEntry(tx, {
       plantId: plant.id,

@@ -9,7 +9,7 @@ const facts: InvitationFacts = {
   roles: 'quality engineer and line lead',
   lines: ['Kiln 1', 'Press 4'],
   url: URL,
-  until: '18 Mar 2026, 13:00',
+  until: '18 Mar 2026, 13:00 (Europe/Lisbon)',
 };
 
 describe('the mail that invites', () => {
@@ -21,9 +21,9 @@ describe('the mail that invites', () => {
         'Tamsin Okafor',
         'Wenna Pascoe',
         'quality engineer and line lead',
-        'Kiln 1, Press 4',
+        'assigned to Kiln 1 and Press 4.',
         URL,
-        '18 Mar 2026, 13:00',
+        '18 Mar 2026, 13:00 (Europe/Lisbon)',
       ])
         expect(part).toContain(fact);
     expect(mail.html).toContain(`<a href="${URL}"`);
@@ -41,9 +41,9 @@ describe('the mail that invites', () => {
 
 describe('the mail for a forgotten password', () => {
   it('has the link, its end, and what to do when somebody else asked', () => {
-    const mail = passwordResetMail({ name: 'Wenna Pascoe', url: URL, until: '11 Mar 2026, 13:00' });
+    const mail = passwordResetMail({ name: 'Wenna Pascoe', url: URL, until: '11 Mar 2026, 13:00 (Europe/Lisbon)' });
     for (const part of [mail.text, mail.html])
-      for (const fact of ['Wenna Pascoe', URL, '11 Mar 2026, 13:00', 'If that was not you'])
+      for (const fact of ['Wenna Pascoe', URL, '11 Mar 2026, 13:00 (Europe/Lisbon)', 'If that was not you'])
         expect(part).toContain(fact);
   });
 });

@@ -4,7 +4,7 @@ import type { Mail } from './layout';
 export interface PasswordResetFacts {
   name: string;
   url: string;
-  /** "11 Mar 2026, 13:00", in the zone of the person's plant. */
+  /** "11 Mar 2026, 13:00 (Europe/London)" */
   until: string;
 }
 
@@ -17,6 +17,6 @@ export function passwordResetMail({ name, url, until }: PasswordResetFacts): Mai
       `The link works once, until ${until}. Choosing a new password ends every session that is open with the old one.`,
     ],
     { label: 'Choose a new password', url },
-    'Sent by Ebbline because this address was entered under "Forgotten your password?". If that was not you, leave it: your password stays as it is.',
+    'Sent by Ebbline because this address was entered under “Forgotten your password?”. If that was not you, leave it: your password stays as it is.',
   );
 }
