@@ -117,6 +117,37 @@ describe('every row is accounted for', () => {
     );
   });
 
+  it('where tables of any kind follow each other on a sheet', async () => {
+    const over: CellSpec[] = ['Time', 'Lot', 'Product', 'Web thickness', null];
+    const beside: CellSpec[] = ['Time', 'Lot', 'CW', null, 'Time', 'Lot', 'Dicke'];
+    const piece = fc.oneof(
+      long.row.map((row) => [row]),
+      wide.row.map((row) => [row]),
+      fc.constantFrom<CellSpec[][]>(
+        [long.header],
+        [wide.header],
+        [over, [null, null, null, 1, 2]],
+        [beside],
+        [['Lot: C']],
+        [['Web thickness']],
+        [['a word', 'and more']],
+      ),
+    );
+    await fc.assert(
+      fc.asyncProperty(fc.array(piece, { maxLength: 25 }), async (pieces) => {
+        const body: CellSpec[][] = [long.first, ...pieces.flat()];
+        const { report, readings } = await readBook({ sheets: [{ name: 'S', rows: [long.header, ...body] }] });
+        const filled = body.flatMap((cells, index) => (cells.every(isBlank) ? [] : [index + 2]));
+        const used = new Set(readings.map((reading) => reading.row));
+        const notUsed = report.problems.filter((problem) => problem.severity === 'row_not_used');
+        expect(report.rowsRead).toBe(filled.length);
+        expect(notUsed.map((problem) => problem.row)).toEqual(filled.filter((number) => !used.has(number)));
+        expect(report.rowsNotUsed).toBe(notUsed.length);
+      }),
+      { numRuns: 80 },
+    );
+  });
+
   it('hands readings over in batches, waits for each, and counts them all', async () => {
     const body = Array.from({ length: 4_500 }, (_, index): CellSpec[] => [
       { date: 46027 + index / 86_400 },
