@@ -117,7 +117,8 @@ async function readBook(
       if (name !== 'sheet') return;
       const id = Object.keys(attributes).find((key) => /(^|:)id$/.test(key) && key !== 'sheetId');
       const relation = relations.get(attributes[id ?? ''] ?? '');
-      if (relation?.type !== 'worksheet') return;
+      if (relation === undefined) throw corrupt(new Error(`sheet ${attributes.name} without a part`));
+      if (relation.type !== 'worksheet') return; // a sheet of a chart or a macro
       const isHidden = attributes.state === 'hidden' || attributes.state === 'veryHidden';
       sheets.push({ name: attributes.name ?? `Sheet ${sheets.length + 1}`, part: relation.target, isHidden });
     },

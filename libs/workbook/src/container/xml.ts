@@ -25,6 +25,12 @@ const localName = (name: string): string => {
   return colon < 0 ? name : name.slice(colon + 1);
 };
 
+/** UTF-8, or UTF-16 by its mark or by the `<` without one (XML 1.0, appendix F). */
+function encodingOf([first, second]: Buffer): string {
+  if ((first === 0xff && second === 0xfe) || (first === 0x3c && second === 0)) return 'utf-16le';
+  return (first === 0xfe && second === 0xff) || (first === 0 && second === 0x3c) ? 'utf-16be' : 'utf-8';
+}
+
 /**
  * Parses XML piece by piece; after each piece the generator stops, so that the caller may take what has come.
  * Entities other than XML's own five are errors, nesting and the length of one text are bounded.
@@ -50,7 +56,7 @@ export async function* parseXml(pieces: AsyncIterable<Buffer>, handlers: XmlHand
   let decoder: TextDecoder | undefined;
   try {
     for await (const piece of pieces) {
-      decoder ??= new TextDecoder(piece[0] === 0xff && piece[1] === 0xfe ? 'utf-16le' : 'utf-8', { fatal: true });
+      decoder ??= new TextDecoder(encodingOf(piece), { fatal: true });
       const text = decoder.decode(piece, { stream: true });
       quiet += text.length;
       if (quiet > MAX_QUIET + piece.length) throw corrupt(new Error('text without end'));
