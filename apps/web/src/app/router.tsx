@@ -1,8 +1,10 @@
+import type { Permission } from '@app/contracts';
 import { createBrowserRouter, type RouteObject } from 'react-router-dom';
 import { DeskPage } from '../features/desk/pages/desk-page';
 import { SignInPage } from '../features/sign-in/pages/sign-in-page';
 import { Skeleton } from '../shared/ui/skeleton';
 import { ErrorPage } from './error-page';
+import { MayOpen } from './may-open';
 import { NotFoundPage } from './not-found-page';
 import { PlanRedirect } from './plan-redirect';
 import { SignedIn } from './signed-in';
@@ -12,6 +14,13 @@ const page = (path: string, lazy: RouteObject['lazy']): RouteObject => ({ path, 
 
 /** A page without the frame, which it would otherwise wait in. */
 const bare = (route: RouteObject): RouteObject => ({ ...route, hydrateFallbackElement: <Skeleton lines={3} /> });
+
+/** A page of a plant that only some roles open. */
+const pageFor = (permission: Permission, title: string, path: string, lazy: RouteObject['lazy']): RouteObject => ({
+  path,
+  element: <MayOpen permission={permission} title={title} />,
+  children: [{ index: true, lazy, errorElement: <ErrorPage /> }],
+});
 
 /** Where the frame itself failed. */
 const bareErrorPage = (
@@ -52,14 +61,18 @@ export const router = createBrowserRouter([
         Component: (await import('../features/intake/pages/intake-page')).IntakePage,
       })),
       page(routes.plans, async () => ({ Component: (await import('../features/plan/pages/plan-page')).PlanPage })),
-      page(routes.summaries, async () => ({
+      pageFor('read_summary', 'Weekly summaries', routes.summaries, async () => ({
         Component: (await import('../features/summary/pages/summaries-page')).SummariesPage,
       })),
       page(routes.summary, async () => ({
         Component: (await import('../features/summary/pages/summary-page')).SummaryPage,
       })),
-      page(routes.audit, async () => ({ Component: (await import('../features/audit/pages/audit-page')).AuditPage })),
-      page(routes.mails, async () => ({ Component: (await import('../features/mails/pages/mails-page')).MailsPage })),
+      pageFor('read_audit', 'Audit', routes.audit, async () => ({
+        Component: (await import('../features/audit/pages/audit-page')).AuditPage,
+      })),
+      pageFor('set_up_plant', 'Mail', routes.mails, async () => ({
+        Component: (await import('../features/mails/pages/mails-page')).MailsPage,
+      })),
       page(routes.mail, async () => ({ Component: (await import('../features/mails/pages/mail-page')).MailPage })),
       { path: routes.plan, element: <PlanRedirect /> },
       page(routes.newPlant, async () => ({
@@ -68,7 +81,7 @@ export const router = createBrowserRouter([
       ...[routes.setUp, routes.setUpSection].map((path) =>
         page(path, async () => ({ Component: (await import('../features/set-up/pages/set-up-page')).SetUpPage })),
       ),
-      page(routes.people, async () => ({
+      pageFor('set_up_plant', 'People', routes.people, async () => ({
         Component: (await import('../features/people/pages/people-page')).PeoplePage,
       })),
       page(routes.profile, async () => ({
