@@ -42,6 +42,7 @@ describe('channels', () => {
       gauge: { id: weight.gaugeId, assetNumber: 'BG-204', kind: 'beta gauge', position: 'A' },
       planInForce: { id: shift.planId, revision: 1, since: '2026-03-01T10:00:00.000Z' },
       planPending: null,
+      retiredSince: null,
     });
     expect(body.items[1]).toMatchObject({
       planInForce: null,
