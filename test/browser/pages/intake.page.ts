@@ -15,6 +15,8 @@ export class IntakePage {
   readonly accounting: Locator;
   readonly lots: Locator;
   readonly outcome: Locator;
+  readonly readAgain: Locator;
+  readonly firstReadings: Locator;
 
   constructor(private readonly page: Page) {
     this.dropZone = page.locator('input[type=file]');
@@ -25,6 +27,8 @@ export class IntakePage {
     this.accounting = page.locator('.accounting');
     this.lots = page.getByRole('table', { name: 'Lots found in the workbook' });
     this.outcome = page.locator('.outcome');
+    this.readAgain = page.getByRole('button', { name: /^Read it again with/ }).first();
+    this.firstReadings = page.getByRole('table', { name: 'The first readings as they are read' });
   }
 
   /** A file on the disk by its path, or bytes under a name. */
@@ -37,6 +41,11 @@ export class IntakePage {
   /** The sentence about a scored workbook's lots. */
   cameOfIt(): Promise<string> {
     return this.page.getByRole('region', { name: 'What came of it' }).getByText('scored').first().innerText();
+  }
+
+  /** What a column of a sheet is read as, to be chosen. */
+  column(letters: string, sheet: string): Locator {
+    return this.page.getByLabel(`What column ${letters} of ${sheet} is`);
   }
 
   openHold(lot: string): Promise<void> {
