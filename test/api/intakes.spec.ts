@@ -109,7 +109,8 @@ describe('intakes', () => {
     const [first] = (await app.http.get(`/api/lines/${plant.lines[0].id}/intakes?pageSize=1`).set(as.lead).expect(200))
       .body.items;
     expectProblem(await app.http.post(`/api/intakes/${first.id}/confirm`).set(as.engineer), 409, 'confirmed-already');
-    const refused = (await upload(Buffer.from('not a workbook at all')).expect(201)).body as IntakeView;
+    const refused = (await upload(Buffer.from('89504e470d0a1a0a0000000d49484452', 'hex')).expect(201))
+      .body as IntakeView;
     expect(refused).toMatchObject({ state: 'refused', isConfirmable: false, failure: expect.stringMatching(/\.$/) });
     expectProblem(await app.http.post(`/api/intakes/${refused.id}/confirm`).set(as.engineer), 409, 'refused');
     expectProblem(await app.http.get(`/api/intakes/${refused.id}/workbook`).set(as.engineer), 409, 'not-read');
