@@ -155,7 +155,7 @@ describe('markWorkbook', () => {
     const marked = await markWorkbook(nameless, [problem(2, 'B')]);
     expect((await read(marked)).report.sheets.map(({ name }) => name)).toEqual(['S', 'Problems']);
   });
-  it('refuses what is no workbook', async () => {
-    await expect(markWorkbook(Buffer.from('hello'), [])).rejects.toMatchObject({ code: 'not-excel' });
+  it('refuses what is neither a workbook nor a text file', async () => {
+    await expect(markWorkbook(Buffer.from('%PDF-1.7'), [])).rejects.toMatchObject({ code: 'not-excel' });
   });
 });

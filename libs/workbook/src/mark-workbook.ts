@@ -1,8 +1,11 @@
+import type { WorkbookAnswers } from './answers';
+import { openSource } from './container/open-source';
 import { DEFAULT_LIMITS, type ReadLimits } from './limits';
 import { openWorkbook, type OpenWorkbook } from './container/workbook-parts';
 import { FillStyles } from './marking/fill-styles';
 import { markSheet } from './marking/mark-sheet';
 import { PackageEditor } from './marking/package-editor';
+import { textAsWorkbook } from './marking/text-as-workbook';
 import { problemsSheetXml } from './marking/problems-sheet';
 import { escapeXml, insertBeforeEnd, prefixOf } from './marking/xml-edit';
 import type { Problem } from './types';
@@ -17,16 +20,22 @@ const SHEET_TYPE = 'application/vnd.openxmlformats-officedocument.spreadsheetml.
  * multiple of the largest marked sheet's XML.
  *
  * @param bytes the file as it came
+ * A text file comes back as a workbook with its cells as texts.
+ *
  * @param problems as `readWorkbook` reported them
+ * @param answers with which a text file was read
  * @returns the marked file
- * @throws WorkbookRefusedError when the bytes are no readable workbook
+ * @throws WorkbookRefusedError when the bytes are no readable workbook or text file
  */
 export async function markWorkbook(
   bytes: Uint8Array,
   problems: readonly Problem[],
   limits: Partial<ReadLimits> = {},
+  answers: WorkbookAnswers = {},
 ): Promise<Buffer> {
-  const buffer = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  const file = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  const source = await openSource(file, { ...DEFAULT_LIMITS, ...limits }, answers);
+  const buffer = source.text === null ? file : await textAsWorkbook(source);
   // Opened twice: what is read to open it counts against the limits, and each part is to be read once more.
   const book = await openWorkbook(buffer, { ...DEFAULT_LIMITS, ...limits });
   const { archive } = await openWorkbook(buffer, { ...DEFAULT_LIMITS, ...limits });
