@@ -17,11 +17,9 @@ const SHEET_TYPE = 'application/vnd.openxmlformats-officedocument.spreadsheetml.
  * Gives a workbook back with each problem where it lies: a comment and a fill on its cell (the row's first cell when it
  * concerns a whole row), and a sheet "Problems" that lists them with links. The parts of the file are edited in place,
  * so that everything else in it (charts, macros, formats, comments) stays as it was, and the memory it takes is a small
- * multiple of the largest marked sheet's XML.
+ * multiple of the largest marked sheet's XML. A text file comes back as a workbook with its cells as texts.
  *
  * @param bytes the file as it came
- * A text file comes back as a workbook with its cells as texts.
- *
  * @param problems as `readWorkbook` reported them
  * @param answers with which a text file was read
  * @returns the marked file

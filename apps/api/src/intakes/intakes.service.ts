@@ -160,7 +160,11 @@ export class IntakesService {
       throw new DomainError('conflict', 'not-read', 'This workbook could not be read, so no cell of it can be marked.');
     const bytes = await getIntakeBytes(this.database, id);
     const problems = await listIntakeProblems(this.database, id, SHOWN_PROBLEMS);
-    const marked = await this.threads.run<Uint8Array>('mark-workbook.thread', { bytes, problems });
+    const marked = await this.threads.run<Uint8Array>('mark-workbook.thread', {
+      bytes,
+      problems,
+      answers: intake.answers,
+    });
     return { fileName: intake.fileName.replace(/(\.[a-z]{3,4})?$/i, ' marked.xlsx'), bytes: Buffer.from(marked) };
   }
 

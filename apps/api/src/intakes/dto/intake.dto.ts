@@ -21,14 +21,6 @@ export class ConfirmIntakeDto {
   @IsOptional()
   @IsIn(['keep', 'supersede'], { message: 'Say whether stored readings stand or are superseded.' })
   differing?: 'keep' | 'supersede';
-
-  @ApiPropertyOptional({
-    enum: ['list', 'rejudge'],
-    description: 'Settled verdicts of other lots that would change: listed (the default), or judged again at once.',
-  })
-  @IsOptional()
-  @IsIn(['list', 'rejudge'], { message: 'Say whether settled verdicts are listed or judged again.' })
-  settled?: 'list' | 'rejudge';
 }
 
 export class ReadAgainDto {
