@@ -14,11 +14,18 @@ describe('things of another plant', () => {
     ask(world, route, {}, { at, body, query }, world.as.stranger);
   const counted = async () => {
     const counts = await Promise.all(
-      ['channels', 'memberships', 'line_assignments', 'specification_proposals', 'channel_gauges', 'lines'].map(
-        async (table) => [table, (await world.app.database(table).count())[0].count] as const,
-      ),
+      [
+        'channels',
+        'memberships',
+        'line_assignments',
+        'specification_proposals',
+        'channel_gauges',
+        'lines',
+        'layouts',
+      ].map(async (table) => [table, (await world.app.database(table).count())[0].count] as const),
     );
-    return { counts, colleague: await world.app.database('people').where({ id: world.colleague.id }).first() };
+    const tokens = await world.app.database('api_tokens').whereNull('revoked_at').count();
+    return { counts, tokens, colleague: await world.app.database('people').where({ id: world.colleague.id }).first() };
   };
 
   it('are not there behind an own plant in the address', async () => {
@@ -29,7 +36,7 @@ describe('things of another plant', () => {
       const asked = row.asked?.(world) ?? {};
       const at = { ...asked.at, id: world.other.id };
       const { status } = await ask(world, route, row, { ...asked, at }, world.as.stranger);
-      expect({ route, status }).toEqual({ route, status: 404 });
+      expect({ route, status }).toEqual({ route, status: row.ofNothing ?? 404 });
     }
     expect(await counted()).toEqual(before);
   });

@@ -46,6 +46,8 @@ export interface Row {
   asked?: (world: World) => Asked;
   /** Of all that is no GET. */
   write?: Write;
+  /** What it answers of a thing that is not there: 404 but where there is nothing left to do then. */
+  ofNothing?: 204;
   /** It answers in a stream that goes on. */
   isStream?: boolean;
 }

@@ -27,6 +27,10 @@ export interface World {
   summaryId: number;
   /** Read and not confirmed: nothing came of it. */
   unconfirmedIntakeId: number;
+  /** Of a layout that is remembered on the first line. */
+  layoutId: number;
+  /** Of the engineer's API token. */
+  apiTokenId: number;
   /** Of coat weight's next specification, by the engineer. */
   proposalId: number;
   /** Serves nowhere. */
@@ -67,6 +71,8 @@ export async function openWorld(): Promise<World> {
     holdId: await openHold(app, shift),
     proposedPlanId,
     unconfirmedIntakeId: await insertIntake(db, plant, { state: 'needs_attention' }),
+    layoutId: await insertLayout(app, plant),
+    apiTokenId: await insertApiToken(app, plant),
     summaryId: await insertRow(db, 'summaries', {
       plant_id: plant.id,
       week_starts_on: '2026-02-23',
@@ -81,6 +87,29 @@ export async function openWorld(): Promise<World> {
     mailId: await insertFailedMail(app, plant),
     as,
   };
+}
+
+/** A layout of the first line, under a fingerprint of its own. */
+export function insertLayout(app: TestApp, plant: TestPlant): Promise<number> {
+  return insertRow(app.database, 'layouts', {
+    plant_id: plant.id,
+    line_id: plant.lines[0].id,
+    fingerprint: hashOfSecret(newSecret()),
+    reading: JSON.stringify({ sheetName: 'Readings', answers: {} }),
+    remembered_at: app.clock.now(),
+    remembered_by: plant.people.manager.id,
+  });
+}
+
+/** A token of the engineer's that is in force. */
+export function insertApiToken(app: TestApp, plant: TestPlant): Promise<number> {
+  return insertRow(app.database, 'api_tokens', {
+    plant_id: plant.id,
+    person_id: plant.people.engineer.id,
+    name: 'Old script',
+    token_hash: hashOfSecret(newSecret()),
+    created_at: app.clock.now(),
+  });
 }
 
 /** A specification of coat weight that the engineer proposed. */

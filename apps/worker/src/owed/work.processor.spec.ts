@@ -125,7 +125,16 @@ describe('working off owed jobs', () => {
   });
 
   it('knows every job by name', () => {
-    const names: JobName[] = ['read-intake', 'score-intake', 'score-channels', 'propose-plan', 'weekly-summary'];
+    const names: JobName[] = [
+      'read-intake',
+      'score-intake',
+      'score-channels',
+      'rejudge-withdrawn',
+      'compare-settled',
+      'rejudge-settled',
+      'propose-plan',
+      'weekly-summary',
+    ];
     expect(bench.handlers.map(({ jobName }) => jobName)).toEqual(names);
   });
 });

@@ -1,7 +1,6 @@
-import { insertRow } from '../../factories/insert';
 import { insertIntake } from '../../factories/lots';
 import { ofIntake, ofPlant, reading, type Rows, sending } from '../row';
-import type { World } from '../world';
+import { insertApiToken, insertLayout, type World } from '../world';
 
 const who = { who: 'upload and confirm an intake, withdraw one', permission: 'upload_intake' } as const;
 const layoutAt = (world: World, layoutId: number) => ({ at: { id: world.plant.lines[0].id, layoutId } });
@@ -51,20 +50,11 @@ export const INTAKE_ROWS: Rows = {
   },
   'DELETE /api/lines/{id}/layouts/{layoutId}': {
     ...who,
-    asked: (world) => layoutAt(world, 1_000_000),
+    ofNothing: 204,
+    asked: (world) => layoutAt(world, world.layoutId),
     write: {
       by: 'engineer',
-      prepare: async (world) => {
-        const layoutId = await insertRow(world.app.database, 'layouts', {
-          plant_id: world.plant.id,
-          line_id: world.plant.lines[0].id,
-          fingerprint: Buffer.alloc(32, 7),
-          reading: JSON.stringify({ sheetName: 'Readings', answers: {} }),
-          remembered_at: world.app.clock.now(),
-          remembered_by: world.plant.people.manager.id,
-        });
-        return layoutAt(world, layoutId);
-      },
+      prepare: async (world) => layoutAt(world, await insertLayout(world.app, world.plant)),
       entry: {
         sentence: /engineer had the layout of the sheet "Readings" of Coater 2 forgotten/,
         kind: 'line',
@@ -87,19 +77,11 @@ export const INTAKE_ROWS: Rows = {
   },
   'DELETE /api/plants/{id}/api-tokens/{tokenId}': {
     ...who,
-    asked: (world) => tokenAt(world, 1_000_000),
+    ofNothing: 204,
+    asked: (world) => tokenAt(world, world.apiTokenId),
     write: {
       by: 'engineer',
-      prepare: async (world) => {
-        const tokenId = await insertRow(world.app.database, 'api_tokens', {
-          plant_id: world.plant.id,
-          person_id: world.plant.people.engineer.id,
-          name: 'Old script',
-          token_hash: Buffer.alloc(32, 9),
-          created_at: world.app.clock.now(),
-        });
-        return tokenAt(world, tokenId);
-      },
+      prepare: async (world) => tokenAt(world, await insertApiToken(world.app, world.plant)),
       entry: { sentence: /engineer revoked the API token "Old script"/, kind: 'person', thing: (_, { by }) => by.id },
     },
   },
