@@ -50,7 +50,6 @@ export const INTAKE_ROWS: Rows = {
   },
   'DELETE /api/lines/{id}/layouts/{layoutId}': {
     ...who,
-    ofNothing: 204,
     asked: (world) => layoutAt(world, world.layoutId),
     write: {
       by: 'engineer',
