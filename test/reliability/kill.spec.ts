@@ -185,14 +185,14 @@ class Run {
 
   upload = () => this.client.upload(this.scene.plant.lines[0].id, 'shift.xlsx', this.scene.workbook);
 
-  /** Until the intake is scored and no mail waits any more. */
+  /** Until the intake is scored, no mail waits and nothing is owed any more. */
   async settled(): Promise<void> {
     await this.stateIs('scored');
     await until(
-      'every mail is sent',
+      'every mail is sent and every job done',
       async () => {
         const { rows } = await this.watcher.query<{ waiting: number }>(
-          "select count(*)::int as waiting from outbox where state <> 'sent'",
+          `select ((select count(*) from outbox where state <> 'sent') + (select count(*) from owed_jobs where state = 'owed'))::int as waiting`,
         );
         return rows[0].waiting === 0;
       },
