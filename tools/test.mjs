@@ -7,7 +7,7 @@ import { checkNode } from './support/node-version.mjs';
 const HELP = `npm test                        lint, types, format, build, and the tests of each kind, on a database of its own
 npm test -- --only unit,api     only these of: lint types format build unit data api reliability browser
 npm test -- --verbose           with all that the stages print
-npm test -- --minutes 30        how long all of it may take (15)
+npm test -- --minutes 30        how long all of it may take (45)
 
 The last line is "N passed, N failed". A check and the build count as one each; a skipped test, a spec file that
 cannot run and a kind without tests count as failed. A running npm start is left alone.`;
