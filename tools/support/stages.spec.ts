@@ -12,7 +12,7 @@ const ALL = ['lint', 'types', 'format', 'build', 'unit', 'data', 'api', 'reliabi
 
 describe('the options of npm test', () => {
   it('choose everything and 15 minutes when none is given', () => {
-    expect(readOptions([])).toEqual({ only: ALL, isVerbose: false, isHelp: false, minutes: 15 });
+    expect(readOptions([])).toEqual({ only: ALL, isVerbose: false, isHelp: false, minutes: 45 });
   });
 
   it('can be written with a space or an equals sign', () => {
