@@ -43,6 +43,11 @@ export class IntakePage {
     return this.page.getByRole('region', { name: 'What came of it' }).getByText('scored').first().innerText();
   }
 
+  /** Takes a choice that a question offers. */
+  choose(choice: string): Promise<void> {
+    return this.page.getByRole('listitem').getByRole('button', { name: choice }).click();
+  }
+
   /** What a column of a sheet is read as, to be chosen. */
   column(letters: string, sheet: string): Locator {
     return this.page.getByLabel(`What column ${letters} of ${sheet} is`);
